@@ -1,0 +1,64 @@
+#pragma once
+
+#include <filesystem>
+#include <optional>
+#include <string>
+#include <utility>
+#include <vector>
+
+#include "mesh/section.hpp"
+#include "solver/excitation.hpp"
+#include "solver/material.hpp"
+
+namespace barwall::io {
+
+/// Where the field is asked for. Exactly one of the three ways of giving the place.
+struct ProbeRequest {
+  enum class Kind { point, line, around };
+
+  std::string name;
+  Kind kind = Kind::point;
+  mesh::Point at;            ///< point [m]
+  mesh::Point from, to;      ///< line [m]
+  double clearance = 0.0;    ///< around: distance from the outermost outline [m]
+  int points = 0;            ///< line and around: number of points
+  std::optional<double> limit_t;  ///< limit on |B| [T]; r.m.s. with a frequency
+  std::string limit_from;         ///< the limit's own source
+};
+
+/// Grid settings of a case.
+struct GridRequest {
+  int cells_across = 4;
+  double reach = 400.0;
+  bool cells_across_given = false;
+};
+
+/// A case file, read and found valid; SI units throughout, names resolved to part indices.
+struct Case {
+  std::string name;    ///< the file's name without extension
+  std::string title;
+  std::string sha256;  ///< of the case file's bytes and of every --set
+  std::optional<double> run_length_m;
+  /// Names of [given] with their values after --set, in file order, in the file's own units.
+  std::vector<std::pair<std::string, double>> given;
+
+  mesh::Section section;
+  std::vector<solver::Material> materials;  ///< one per part of the section
+  solver::Excitation excitation;            ///< one current per part
+  std::vector<solver::Circuit> circuits;    ///< one per [[three_phase]]
+  std::vector<ProbeRequest> probes;         ///< the two default lines where the file has none
+  std::vector<solver::Loop> loops;          ///< every pair of up to 10 bars where the file has none
+  GridRequest grid;
+};
+
+/// Replaces the value of one name of [given]: --set NAME=VALUE (VALUE may be an expression).
+struct Setting {
+  std::string name;
+  std::string value;
+};
+
+/// Reads and checks a case file.
+/// \throws InputError (io/input_error.hpp) for everything wrong with it.
+Case read_case(const std::filesystem::path& file, const std::vector<Setting>& settings = {});
+
+}  // namespace barwall::io

@@ -1,0 +1,1 @@
+#include "mesh/shape.hpp"
