@@ -37,9 +37,9 @@ mesh::Point cell_flux_density(const mesh::FittedGrid& grid, int triangle,
   const double factor = 1.0 / (2.0 * triangle_area(p));
   // B = sum of A_k times the edge opposite corner k, over twice the area.
   mesh::Point b;
-  b += (factor * potential[n[0]]) * (p[1] - p[2]);
-  b += (factor * potential[n[1]]) * (p[2] - p[0]);
-  b += (factor * potential[n[2]]) * (p[0] - p[1]);
+  b += (factor * potential[n[0]]) * (p[2] - p[1]);
+  b += (factor * potential[n[1]]) * (p[0] - p[2]);
+  b += (factor * potential[n[2]]) * (p[1] - p[0]);
   return b;
 }
 
