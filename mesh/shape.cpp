@@ -185,8 +185,9 @@ std::vector<std::vector<Curve>> boundary(const Shape& shape) {
 }
 
 Box bounds(const Shape& shape) {
+  const auto chains = boundary(shape);
   Box box;
-  for (const Curve& curve : boundary(shape).front()) box.include(bounds(curve));
+  for (const Curve& curve : chains.front()) box.include(bounds(curve));
   return box;
 }
 
