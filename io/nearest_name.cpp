@@ -10,6 +10,8 @@ namespace {
 
 /// Longer names are no typing errors of any valid one.
 constexpr std::size_t longest_compared = 100;
+/// Shorter names are the beginning of too many others.
+constexpr std::size_t shortest_beginning = 3;
 
 std::string lower_case(std::string_view text) {
   std::string result(text);
@@ -48,7 +50,9 @@ std::string nearest_name(std::string_view mistyped, const std::vector<std::strin
   for (const std::string& candidate : candidates) {
     if (candidate.size() > longest_compared) continue;
     const int longer = static_cast<int>(std::max(mistyped.size(), candidate.size()));
-    const int allowed = std::max(1, longer / 3);
+    const bool begins = mistyped.size() >= shortest_beginning &&
+                        candidate.compare(0, mistyped.size(), mistyped) == 0;
+    const int allowed = begins ? longer : std::max(1, longer / 3);
     const int letters =
         std::abs(static_cast<int>(mistyped.size()) - static_cast<int>(candidate.size()));
     if (letters > allowed || (!nearest.empty() && letters >= least)) continue;

@@ -12,7 +12,8 @@ namespace barwall::io {
 int edit_distance(std::string_view first, std::string_view second);
 
 /// The candidate nearest to a mistyped name; empty when none is close, that is, when more than
-/// a third of the letters would have to change. Of equally near ones the first.
+/// a third of the letters would have to change and none begins with all of it (a forgotten
+/// unit). Of equally near ones the first.
 std::string nearest_name(std::string_view mistyped, const std::vector<std::string>& candidates);
 
 /// `; did you mean "..."?` with the nearest candidate, or nothing when none is close.
