@@ -18,10 +18,10 @@ struct ProbeRequest {
 
   std::string name;
   Kind kind = Kind::point;
-  mesh::Point at;            ///< point [m]
-  mesh::Point from, to;      ///< line [m]
-  double clearance = 0.0;    ///< around: distance from the outermost outline [m]
-  int points = 0;            ///< line and around: number of points
+  mesh::Point at;                 ///< point [m]
+  mesh::Point from, to;           ///< line [m]
+  double clearance = 0.0;         ///< around: distance from the outermost outline [m]
+  int points = 0;                 ///< line and around: number of points
   std::optional<double> limit_t;  ///< limit on |B| [T]; r.m.s. with a frequency
   std::string limit_from;         ///< the limit's own source
 };
@@ -35,9 +35,11 @@ struct GridRequest {
 
 /// A case file, read and found valid; SI units throughout, names resolved to part indices.
 struct Case {
-  std::string name;    ///< the file's name without extension
-  std::string title;
-  std::string sha256;  ///< of the case file's bytes and of every --set
+  std::string file;        ///< the case file as it was given
+  std::string name;        ///< the file's name without extension
+  std::string title;       ///< the name where the file gives no title
+  std::string sha256;      ///< of the case file's bytes and of every --set
+  std::string grid_place;  ///< FILE:LINE:COLUMN of [grid], for messages about the grid
   std::optional<double> run_length_m;
   /// Names of [given] with their values after --set, in file order, in the file's own units.
   std::vector<std::pair<std::string, double>> given;

@@ -8,7 +8,7 @@ namespace barwall::io {
 /// Something wrong with what the user gave: the message holds file:line:column, the value, what
 /// is allowed and, for a mistyped name, the nearest valid one.
 class InputError : public std::runtime_error {
- public:
+public:
   using std::runtime_error::runtime_error;
 };
 

@@ -1,0 +1,162 @@
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cstdint>
+#include <fstream>
+#include <map>
+#include <system_error>
+#include <utility>
+
+#include "io/case.hpp"
+#include "io/case_currents.hpp"
+#include "io/case_overlaps.hpp"
+#include "io/case_parts.hpp"
+#include "io/case_requests.hpp"
+#include "io/case_text.hpp"
+#include "io/input_error.hpp"
+#include "io/nearest_name.hpp"
+#include "io/sha256.hpp"
+
+namespace barwall::io {
+
+namespace {
+
+/// Largest case file [bytes]; ten thousand bars fill a quarter of it.
+constexpr std::uintmax_t largest_file = 4'000'000;
+constexpr std::size_t most_given = 10000;
+
+/// The bytes of a plain file of bounded size.
+std::string bytes_of(const std::filesystem::path& file) {
+  // Without a line to point at, messages about the file as a whole point at its beginning.
+  const auto fail = [&](const std::string& what) {
+    throw InputError(fmt::format("{}:1:1: {}", file.string(), what));
+  };
+  std::error_code error;
+  const auto status = std::filesystem::status(file, error);
+  if (!std::filesystem::exists(status)) fail("no such file");
+  if (std::filesystem::is_directory(status)) fail("this is a folder; a case is a .toml file");
+  if (!std::filesystem::is_regular_file(status)) fail("this is no plain file");
+  std::ifstream stream(file, std::ios::binary);
+  if (!stream) fail("the file cannot be read");
+  std::string bytes(largest_file + 1, '\0');
+  stream.read(bytes.data(), static_cast<std::streamsize>(bytes.size()));
+  if (stream.bad()) fail("the file cannot be read");
+  bytes.resize(static_cast<std::size_t>(stream.gcount()));
+  if (bytes.size() > largest_file) {
+    fail(fmt::format("the file is too large; a case file has at most {} bytes", largest_file));
+  }
+  return bytes;
+}
+
+std::string option_of(const Setting& setting) {
+  return fmt::format("--set {}={}", setting.name, setting.value);
+}
+
+/// Settings by name; two of one name are refused.
+std::map<std::string, const Setting*> by_name(const CaseText& text,
+                                              const std::vector<Setting>& settings) {
+  std::map<std::string, const Setting*> sorted;
+  for (const Setting& setting : settings) {
+    if (!sorted.emplace(setting.name, &setting).second) {
+      text.fail({}, fmt::format("{}: {} is set twice", option_of(setting), setting.name));
+    }
+  }
+  return sorted;
+}
+
+/// Reads [given] in file order, each value after those above it; settings replace values.
+std::vector<std::pair<std::string, double>> read_given(
+    const CaseTable& root, CaseText& text, const std::map<std::string, const Setting*>& settings) {
+  std::vector<std::pair<std::string, double>> given;
+  std::vector<std::string> names;
+  const TomlEntry* entry = root.find("given");
+  const TomlTable empty;
+  const TomlTable* table = &empty;
+  if (entry != nullptr) {
+    table = std::get_if<TomlTable>(&entry->value.content);
+    if (table == nullptr) {
+      text.fail(entry->value.place,
+                fmt::format("given is {}; it must be a table [given]", kind_of(entry->value)));
+    }
+  }
+  for (const TomlEntry& name : table->entries) names.push_back(name.key);
+  const Place place = entry == nullptr ? Place{} : entry->value.place;
+  if (names.size() > most_given) {
+    text.fail(place, fmt::format("more than {} names in [given]", most_given));
+  }
+  for (const auto& [name, setting] : settings) {
+    if (std::find(names.begin(), names.end(), name) != names.end()) continue;
+    text.fail(place, fmt::format("{}: {} \"{}\"{}", option_of(*setting),
+                                 names.empty() ? "the case has no [given] with a name"
+                                               : "[given] has no name",
+                                 name, suggestion(name, names)));
+  }
+  for (const TomlEntry& name : table->entries) {
+    check_name(text, name.place, name.key, "the name in [given]");
+    if (!names_a_value(name.key)) {
+      text.fail(name.place,
+                fmt::format("\"{}\" cannot be a name in [given]: it must be a letter followed by "
+                            "letters, digits and \"_\", and not sqrt, sin, cos or balance",
+                            name.key));
+    }
+    const auto setting = settings.find(name.key);
+    double value = 0.0;
+    if (setting == settings.end()) {
+      value = read_number(text, name.value, name.key, {});
+    } else {
+      try {
+        value = evaluate(setting->second->value, text.given);
+      } catch (const ExpressionError& error) {
+        text.fail(name.value.place,
+                  fmt::format("{}: {}", option_of(*setting->second), error.what()));
+      }
+    }
+    text.given[name.key] = value;
+    given.emplace_back(name.key, value);
+  }
+  return given;
+}
+
+}  // namespace
+
+Case read_case(const std::filesystem::path& file, const std::vector<Setting>& settings) {
+  CaseText text{file.string(), {}};
+  std::string hashed = bytes_of(file);
+  const TomlValue toml = parse_toml(text.file, hashed);
+  const CaseTable root(text, toml, "the case",
+                       {"title", "frequency_hz", "run_length_m", "given", "material", "bar",
+                        "three_phase", "wall", "opening", "probe", "loop", "grid"});
+  Case result;
+  result.file = text.file;
+  result.name = file.stem().string();
+  const auto sorted_settings = by_name(text, settings);
+  for (const auto& [name, setting] : sorted_settings)
+    hashed.append("\n").append(option_of(*setting));
+  result.sha256 = sha256(hashed);
+
+  const TomlEntry* title = root.find("title");
+  result.title = title == nullptr ? result.name : read_line(text, title->value, "title");
+  result.given = read_given(root, text, sorted_settings);
+  if (const TomlEntry* run = root.find("run_length_m")) {
+    result.run_length_m =
+        read_number(text, run->value, "run_length_m", {0.0, metres(farthest_mm), false, " m"});
+  }
+
+  CaseParts parts = read_parts(root);
+  CaseCurrents currents = read_currents(root, parts);
+  result.probes = read_probes(root);
+  result.loops = read_loops(root, parts);
+  result.grid = read_grid(root);
+  const TomlEntry* grid = root.find("grid");
+  const Place grid_place = grid == nullptr ? Place{} : grid->value.place;
+  result.grid_place = fmt::format("{}:{}:{}", text.file, grid_place.line, grid_place.column);
+  check_overlaps(text, parts.section, parts.shape_places);
+
+  result.section = std::move(parts.section);
+  result.materials = std::move(parts.materials);
+  result.excitation = std::move(currents.excitation);
+  result.circuits = std::move(currents.circuits);
+  return result;
+}
+
+}  // namespace barwall::io
