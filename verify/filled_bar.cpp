@@ -17,6 +17,7 @@ using mesh::Rectangle;
 using mesh::Round;
 using mesh::Shape;
 using mesh::Tube;
+using mesh::turned;
 
 namespace {
 
