@@ -4,7 +4,8 @@
 
 #include "verify/bar_force.hpp"
 #include "verify/half_space.hpp"
-#include "verify/ideal_iron.hpp"
+#include "verify/iron_box.hpp"
+#include "verify/iron_slot.hpp"
 #include "verify/mean_distance.hpp"
 #include "verify/pipe_series.hpp"
 #include "verify/round_conductor.hpp"
