@@ -60,14 +60,17 @@ TEST_CASE("the fast sum of many sheets equals the closed forms added one by one"
 TEST_CASE("each sheet of the fast sum is right to 1e-9 of its own field at every distance") {
   const CurrentSheet sheet{{0.01, -0.002}, {0.013, 0.002}, 1e4};
   const Point middle = between(sheet.from, sheet.to, 0.5);
-  double worst = 0.0;
+  std::vector<Point> points;
   for (double ratio = 0.3; ratio < 1e4; ratio *= 1.07) {
     for (int direction = 0; direction < 24; ++direction) {
-      const Point at = middle + turned({ratio * 0.005, 0.0}, 0.1 + 0.2618 * direction);
-      const Point fast = field_of_sheets(std::array{sheet}, std::array{at}).front();
-      const Point exact = field_of_sheet(sheet, at);
-      worst = std::max(worst, distance(fast, exact) / norm(exact));
+      points.push_back(middle + turned({ratio * 0.005, 0.0}, 0.1 + 0.2618 * direction));
     }
+  }
+  const auto fast = field_of_sheets(std::array{sheet}, points);
+  double worst = 0.0;
+  for (std::size_t p = 0; p < points.size(); ++p) {
+    const Point exact = field_of_sheet(sheet, points[p]);
+    worst = std::max(worst, distance(fast[p], exact) / norm(exact));
   }
   CHECK(worst < 1e-9);
 }
