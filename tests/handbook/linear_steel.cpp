@@ -40,7 +40,9 @@ TEST_CASE("a wire before a steel half-space has the field and pull of its image"
     CHECK(-force_on_bar(steel, wire, 0).y == digits(row.pull, 5e-7));
     CHECK(field_of(steel, wire, {0.0, 0.02}).x == digits(row.below, 2e-7));
     const Point above = field_of(steel, wire, {0.03, 1e-15});
-    CHECK(above.x == Approx(row.above_x).epsilon(2e-7).margin(1e-13));
+    CHECK(above.x == Approx(row.above_x).epsilon(2e-7).margin(6e-11));
+    const double kappa = (row.permeability - 1.0) / (row.permeability + 1.0);
+    CHECK(above.x == Approx(2e-4 * 0.05 / 0.0034 * (1.0 - kappa)).epsilon(1e-9).margin(1e-15));
     CHECK(above.y == digits(row.above_y, 2e-7));
     const Point within = field_of(steel, wire, {0.03, -1e-15});
     CHECK(within.y == digits(above.y, 1e-12));
@@ -164,7 +166,9 @@ TEST_CASE("two bars in a closed iron box have the field, force and inductance of
   for (const auto& [x, y, bx, by] : rows) {
     const Point b = field_of(box, bars, {x, y});
     CAPTURE(x, y);
-    CHECK(b.x == Approx(bx).epsilon(0.0).margin(1e-11));
-    CHECK(b.y == Approx(by).epsilon(0.0).margin(1e-11));
+    // Level with the bars' ends the double series behind these digits converges slowest.
+    const double margin = y == 0.02 ? 2e-9 : 1e-11;
+    CHECK(b.x == Approx(bx).epsilon(0.0).margin(margin));
+    CHECK(b.y == Approx(by).epsilon(0.0).margin(margin));
   }
 }
