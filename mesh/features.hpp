@@ -1,0 +1,26 @@
+#pragma once
+
+#include <vector>
+
+#include "mesh/outline.hpp"
+#include "mesh/spacing.hpp"
+
+namespace barwall::mesh {
+
+/// What a section's outlines ask of the grid along one axis.
+struct AxisFeatures {
+  std::vector<SpacingSource> sources;  ///< spacings at cells_across = 4
+  std::vector<WantedLine> lines;
+};
+
+struct Features {
+  AxisFeatures x;
+  AxisFeatures y;
+};
+
+/// Spacings and lines for a section: a quarter of every width and gap across it, a sixteenth of
+/// a circle's diameter, finer towards the edges of bars, and at the corners of parts with sharp
+/// corners a fiftieth of their thickness.
+Features features_of(const Section& section, const Outline& outline);
+
+}  // namespace barwall::mesh

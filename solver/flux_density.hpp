@@ -1,0 +1,67 @@
+#pragma once
+
+#include <Eigen/Dense>
+#include <cstdint>
+#include <vector>
+
+#include "mesh/sampling.hpp"
+#include "solver/magnetostatics.hpp"
+
+namespace barwall::solver {
+
+/// B of the scheme on one triangle, constant there: (dA/dy, -dA/dx) [T].
+mesh::Point cell_flux_density(const mesh::FittedGrid& grid, int triangle,
+                              const Eigen::Ref<const Eigen::VectorXd>& potential);
+
+/// The second-order field: A's gradient and second derivatives at every node, once for each
+/// occupant that meets there, never averaged across an outline.
+///
+/// At each node a quadratic is fitted to A over the neighbouring nodes of the same occupant
+/// (Z. Zhang and A. Naga, SIAM J. Sci. Comput. 26, 2005), bound to -div grad A = mu J where the
+/// permeability is constant.
+class RecoveredField {
+ public:
+  explicit RecoveredField(const Solution& solution);
+
+  /// Places: one per node, then one more for each further occupant at a node on an outline.
+  int place_count() const { return static_cast<int>(node_of_place_.size()); }
+  int node_of_place(int place) const { return node_of_place_[static_cast<std::size_t>(place)]; }
+  int region_of_place(int place) const {
+    return region_of_place_[static_cast<std::size_t>(place)];
+  }
+  /// The place of a node as seen from an occupant.
+  int place(int node, int region) const;
+  /// Places of a triangle's corners.
+  std::array<int, 3> places(int triangle) const;
+
+  /// B [T] of one load pattern at a place.
+  mesh::Point flux_density(int place, int pattern) const {
+    return field_[static_cast<std::size_t>(pattern)][static_cast<std::size_t>(place)].b;
+  }
+
+  /// B [T] of one load pattern at a point of a triangle: from the three corners' values and
+  /// slopes, exact where B is quadratic.
+  mesh::Point flux_density(const mesh::Location& at, mesh::Point point, int pattern) const;
+
+  /// A [Wb/m] of one load pattern at a point of a triangle, exact where A is quadratic.
+  double potential(const mesh::Location& at, mesh::Point point, int pattern) const;
+
+ private:
+  struct Local {
+    mesh::Point b;       ///< [T]
+    mesh::Point b_dx;    ///< dB/dx [T/m]
+    mesh::Point b_dy;    ///< dB/dy [T/m]
+  };
+  void number_places();
+  void fit_place(int place, std::vector<int>& nodes, const std::vector<double>& density);
+  void gather(int node, int region, int layers, std::vector<int>& nodes) const;
+
+  const Solution* solution_;
+  std::vector<int> node_of_place_;
+  std::vector<std::int32_t> region_of_place_;
+  std::vector<std::int32_t> first_region_;          ///< per node
+  std::vector<std::pair<std::int64_t, int>> further_;  ///< (node * regions + region) -> place
+  std::vector<std::vector<Local>> field_;           ///< per pattern, per place
+};
+
+}  // namespace barwall::solver
