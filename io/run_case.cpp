@@ -1,0 +1,147 @@
+#include <fmt/format.h>
+#include <sys/sysinfo.h>
+
+#include <algorithm>
+
+#include "io/input_error.hpp"
+#include "io/results.hpp"
+#include "mesh/offset_line.hpp"
+#include "verify/end_effect.hpp"
+#include "verify/run_checks.hpp"
+
+namespace barwall::io {
+namespace {
+
+/// Memory that a direct solve of n nodes takes, by measurement: about 31 n log2 n bytes for the
+/// factor and 700 n for everything else.
+double bytes_needed(double nodes) { return nodes * (31.0 * std::log2(nodes) + 700.0); }
+
+/// Largest number of nodes that three quarters of the free memory hold.
+double nodes_that_fit() {
+  struct sysinfo info {};
+  sysinfo(&info);
+  const double free = 0.75 * static_cast<double>(info.freeram + info.bufferram) * info.mem_unit;
+  double nodes = 1e4;
+  while (nodes < 2e8 && bytes_needed(1.1 * nodes) < free) nodes *= 1.1;
+  return nodes;
+}
+
+class Stopwatch {
+ public:
+  explicit Stopwatch(StageTimes& stages) : stages_(stages) {}
+  void lap(const std::string& name) {
+    const auto now = std::chrono::steady_clock::now();
+    stages_.emplace_back(name, std::chrono::duration<double>(now - last_).count());
+    last_ = now;
+  }
+
+ private:
+  StageTimes& stages_;
+  std::chrono::steady_clock::time_point last_ = std::chrono::steady_clock::now();
+};
+
+bool inside(const std::vector<mesh::Point>& line, mesh::Point point) {
+  return contains(mesh::Polygon{line}, point);
+}
+
+std::vector<mesh::Point> points_around(const mesh::Outline& outline, double clearance, int count) {
+  auto lines = offset_lines(outline, visible_parts(outline), clearance);
+  // Lines within others run round parts in the hollow of another: not outermost.
+  std::vector<std::vector<mesh::Point>> outermost;
+  for (auto& line : lines) {
+    const bool hidden = std::any_of(outermost.begin(), outermost.end(), [&](const auto& outer) {
+      return inside(outer, line.front());
+    });
+    if (!hidden) outermost.push_back(std::move(line));
+  }
+  const auto length = [](const std::vector<mesh::Point>& line) {
+    double sum = 0.0;
+    for (std::size_t k = 0; k < line.size(); ++k) {
+      sum += distance(line[k], line[(k + 1) % line.size()]);
+    }
+    return sum;
+  };
+  double whole = 0.0;
+  for (const auto& line : outermost) whole += length(line);
+  std::vector<mesh::Point> points;
+  for (const auto& line : outermost) {
+    const auto share = static_cast<int>(std::lround(count * length(line) / whole));
+    for (mesh::Point p : spread_along(line, std::max(2, share))) points.push_back(p);
+  }
+  return points;
+}
+
+}  // namespace
+
+std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& outline) {
+  std::vector<solver::Probe> probes;
+  for (const ProbeRequest& request : input.probes) {
+    solver::Probe probe{request.name, {}, request.kind != ProbeRequest::Kind::point,
+                        request.limit_t, request.limit_from};
+    switch (request.kind) {
+      case ProbeRequest::Kind::point: probe.points = {request.at}; break;
+      case ProbeRequest::Kind::line:
+        for (int k = 0; k < request.points; ++k) {
+          const double t = static_cast<double>(k) / (request.points - 1);
+          probe.points.push_back(between(request.from, request.to, t));
+        }
+        break;
+      case ProbeRequest::Kind::around:
+        probe.points = points_around(outline, request.clearance, request.points);
+        break;
+    }
+    probes.push_back(std::move(probe));
+  }
+  return probes;
+}
+
+std::shared_ptr<const solver::Problem> problem_of(const Case& input) {
+  auto problem = std::make_shared<solver::Problem>();
+  problem->section = input.section;
+  problem->outline = outline_of(input.section);
+  problem->materials = input.materials;
+  problem->excitation = input.excitation;
+  problem->loops = input.loops;
+  mesh::GridOptions options;
+  options.cells_across = input.grid.cells_across;
+  options.reach = input.grid.reach;
+  options.max_nodes = nodes_that_fit();
+  for (const solver::Probe& probe : probes_of(input, problem->outline)) {
+    for (mesh::Point point : probe.points) options.fine.include(point);
+  }
+  try {
+    problem->grid =
+        std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem->outline, options));
+  } catch (const mesh::GridError& error) {
+    throw InputError(fmt::format("{}: {}", input.grid_place, error.what()));
+  }
+  return problem;
+}
+
+Results run_case(Case input) {
+  Results results;
+  results.input = std::move(input);
+  Stopwatch watch(results.stages);
+  results.problem = problem_of(results.input);
+  watch.lap("grid");
+  auto solution = std::make_shared<solver::Solution>(solve(results.problem));
+  results.solution = solution;
+  watch.lap("solve");
+  results.field = std::make_shared<solver::RecoveredField>(*solution);
+  const solver::StressBands bands(*solution, bodies(results.problem->outline));
+  results.figures =
+      figures_of(*solution, *results.field, bands,
+                 probes_of(results.input, results.problem->outline), results.input.circuits);
+  watch.lap("figures");
+  results.checks = verify::run_checks(*solution, *results.field, bands);
+  if (results.input.run_length_m) {
+    const auto notices =
+        verify::end_effect(*results.problem, results.figures, *results.input.run_length_m);
+    auto& all = results.figures.notices;
+    all.insert(all.end(), notices.begin(), notices.end());
+  }
+  watch.lap("checks");
+  return results;
+}
+
+}  // namespace barwall::io
