@@ -9,8 +9,8 @@ namespace {
 // Spacings as fractions of a size, at cells_across = 4.
 constexpr double across = 1.0 / 4.0;           // of a width or gap
 constexpr double on_diameter = 1.0 / 16.0;     // of a circle's diameter
-constexpr double at_bar_edge = 1.0 / 12.0;     // of a bar's thickness
-constexpr double at_sharp_corner = 1.0 / 50.0; // of a sharp part's thickness
+constexpr double at_bar_edge = 1.0 / 12.0;      // of a bar's thickness
+constexpr double at_sharp_corner = 1.0 / 25.0;  // of a sharp part's thickness
 
 /// A direction counts along an axis when it has at least this share of it: grid lines nearly
 /// parallel to two outlines need not be dense between them.
@@ -18,10 +18,10 @@ constexpr double least_share = 0.1;
 
 void add_source(Features& features, const Box& box, Point direction, double spacing) {
   if (std::abs(direction.x) >= least_share) {
-    features.x.sources.push_back({box.low.x, box.high.x, spacing});
+    features.x.smooth.push_back({box.low.x, box.high.x, spacing});
   }
   if (std::abs(direction.y) >= least_share) {
-    features.y.sources.push_back({box.low.y, box.high.y, spacing});
+    features.y.smooth.push_back({box.low.y, box.high.y, spacing});
   }
 }
 
@@ -122,8 +122,8 @@ void add_edges(Features& features, const Section& section, const OutlinePiece& p
   const Box box = bounds(piece.curve);
   if (const auto* arc = std::get_if<Arc>(&piece.curve)) {
     const double spacing = on_diameter * 2.0 * arc->radius;
-    features.x.sources.push_back({box.low.x, box.high.x, spacing});
-    features.y.sources.push_back({box.low.y, box.high.y, spacing});
+    features.x.smooth.push_back({box.low.x, box.high.x, spacing});
+    features.y.smooth.push_back({box.low.y, box.high.y, spacing});
   }
   for (Occupant side : {piece.left, piece.right}) {
     const Part* part = part_of(section, side);
@@ -166,8 +166,8 @@ void add_corner(Features& features, const Section& section, Point vertex,
       const Part* part = part_of(section, side);
       if (part == nullptr || !part->sharp_corners) continue;
       const double spacing = at_sharp_corner * thickness(*shape_of(section, side));
-      features.x.sources.push_back({vertex.x, vertex.x, spacing});
-      features.y.sources.push_back({vertex.y, vertex.y, spacing});
+      features.x.sharp.push_back({vertex.x, vertex.x, spacing});
+      features.y.sharp.push_back({vertex.y, vertex.y, spacing});
     }
   }
 }

@@ -9,7 +9,9 @@ namespace barwall::mesh {
 
 /// What a section's outlines ask of the grid along one axis.
 struct AxisFeatures {
-  std::vector<SpacingSource> sources;  ///< spacings at cells_across = 4
+  // Spacings at cells_across = 4.
+  std::vector<SpacingSource> smooth;  ///< from widths, gaps and edges
+  std::vector<SpacingSource> sharp;   ///< at corners towards which the field grows without bound
   std::vector<WantedLine> lines;
 };
 
@@ -20,7 +22,7 @@ struct Features {
 
 /// Spacings and lines for a section: a quarter of every width and gap across it, a sixteenth of
 /// a circle's diameter, finer towards the edges of bars, and at the corners of parts with sharp
-/// corners a fiftieth of their thickness.
+/// corners a twenty-fifth of their thickness.
 Features features_of(const Section& section, const Outline& outline);
 
 }  // namespace barwall::mesh

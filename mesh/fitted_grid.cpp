@@ -11,14 +11,31 @@
 namespace barwall::mesh {
 namespace {
 
-constexpr double growth = 0.1133;    // ln 1.12
-constexpr double far_growth = 0.35;  // beyond every place where the field is asked for
+// Bounds on the spacing's slope; with slope g neighbouring intervals differ by a factor exp(g).
+constexpr double sharp_slope = 0.113;  // away from sharp corners: below ln 1.12
+constexpr double near_slope = 0.1;   // otherwise within the section
+constexpr double open_slope = 0.07;   // in the open: the far field's error goes with its square
+constexpr double far_slope = 0.35;     // beyond every place where the field is asked for
 constexpr double merge_fraction = 0.3;
 constexpr int most_attempts = 12;
 
-std::vector<double> lines_along(const AxisFeatures& features, int cells_across, double fine_low,
-                                double fine_high, double low, double high) {
-  const SpacingFunction spacing(features.sources, growth, far_growth, fine_low, fine_high);
+/// Stretches of one axis, each within the next.
+struct Extents {
+  double near_low, near_high;    ///< the section
+  double fine_low, fine_high;    ///< where the field is asked for
+  double outer_low, outer_high;  ///< the boundary
+};
+
+std::vector<double> lines_along(const AxisFeatures& features, int cells_across,
+                                const Extents& extents) {
+  const auto [near_low, near_high, fine_low, fine_high, low, high] = extents;
+  SpacingFunction spacing(
+      features.smooth,
+      {{{near_low, near_high, near_slope}, {fine_low, fine_high, open_slope}}, far_slope});
+  if (!features.sharp.empty()) {
+    spacing = smaller_of(
+        spacing, SpacingFunction(features.sharp, {{{fine_low, fine_high, sharp_slope}}, far_slope}));
+  }
   std::vector<double> fixed = thinned_lines(features.lines, spacing, merge_fraction);
   fixed.insert(fixed.begin(), low);
   fixed.push_back(high);
@@ -38,7 +55,7 @@ void refine_at(Features& features, const FitResult& result, int cells_across) {
   const auto halve = [to_reference](AxisFeatures& axis, const std::vector<double>& lines, int k) {
     const double from = lines[static_cast<std::size_t>(k)];
     const double to = lines[static_cast<std::size_t>(k) + 1];
-    axis.sources.push_back({from, to, to_reference * (to - from)});
+    axis.smooth.push_back({from, to, to_reference * (to - from)});
   };
   for (int i : columns) halve(features.x, grid.x_lines, i);
   for (int j : rows) halve(features.y, grid.y_lines, j);
@@ -85,13 +102,15 @@ FittedGrid make_grid(const Section& section, const Outline& outline, const GridO
     }
   }
   const double outer = std::max(options.reach * half, 100.0 * farthest);
+  const Extents along_x{box.low.x,  box.high.x,       fine.low.x,
+                        fine.high.x, centre.x - outer, centre.x + outer};
+  const Extents along_y{box.low.y,  box.high.y,       fine.low.y,
+                        fine.high.y, centre.y - outer, centre.y + outer};
   Features features = features_of(section, outline);
   FitResult result;
   for (int attempt = 0; attempt < most_attempts; ++attempt) {
-    auto x = lines_along(features.x, options.cells_across, fine.low.x, fine.high.x,
-                         centre.x - outer, centre.x + outer);
-    auto y = lines_along(features.y, options.cells_across, fine.low.y, fine.high.y,
-                         centre.y - outer, centre.y + outer);
+    auto x = lines_along(features.x, options.cells_across, along_x);
+    auto y = lines_along(features.y, options.cells_across, along_y);
     const double nodes = static_cast<double>(x.size()) * static_cast<double>(y.size());
     if (nodes > options.max_nodes) {
       throw GridError("the grid would have " + std::to_string(x.size()) + " x " +

@@ -11,13 +11,27 @@ struct SpacingSource {
   double spacing = 0.0;
 };
 
-/// The wanted spacing along one axis: the largest function h(x) that keeps every source and
-/// whose slope is at most `growth`, so that neighbouring intervals differ by a factor below
-/// exp(growth); beyond `fine_from` .. `fine_to` the slope is `far_growth`.
+/// Bounds on the spacing's slope |dh/dx|: that of the first zone that holds x, beyond all zones
+/// `far`. The first zone's and the last zone's stretches bound what the spacing is defined from.
+struct SlopeRule {
+  struct Zone {
+    double from = 0.0;
+    double to = 0.0;
+    double slope = 0.0;
+  };
+  std::vector<Zone> zones;  ///< inner ones first; each lies within the next
+  double far = 0.0;
+};
+
+/// The wanted spacing along one axis as a function h(x), piecewise linear; neighbouring
+/// intervals differ by a factor below exp(slope).
 class SpacingFunction {
  public:
-  SpacingFunction(std::vector<SpacingSource> sources, double growth, double far_growth,
-                  double fine_from, double fine_to);
+  /// The largest function that keeps every source and whose slope is bounded by the rule.
+  SpacingFunction(std::vector<SpacingSource> sources, const SlopeRule& rule);
+
+  /// The smaller of two functions at each x.
+  friend SpacingFunction smaller_of(const SpacingFunction& first, const SpacingFunction& second);
 
   /// Wanted spacing at x [m].
   double operator()(double x) const;
@@ -31,17 +45,18 @@ class SpacingFunction {
  private:
   struct Knot {
     double x;
-    double h;           ///< spacing at x
-    double cap;         ///< upper bound between this knot and the next
-    double slope;       ///< bound on |dh/dx| between this knot and the next
-    double cumulative;  ///< intervals from the first knot to this one
+    double h;                 ///< spacing at x
+    double cumulative = 0.0;  ///< intervals from the first knot to this one
   };
-  double in_gap(std::size_t k, double x) const;
+  SpacingFunction(std::vector<Knot> knots, double end_slope);
   double within(std::size_t k, double x) const;
   std::size_t gap_of(double x) const;
 
   std::vector<Knot> knots_;
+  double end_slope_;  ///< beyond the first and the last knot
 };
+
+SpacingFunction smaller_of(const SpacingFunction& first, const SpacingFunction& second);
 
 /// A place where a grid line is wanted; of two that lie much closer than the local spacing the
 /// one of larger weight stays.

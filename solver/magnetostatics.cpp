@@ -1,8 +1,11 @@
 #include "solver/magnetostatics.hpp"
 
 #include <chrono>
+#include <cmath>
+#include <numbers>
 #include <set>
 
+#include "mesh/sampling.hpp"
 #include "solver/assembly.hpp"
 #include "solver/constants.hpp"
 
@@ -31,6 +34,35 @@ std::vector<int> bars_in_loops(const Problem& problem) {
     bars.insert(loop.back.begin(), loop.back.end());
   }
   return {bars.begin(), bars.end()};
+}
+
+/// Mean of A over a circle about the section's centre, where the grid is still fine.
+double mean_on_circle(const Problem& problem, const Eigen::Ref<const Eigen::VectorXd>& potential,
+                      mesh::Point centre, double radius) {
+  constexpr int points = 360;
+  double sum = 0.0;
+  for (int k = 0; k < points; ++k) {
+    const double angle = 2.0 * std::numbers::pi * (k + 0.5) / points;
+    const mesh::Point p = centre + radius * mesh::Point{std::cos(angle), std::sin(angle)};
+    const mesh::Location at = locate(*problem.grid, problem.section, p);
+    const auto n = problem.grid->triangle(at.triangle);
+    for (std::size_t c = 0; c < 3; ++c) sum += at.weight[c] * potential[n[c]];
+  }
+  return sum / points;
+}
+
+/// Sets the constant of A anew where the grid is fine: beyond, it is so coarse that a net
+/// current's logarithm gathers an error. On a circle round all currents, free and bound, the
+/// mean of A is that of the net current at any place inside (mean value property), exactly.
+void set_reference(const Problem& problem, const std::vector<CurrentPattern>& patterns,
+                   Eigen::MatrixXd& potential) {
+  const mesh::Point centre = bounds(problem.section).centre();
+  const double radius = 5.0 * half_size(problem.section);
+  for (Eigen::Index c = 0; c < potential.cols(); ++c) {
+    const double net = patterns[static_cast<std::size_t>(c)].net;
+    const double exact = -mu_0 * net / (2.0 * std::numbers::pi) * std::log(radius);
+    potential.col(c).array() += exact - mean_on_circle(problem, potential.col(c), centre, radius);
+  }
 }
 
 }  // namespace
@@ -70,6 +102,7 @@ Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& optio
   solution.report = prepared->solve(rhs, x, options.tolerance);
   solution.linear_seconds =
       std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
+  set_reference(*problem, all, x);
   const auto loads = static_cast<Eigen::Index>(solution.patterns.size());
   solution.potential = x.leftCols(loads);
   solution.unit_potential = x.rightCols(columns - loads);

@@ -1,0 +1,318 @@
+#include "solver/figures.hpp"
+
+#include <algorithm>
+#include <cmath>
+#include <numbers>
+
+#include "solver/energy.hpp"
+#include "solver/flux_linkage.hpp"
+#include "solver/wall_field.hpp"
+
+namespace barwall::solver {
+namespace {
+
+constexpr double degree = std::numbers::pi / 180.0;
+
+std::vector<Figure> force_figures(const PulsatingVector& force, bool alternating) {
+  if (!alternating) {
+    return {{"force_x", force.x.mean, "N/m"}, {"force_y", force.y.mean, "N/m"}};
+  }
+  const Peak peak = peak_of(force);
+  return {{"force_mean_x", force.x.mean, "N/m"},
+          {"force_mean_y", force.y.mean, "N/m"},
+          {"force_x_max", force.x.largest(), "N/m"},
+          {"force_x_min", force.x.smallest(), "N/m"},
+          {"force_y_max", force.y.largest(), "N/m"},
+          {"force_y_min", force.y.smallest(), "N/m"},
+          {"force_peak", peak.magnitude, "N/m"},
+          {"force_peak_at", peak.wt / degree, "deg"},
+          {"force_peak_direction", std::atan2(peak.value.y, peak.value.x) / degree, "deg"}};
+}
+
+std::vector<Figure> without_values(std::vector<Figure> figures) {
+  for (Figure& figure : figures) figure.value = not_given;
+  return figures;
+}
+
+void append(std::vector<Figure>& to, std::vector<Figure> more) {
+  to.insert(to.end(), more.begin(), more.end());
+}
+
+class Collector {
+ public:
+  Collector(const Solution& solution, const RecoveredField& field, const StressBands& bands)
+      : solution_(solution),
+        problem_(*solution.problem),
+        field_(field),
+        bands_(bands),
+        alternating_(problem_.excitation.alternating()),
+        visible_(visible_parts(problem_.outline)) {}
+
+  void parts(Figures& figures) const {
+    for (int part : visible_) {
+      const mesh::Part& p = problem_.section.parts[static_cast<std::size_t>(part)];
+      (p.kind == mesh::Part::Kind::bar ? figures.bars : figures.walls).push_back(entry_of(part));
+    }
+    for (std::size_t b = 0; b < bands_.bodies().size(); ++b) {
+      const auto& members = bands_.bodies()[b];
+      if (members.size() < 2) continue;
+      Entry entry;
+      for (int part : members) entry.parts.push_back(name_of(part));
+      entry.name = joined(entry.parts);
+      entry.figures = force_figures(bands_.force(static_cast<int>(b), whole_band), alternating_);
+      figures.bodies.push_back(std::move(entry));
+    }
+  }
+
+  void loops(Figures& figures) const {
+    for (const Loop& loop : problem_.loops) {
+      figures.loops.push_back(
+          {loop.name, {}, {{"inductance", loop_inductance(solution_, loop), "H/m"}}, {}, 0.0});
+    }
+  }
+
+  void circuits(Figures& figures, const std::vector<Circuit>& circuits) const {
+    for (const Circuit& circuit : circuits) {
+      Entry entry;
+      double sum = 0.0;
+      for (int bar : circuit.bars) {
+        entry.parts.push_back(name_of(bar));
+        sum += reactance(bar);
+      }
+      entry.name = joined(entry.parts);
+      entry.figures = {{"reactance_mean", sum / static_cast<double>(circuit.bars.size()), "ohm/m"}};
+      figures.circuits.push_back(std::move(entry));
+    }
+  }
+
+  void energy(Figures& figures) const {
+    bool net = false;
+    for (const CurrentPattern& pattern : solution_.patterns) net = net || pattern.net != 0.0;
+    const Pulsation energy = field_energy(solution_);
+    if (!alternating_) {
+      figures.energy = {{"energy", energy.mean, "J/m"}};
+    } else {
+      figures.energy = {{"energy_mean", energy.mean, "J/m"},
+                        {"energy_peak", energy.largest(), "J/m"}};
+    }
+    if (net) figures.energy = without_values(figures.energy);
+  }
+
+  void probes(Figures& figures, const std::vector<Probe>& probes) const {
+    for (const Probe& probe : probes) figures.probes.push_back(probe_figures(probe, figures));
+  }
+
+  void clearances(Figures& figures) const {
+    for (std::size_t a = 0; a < visible_.size(); ++a) {
+      for (std::size_t b = a + 1; b < visible_.size(); ++b) {
+        if (!is_bar(visible_[a]) && !is_bar(visible_[b])) continue;
+        const mesh::Gap gap = gap_between(problem_.outline, visible_[a], visible_[b]);
+        figures.clearances.push_back(
+            {{name_of(visible_[a]), name_of(visible_[b])}, {"gap", gap.width, "m"}});
+      }
+    }
+  }
+
+ private:
+  const std::string& name_of(int part) const {
+    return problem_.section.parts[static_cast<std::size_t>(part)].name;
+  }
+  bool is_bar(int part) const {
+    return problem_.section.parts[static_cast<std::size_t>(part)].kind == mesh::Part::Kind::bar;
+  }
+  bool magnetic(int part) const {
+    return problem_.materials[static_cast<std::size_t>(part)].magnetic();
+  }
+  static std::string joined(const std::vector<std::string>& names) {
+    std::string result;
+    for (const std::string& name : names) result += (result.empty() ? "" : "+") + name;
+    return result;
+  }
+
+  /// J x B where that is exact, else the stress round the part, unless it touches another.
+  std::vector<Figure> part_force(int part) const {
+    if (is_bar(part) && !magnetic(part)) {
+      return force_figures(lorentz_force(solution_, part), alternating_);
+    }
+    const auto& bodies = bands_.bodies();
+    for (std::size_t b = 0; b < bodies.size(); ++b) {
+      if (std::find(bodies[b].begin(), bodies[b].end(), part) == bodies[b].end()) continue;
+      if (bodies[b].size() > 1) break;
+      return force_figures(bands_.force(static_cast<int>(b), whole_band), alternating_);
+    }
+    return without_values(force_figures({}, alternating_));
+  }
+
+  double reactance(int bar) const {
+    const std::complex<double> current =
+        problem_.excitation.current[static_cast<std::size_t>(bar)];
+    if (current == 0.0) return not_given;
+    const std::complex<double> linkage{mean_potential(solution_, bar, solution_.potential.col(0)),
+                                       mean_potential(solution_, bar, solution_.potential.col(1))};
+    return 2.0 * std::numbers::pi * problem_.excitation.frequency_hz * (linkage / current).real();
+  }
+
+  Entry entry_of(int part) const {
+    const mesh::Part& p = problem_.section.parts[static_cast<std::size_t>(part)];
+    Entry entry{p.name, {}, part_force(part), {}, 0.0};
+    const FieldLevel level = field_level(solution_, part);
+    if (is_bar(part)) {
+      entry.current = problem_.excitation.current[static_cast<std::size_t>(part)];
+      const double in_phase = mean_potential(solution_, part, solution_.potential.col(0));
+      if (alternating_) {
+        const double quadrature = mean_potential(solution_, part, solution_.potential.col(1));
+        append(entry.figures, {{"flux_linkage_in_phase", in_phase, "Wb/m"},
+                               {"flux_linkage_quadrature", quadrature, "Wb/m"},
+                               {"reactance", reactance(part), "ohm/m"}});
+      } else {
+        append(entry.figures, {{"flux_linkage", in_phase, "Wb/m"}});
+      }
+      append(entry.figures, {{"b_high", level.high, "T"}});
+      for (std::size_t k = 0; p.pieces.size() > 1 && k < p.pieces.size(); ++k) {
+        auto force = magnetic(part)
+                         ? without_values(force_figures({}, alternating_))
+                         : force_figures(lorentz_force(solution_, part, static_cast<int>(k)),
+                                         alternating_);
+        entry.pieces.push_back({p.name + "." + std::to_string(k + 1), {}, std::move(force), {}, 0.0});
+      }
+    } else {
+      append(entry.figures, {{"b_mean", level.mean, "T"}, {"b_high", level.high, "T"}});
+    }
+    return entry;
+  }
+
+  std::vector<Figure> field_figures(mesh::Point point) const {
+    const mesh::Location at = locate(solution_.grid(), problem_.section, point);
+    const mesh::Point b = field_.flux_density(at, point, 0);
+    if (!alternating_) return {{"b_x", b.x, "T"}, {"b_y", b.y, "T"}, {"b", norm(b), "T"}};
+    const mesh::Point q = field_.flux_density(at, point, 1);
+    return {{"b_x_in_phase", b.x, "T"},
+            {"b_x_quadrature", q.x, "T"},
+            {"b_y_in_phase", b.y, "T"},
+            {"b_y_quadrature", q.y, "T"},
+            {"b_rms", std::hypot(norm(b), norm(q)), "T"},
+            {"b_peak", peak_magnitude(b, q), "T"}};
+  }
+
+  ProbeFigures probe_figures(const Probe& probe, Figures& figures) const {
+    ProbeFigures result{probe, {}, {}, {}, LimitState::none};
+    const std::string key = alternating_ ? "b_rms" : "b";
+    double largest = -1.0;
+    double largest_peak = 0.0;
+    int on_outline = 0;
+    for (mesh::Point point : probe.points) {
+      result.points.push_back({point, field_figures(point)});
+      const auto& found = result.points.back().figures;
+      const double b = find_figure(found, key)->value;
+      if (b > largest) {
+        largest = b;
+        result.largest_at = point;
+      }
+      if (alternating_) largest_peak = std::max(largest_peak, find_figure(found, "b_peak")->value);
+      on_outline += lies_on_outline(point) ? 1 : 0;
+    }
+    if (on_outline > 0) {
+      figures.notices.push_back(
+          {"probe on an outline",
+           "probe \"" + probe.name + "\" lies on an outline" +
+               (probe.line ? " at " + std::to_string(on_outline) + " of its points" : "") +
+               "; the value is that of the part painted later",
+           false});
+    }
+    if (probe.line) {
+      result.figures.push_back({key + "_max", largest, "T"});
+      if (alternating_) result.figures.push_back({"b_peak_max", largest_peak, "T"});
+    }
+    if (probe.limit) {
+      result.figures.push_back({"limit", *probe.limit, "T"});
+      result.figures.push_back({"of_limit", largest / *probe.limit, "1"});
+      result.limit_state = largest <= *probe.limit ? LimitState::met : LimitState::exceeded;
+    }
+    return result;
+  }
+
+  bool lies_on_outline(mesh::Point point) const {
+    return std::any_of(problem_.outline.pieces.begin(), problem_.outline.pieces.end(),
+                       [&](const mesh::OutlinePiece& piece) {
+                         return distance(piece.curve, point) <= problem_.outline.contact;
+                       });
+  }
+
+  const Solution& solution_;
+  const Problem& problem_;
+  const RecoveredField& field_;
+  const StressBands& bands_;
+  bool alternating_;
+  std::vector<int> visible_;
+};
+
+}  // namespace
+
+const Figure* find_figure(const std::vector<Figure>& figures, const std::string& key) {
+  const auto found = std::find_if(figures.begin(), figures.end(),
+                                  [&](const Figure& figure) { return figure.key == key; });
+  return found == figures.end() ? nullptr : &*found;
+}
+
+std::vector<std::pair<std::string, const Figure*>> addresses(const Figures& figures) {
+  std::vector<std::pair<std::string, const Figure*>> result;
+  const auto add = [&](const std::string& prefix, const std::vector<Figure>& list) {
+    for (const Figure& figure : list) result.emplace_back(prefix + figure.key, &figure);
+  };
+  const auto add_entries = [&](const std::string& kind, const std::vector<Entry>& entries) {
+    for (const Entry& entry : entries) {
+      add(kind + "/" + entry.name + "/", entry.figures);
+      for (const Entry& piece : entry.pieces) {
+        add(kind + "/" + entry.name + "/pieces/" + piece.name + "/", piece.figures);
+      }
+    }
+  };
+  add_entries("bars", figures.bars);
+  add_entries("walls", figures.walls);
+  add_entries("bodies", figures.bodies);
+  add_entries("loops", figures.loops);
+  add_entries("circuits", figures.circuits);
+  add("", figures.energy);
+  for (const ProbeFigures& probe : figures.probes) {
+    const std::string prefix = "probes/" + probe.probe.name + "/";
+    if (!probe.probe.line) add(prefix, probe.points.front().figures);
+    add(prefix, probe.figures);
+  }
+  for (const Clearance& clearance : figures.clearances) {
+    result.emplace_back(
+        "clearances/" + clearance.between[0] + "-" + clearance.between[1] + "/gap", &clearance.gap);
+  }
+  return result;
+}
+
+LimitState limits_of(const Figures& figures) {
+  LimitState worst = LimitState::none;
+  const auto rank = [](LimitState state) {
+    switch (state) {
+      case LimitState::none: return 0;
+      case LimitState::met: return 1;
+      case LimitState::undecided: return 2;
+      case LimitState::exceeded: return 3;
+    }
+    return 0;
+  };
+  for (const ProbeFigures& probe : figures.probes) {
+    if (rank(probe.limit_state) > rank(worst)) worst = probe.limit_state;
+  }
+  return worst;
+}
+
+Figures figures_of(const Solution& solution, const RecoveredField& field, const StressBands& bands,
+                   const std::vector<Probe>& probes, const std::vector<Circuit>& circuits) {
+  const Collector collector(solution, field, bands);
+  Figures figures;
+  collector.parts(figures);
+  collector.loops(figures);
+  collector.circuits(figures, circuits);
+  collector.energy(figures);
+  collector.probes(figures, probes);
+  collector.clearances(figures);
+  return figures;
+}
+
+}  // namespace barwall::solver

@@ -1,0 +1,98 @@
+#pragma once
+
+#include <array>
+#include <complex>
+#include <limits>
+#include <optional>
+#include <string>
+#include <vector>
+
+#include "solver/flux_density.hpp"
+#include "solver/force.hpp"
+#include "solver/magnetostatics.hpp"
+
+namespace barwall::solver {
+
+inline constexpr double not_given = std::numeric_limits<double>::quiet_NaN();
+
+/// One number of the results. NaN stands for "not given" in `value` and `plus_minus`.
+struct Figure {
+  std::string key;   ///< last part of its address, such as "force_x"
+  double value = not_given;
+  std::string unit;  ///< SI
+  double plus_minus = not_given;  ///< numerical uncertainty, 95 %
+};
+
+/// A named group of figures: a bar, a piece, a wall, a body, a loop, a circuit.
+struct Entry {
+  std::string name;  ///< a body's and a circuit's: its parts' names joined by "+"
+  std::vector<std::string> parts;  ///< bodies and circuits: the parts' names
+  std::vector<Figure> figures;
+  std::vector<Entry> pieces;          ///< of a bar with several
+  std::complex<double> current = 0.0; ///< of a bar [A]; r.m.s. phasor with a frequency
+};
+
+/// A place where the field is wanted: one point, or the points of a line.
+struct Probe {
+  std::string name;
+  std::vector<mesh::Point> points;  ///< [m]
+  bool line = false;
+  std::optional<double> limit;  ///< on |B| [T]; r.m.s. with a frequency
+  std::string limit_from;
+};
+
+enum class LimitState { none, met, exceeded, undecided };
+
+struct ProbePoint {
+  mesh::Point at;
+  std::vector<Figure> figures;
+};
+
+struct ProbeFigures {
+  Probe probe;
+  std::vector<ProbePoint> points;  ///< as many as the probe has
+  std::vector<Figure> figures;     ///< of a line: the largest values, of_limit; of a point: of_limit
+  mesh::Point largest_at;          ///< of a line: where |B| (r.m.s. with a frequency) is largest
+  LimitState limit_state = LimitState::none;
+};
+
+struct Clearance {
+  std::array<std::string, 2> between;
+  Figure gap;
+};
+
+/// Something the user should know of that is no failure of the numbers.
+struct Notice {
+  std::string name;
+  std::string detail;
+  bool indicative = false;  ///< the model fits the thing only roughly because of this
+};
+
+/// All numbers of a solution, in the order of the case file.
+struct Figures {
+  std::vector<Entry> bars;
+  std::vector<Entry> walls;
+  std::vector<Entry> bodies;  ///< of several parts in contact
+  std::vector<Entry> loops;
+  std::vector<Entry> circuits;
+  std::vector<Figure> energy;
+  std::vector<ProbeFigures> probes;
+  std::vector<Clearance> clearances;
+  std::vector<Notice> notices;
+};
+
+/// A figure by key, or nullptr.
+const Figure* find_figure(const std::vector<Figure>& figures, const std::string& key);
+
+/// Every figure with its address, in order: "bars/L2/force_x", "bars/N/pieces/N.1/force_x",
+/// "loops/L1-L2/inductance", "energy", "probes/sensor/b", "clearances/L1-L2/gap".
+std::vector<std::pair<std::string, const Figure*>> addresses(const Figures& figures);
+
+/// The worst of the probes' limit states: exceeded, undecided, met, none.
+LimitState limits_of(const Figures& figures);
+
+Figures figures_of(const Solution& solution, const RecoveredField& field,
+                   const StressBands& bands, const std::vector<Probe>& probes,
+                   const std::vector<Circuit>& circuits);
+
+}  // namespace barwall::solver
