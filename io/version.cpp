@@ -1,0 +1,7 @@
+#include "io/version.hpp"
+
+namespace barwall::io {
+
+const char* version() { return BARWALL_VERSION; }
+
+}  // namespace barwall::io
