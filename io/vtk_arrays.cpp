@@ -4,6 +4,7 @@
 #include <vtkDataSet.h>
 #include <vtkDoubleArray.h>
 #include <vtkErrorCode.h>
+#include <vtkExecutive.h>
 #include <vtkFieldData.h>
 #include <vtkNew.h>
 #include <vtkPolyData.h>
@@ -37,6 +38,7 @@ public:
 void write_with(vtkXMLWriter* writer, vtkDataObject* data, const std::filesystem::path& file) {
   vtkNew<Complaints> complaints;
   writer->AddObserver(vtkCommand::ErrorEvent, complaints);
+  writer->GetExecutive()->AddObserver(vtkCommand::ErrorEvent, complaints);
   writer->SetFileName(file.c_str());
   writer->SetInputDataObject(data);
   // Base64 throughout, so that the file is valid XML.

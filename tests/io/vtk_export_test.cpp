@@ -61,7 +61,8 @@ TEST_CASE("A VTK file that cannot be written whole is an error", "[vtk]") {
       INFO(name);
       const test::NewFolder full;
       std::filesystem::create_symlink("/dev/full", full.path / name);
-      CHECK_THROWS_AS(write_vtk(results, full.path), io::WriteError);
+      CHECK_THROWS_WITH(write_vtk(results, full.path),
+                        Catch::Contains(name) && Catch::Contains("space"));
     }
   }
 }

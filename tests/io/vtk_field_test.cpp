@@ -111,7 +111,7 @@ TEST_CASE("field.vtu covers three section sizes about the section and all probes
   for (std::size_t c = 0; c < file.cells.size(); ++c) {
     inside.insert(sorted_corners(corners_of(file, c)));
   }
-  CHECK(inside.size() < 0.95 * grid.triangle_count());
+  CHECK(static_cast<double>(inside.size()) < 0.95 * grid.triangle_count());
   std::vector<Point> wanted{box.low, box.high, {box.low.x, box.high.y}, {box.high.x, box.low.y}};
   for (const auto& probe : results.figures.probes) {
     wanted.insert(wanted.end(), probe.probe.points.begin(), probe.probe.points.end());
@@ -165,7 +165,7 @@ TEST_CASE("B at a point of field.vtu is what a probe there reports", "[vtk]") {
     if (results.field->place(results.field->node_of_place(places[k]), 0) != places[k]) {
       ++on_outlines;
     }
-    probes.push_back({"p" + std::to_string(k), {at}, false, {}, {}});
+    probes.push_back({std::to_string(k), {at}, false, {}, {}});
     in_file.push_back(file.point_data.numbers.at("B_T").point(k));
   }
   REQUIRE(probes.size() > 50);
@@ -231,8 +231,8 @@ TEST_CASE("Cells hold their part, permeability, current density and the scheme's
     area[k] += triangle_area(p);
     current[k] += density.at(c) * triangle_area(p);
     CHECK(mu_r.at(c) == Approx(k == 3 ? 200.0 : 1.0).epsilon(1e-12));
-    b.push_back(
-        cell_flux_density(grid, known.at(sorted_corners(p)), results.solution->potential.col(0)));
+    b.push_back(solver::cell_flux_density(grid, known.at(sorted_corners(p)),
+                                          results.solution->potential.col(0)));
   }
   CHECK(compared(file.cell_data.numbers.at("B_cell_T"), b) == "same");
   CHECK(area[1] == Approx(320e-6).epsilon(1e-9));
@@ -247,9 +247,9 @@ TEST_CASE("Cells hold their part, permeability, current density and the scheme's
   CHECK(current[3] == 0.0);
   CHECK(current[4] == 0.0);
   // Nothing but air lies in the far file.
-  for (const double value : far_file(results).cell_data.numbers.at("part").values) {
-    REQUIRE(value == 0.0);
-  }
+  const VtkFile far = far_file(results);
+  CHECK(compared(far.cell_data.numbers.at("part"), 1, std::vector<double>(far.cells.size())) ==
+        "same");
 }
 
 TEST_CASE("At a steel outline tangential B jumps by mu_r, and normal B and H stay", "[vtk]") {
