@@ -2,6 +2,8 @@
 
 namespace barwall::io {
 
-const char* version() { return BARWALL_VERSION; }
+const char* version() {
+  return BARWALL_VERSION;
+}
 
 }  // namespace barwall::io

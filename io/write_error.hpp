@@ -7,13 +7,13 @@ namespace barwall::io {
 
 /// Results that could not be written: no room, no permission. Nothing half-written is left.
 class WriteError : public std::runtime_error {
- public:
+public:
   using std::runtime_error::runtime_error;
 };
 
 /// A run that was asked to stop while it wrote its results.
 class Stopped : public WriteError {
- public:
+public:
   using WriteError::WriteError;
 };
 
