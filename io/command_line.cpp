@@ -12,6 +12,7 @@
 #include <new>
 
 #include "io/input_error.hpp"
+#include "io/plain_table.hpp"
 #include "io/progress.hpp"
 #include "io/results.hpp"
 #include "io/results_files.hpp"
@@ -192,10 +193,16 @@ int run_program(int argc, char** argv) {
       "verify", "Without a case, the built-in accuracy ladder; with one, its checks alone");
   CLI::Option* verify_file = verify->add_option("CASE", request.file, "The case file (.toml)");
   add_settings(*verify, request);
+  for (CLI::App* command : {solve, draw, verify}) {
+    command->footer("Every command takes --quiet, --threads N and --version, too.");
+  }
   try {
     app.parse(argc, argv);
   } catch (const CLI::ParseError& error) {
-    return app.exit(error) == 0 ? 0 : 2;
+    if (error.get_exit_code() == 0) return app.exit(error);  // help or version
+    fmt::print(stderr, "barwall: {}; barwall --help shows the commands and their options\n",
+               error.what());
+    return 2;
   }
   if (request.threads > 0) omp_set_num_threads(request.threads);
   return guarded([&] {

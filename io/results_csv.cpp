@@ -59,7 +59,7 @@ std::string figures_csv(const Results& results) {
     const auto found = limits.find(address);
     text += row(address, *figure, found == limits.end() ? Limit{} : found->second);
   }
-  for (const verify::Check& check : results.checks) {
+  for (const verify::Check& check : tidy(results.checks)) {
     text += row("checks/" + check.name + "/measured", {"measured", check.measured, check.unit},
                 {check.limit, check.measured / check.limit});
     text += row("checks/" + check.name + "/limit", {"limit", check.limit, check.unit});

@@ -167,7 +167,7 @@ std::string figures_json(const Results& results) {
     add_figures(entry, {clearance.gap});
     json["clearances"].push_back(std::move(entry));
   }
-  json["checks"] = checks_json(results.checks);
+  json["checks"] = checks_json(tidy(results.checks));
   json["notices"] = Json::array();
   for (const solver::Notice& notice : figures.notices) {
     json["notices"].push_back({{"name", notice.name}, {"detail", notice.detail}});

@@ -13,7 +13,7 @@
 namespace barwall::io {
 namespace {
 
-constexpr int name_width = 28;
+constexpr int name_width = 26;
 constexpr std::size_t most_rows = 12;
 constexpr double degree = std::numbers::pi / 180.0;
 
@@ -42,6 +42,16 @@ std::string more_rows(std::size_t all) {
 std::string place_text(mesh::Point at) {
   const auto shown = [](double mm) { return to_ten_digits(std::round(mm * 10.0) / 10.0); };
   return fmt::format("({}, {}) mm", number_text(shown(1e3 * at.x)), number_text(shown(1e3 * at.y)));
+}
+
+std::string percent_text(double share) {
+  const double percent = 100.0 * share;
+  return percent >= 999.5 ? fmt::format("{:.0f} %", percent) : fmt::format("{:.3g} %", percent);
+}
+
+/// A limit as the case file gives it.
+std::string limit_text(double tesla) {
+  return fmt::format("{:g} µT", to_ten_digits(1e6 * tesla));
 }
 
 /// A vector's size and direction in two cells.
@@ -118,23 +128,22 @@ public:
       return probe->limit_state == solver::LimitState::exceeded ||
              probe->limit_state == solver::LimitState::undecided;
     });
-    PlainTable table("lrlrl");
+    PlainTable table("lrlrrll");
     std::string sources;
     for (std::size_t k = 0; k < std::min(order.size(), most_rows); ++k) {
       const solver::ProbeFigures& probe = *order[k];
       const std::string key = alternating_ ? "b_rms" : "b";
+      const bool line = probe.probe.line;
+      const bool limited = probe.limit_state != solver::LimitState::none;
       std::vector<std::string> cells = {name_of(probe.probe.name)};
-      if (probe.probe.line) {
-        cells.push_back(text_of(probe.figures, (key + "_max").c_str()));
-        cells.push_back("largest, at " + place_text(probe.largest_at));
-      } else {
-        cells.push_back(text_of(probe.points.front().figures, key.c_str()));
-        cells.push_back("at " + place_text(probe.points.front().at));
-      }
-      if (probe.limit_state != solver::LimitState::none) {
-        cells.push_back(fmt::format("{:.3g} %", 100.0 * value_of(probe.figures, "of_limit")));
-        cells.push_back(fmt::format("of {}, {}", text_of(probe.figures, "limit"),
-                                    state_text(probe.limit_state)));
+      cells.push_back(line ? text_of(probe.figures, (key + "_max").c_str())
+                           : text_of(probe.points.front().figures, key.c_str()));
+      cells.push_back(state_text(probe.limit_state));
+      cells.push_back(limited ? percent_text(value_of(probe.figures, "of_limit")) : "");
+      cells.push_back(limited ? "of " + limit_text(value_of(probe.figures, "limit")) : "");
+      cells.push_back(line ? "largest," : "");
+      cells.push_back("at " + place_text(line ? probe.largest_at : probe.points.front().at));
+      if (limited) {
         const std::string source = "limit from: " + probe.probe.limit_from;
         if (sources.find(source + "\n") == std::string::npos) sources += source + "\n";
       }
@@ -231,7 +240,7 @@ private:
 };
 
 std::string check_value(double value, const std::string& unit) {
-  return fmt::format("{:.2g}{}", value, unit == "1" ? "" : " " + unit);
+  return fmt::format("{:.3g}{}", value, unit == "1" ? "" : " " + unit);
 }
 
 }  // namespace
@@ -240,7 +249,7 @@ std::string checks_table(const Results& results, bool colour) {
   if (results.checks.empty()) return "  no check was made\n";
   PlainTable table("llrl");
   std::string details;
-  for (const verify::Check& check : results.checks) {
+  for (const verify::Check& check : tidy(results.checks)) {
     table.add({check.passed ? "passed" : red("FAILED", colour), check.name,
                check_value(check.measured, check.unit),
                "limit " + check_value(check.limit, check.unit)});

@@ -4,7 +4,6 @@
 
 #include <algorithm>
 #include <cmath>
-#include <cstdio>
 #include <cstdlib>
 
 namespace barwall::io {
@@ -64,12 +63,14 @@ void tidy_entries(std::vector<solver::Entry>& entries, const Floors& floors) {
 
 }  // namespace
 
-double to_ten_digits(double value) {
+double to_digits(double value, int digits) {
   if (!std::isfinite(value)) return solver::not_given;
-  char text[32];
-  std::snprintf(text, sizeof text, "%.9e", value);
-  const double rounded = std::strtod(text, nullptr);
+  const double rounded = std::strtod(fmt::format("{:.{}e}", value, digits - 1).c_str(), nullptr);
   return rounded == 0.0 ? 0.0 : rounded;
+}
+
+double to_ten_digits(double value) {
+  return to_digits(value, 10);
 }
 
 std::string number_text(double value) {
@@ -98,6 +99,13 @@ solver::Figures tidy(solver::Figures figures) {
     clearance.gap.value = to_ten_digits(clearance.gap.value);
   }
   return figures;
+}
+
+std::vector<verify::Check> tidy(std::vector<verify::Check> checks) {
+  for (verify::Check& check : checks) {
+    check.measured = check.measured < 1e-6 * check.limit ? 0.0 : to_digits(check.measured, 4);
+  }
+  return checks;
 }
 
 }  // namespace barwall::io
