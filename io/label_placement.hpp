@@ -1,0 +1,50 @@
+#pragma once
+
+#include <array>
+#include <optional>
+#include <vector>
+
+#include "io/canvas.hpp"
+
+namespace barwall::io {
+
+/// True when the two boxes come closer than `gap`.
+bool close(const PageBox& a, const PageBox& b, double gap);
+
+/// Finds free places for labels on a page, each in turn: never on another label, a mark or an
+/// arrow, and rather not on an outline.
+class LabelPlacement {
+ public:
+  /// \param bounds labels stay within it
+  explicit LabelPlacement(const PageBox& bounds) : bounds_(bounds) {}
+
+  /// Nothing may be put here.
+  void block(const PageBox& box) { blocked_.push_back(box); }
+  /// The same along a line.
+  void block_line(PagePoint from, PagePoint to, double half_width);
+  /// Better not here.
+  void avoid_line(const std::vector<PagePoint>& points);
+
+  struct Label {
+    PageBox box;
+    /// From the label to its part, where it does not lie beside or in it.
+    std::optional<std::array<PagePoint, 2>> leader;
+  };
+
+  /// A place for a label of width x height: within `about` if `within` and it fits, else beside
+  /// it, else further off. Blocks the place found.
+  /// \param edge points of the part's outline, from which a leader may start
+  std::optional<Label> place(double width, double height, const PageBox& about, bool within,
+                             const std::vector<PagePoint>& edge);
+
+ private:
+  bool free(const PageBox& box) const;
+  bool crosses_blocked(PagePoint from, PagePoint to) const;
+  double disturbance(const PageBox& box) const;
+
+  PageBox bounds_;
+  std::vector<PageBox> blocked_;
+  std::vector<PagePoint> avoided_;
+};
+
+}  // namespace barwall::io
