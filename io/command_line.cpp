@@ -24,6 +24,7 @@ int run_program(int argc, char** argv) {
     for (const auto& [address, figure] : addresses(results.figures)) {
       fmt::print("{} {:.6g} {}\n", address, figure->value, figure->unit);
     }
+    for (const auto& check : results.checks) fmt::print("{:20} {:.3e} <= {:g} {} {}\n", check.name, check.measured, check.limit, check.passed, check.detail);
     for (const auto& [stage, seconds] : results.stages) fmt::print("{} {:.3f} s\n", stage, seconds);
     return results.exit_code();
   } catch (const InputError& error) {

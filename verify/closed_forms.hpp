@@ -10,5 +10,6 @@
 #include "verify/pipe_series.hpp"
 #include "verify/round_conductor.hpp"
 #include "verify/steel_rod.hpp"
+#include "verify/steel_wires.hpp"
 #include "verify/three_phase_line.hpp"
 #include "verify/uniform_field.hpp"

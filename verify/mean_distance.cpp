@@ -3,7 +3,6 @@
 #include <algorithm>
 #include <boost/multiprecision/cpp_bin_float.hpp>
 #include <cmath>
-#include <numbers>
 #include <stdexcept>
 
 #include "verify/complex_field.hpp"

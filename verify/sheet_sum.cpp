@@ -5,12 +5,13 @@
 
 #include "verify/complex_field.hpp"
 
-// The inner loop is compiled for several instruction sets; the loader takes the best one (it
+// The inner loop is compiled for several instruction sets; the loader takes the best one that
+// the processor has, whoever made it: levels of features, not names of processors (it
 // chooses before an address sanitizer is up, so not together with one).
 #if defined(__x86_64__) && defined(__GNUC__) && !defined(__clang__) && \
     !defined(__SANITIZE_ADDRESS__)
 #define BARWALL_BEST_INSTRUCTIONS \
-  __attribute__((target_clones("default", "arch=haswell", "arch=skylake-avx512")))
+  __attribute__((target_clones("default", "arch=x86-64-v3", "arch=x86-64-v4")))
 #else
 #define BARWALL_BEST_INSTRUCTIONS
 #endif

@@ -6,6 +6,7 @@
 #include <stdexcept>
 
 #include "verify/complex_field.hpp"
+#include "verify/filament.hpp"
 #include "verify/round_conductor.hpp"
 
 namespace barwall::verify {

@@ -1,9 +1,9 @@
 #pragma once
 
+#include <cstddef>
 #include <span>
 
 #include "mesh/point.hpp"
-#include "verify/filament.hpp"
 #include "verify/round_bar.hpp"
 
 namespace barwall::verify {

@@ -26,9 +26,7 @@ const std::vector<Shape> shapes{Rectangle{{0.01, 0.02}, 0.01, 0.1, turn}, Round{
                                 Tube{{0.01, 0.02}, 0.06, 0.005},
                                 Frame{{0.01, 0.02}, 0.08, 0.06, 0.004, turn}, angle_bar};
 
-double size_of(const Shape&) {
-  return 0.06;
-}
+const double size = 0.06;  // half-sizes of the shapes are about this [m]
 
 Point curl(const Shape& shape, Point at, double h) {
   const auto a = [&](double x, double y) { return potential_of(shape, 1000.0, at + Point{x, y}); };
@@ -99,7 +97,7 @@ TEST_CASE("the edge sum and the far series of a polygon meet without a step") {
   for (const Shape& shape : shapes) {
     const auto filaments = filaments_of(shape, 1000.0, 16);
     for (double ratio = 2.5; ratio < 2e3; ratio *= 1.11) {
-      const Point at = Point{0.012, 0.021} + turned({ratio * size_of(shape), 0.0}, ratio);
+      const Point at = Point{0.012, 0.021} + turned({ratio * size, 0.0}, ratio);
       const Point sum = field_of_filaments(filaments, at);
       CAPTURE(shape.index(), ratio);
       CHECK(distance(field_of(shape, 1000.0, at), sum) < 1e-11 * norm(sum));
