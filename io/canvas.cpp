@@ -130,11 +130,12 @@ void Canvas::text(PagePoint at, const std::string& text, const TextStyle& style)
   cairo_save(cairo);
   cairo_translate(cairo, at.x, at.y);
   if (style.upwards) cairo_rotate(cairo, -1.5707963267948966);
-  if (style.halo > 0.0) {
-    cairo_move_to(cairo, shift, 0.0);
-    cairo_text_path(cairo, shown.c_str());
-    state_->pen({{1.0, 1.0, 1.0, 0.9}, style.halo, {}});
-    cairo_stroke(cairo);
+  if (style.backing > 0.0) {
+    const double beyond = style.backing;
+    cairo_rectangle(cairo, shift - beyond, -0.84 * style.size - beyond,
+                    text_width(shown, style) + 2.0 * beyond, 1.12 * style.size + 2.0 * beyond);
+    state_->colour({1.0, 1.0, 1.0, 0.85});
+    cairo_fill(cairo);
   }
   cairo_move_to(cairo, shift, 0.0);
   state_->colour(style.colour);

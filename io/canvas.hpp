@@ -29,7 +29,7 @@ struct TextStyle {
   Align align = Align::start;
   bool bold = false;
   Colour colour{0.1, 0.1, 0.12, 1.0};
-  double halo = 0.0;           ///< width of the white rim round the letters
+  double backing = 0.0;        ///< a white box behind the text, so far beyond it
   bool upwards = false;        ///< turned by a quarter, to be read from the right
 };
 

@@ -51,7 +51,7 @@ mesh::Point pushed_point(const mesh::Outline& outline, const std::vector<int>& p
   mesh::Point farthest = start;
   for (const mesh::Curve& curve : curves) {
     for (double t : crossings(curve, start, end)) {
-      const mesh::Point hit = at(curve, t);
+      const mesh::Point hit = between(start, end, t);
       if (distance(start, hit) > distance(start, farthest)) farthest = hit;
     }
   }
@@ -69,10 +69,10 @@ std::vector<ForceArrow> force_arrows(const Results& results) {
     return static_cast<int>(found - parts.begin());
   };
   for (const solver::Entry& bar : results.figures.bars) {
-    const mesh::Point force = force_of(bar);
     const auto k = static_cast<std::size_t>(index_of(bar.name));
-    if (norm(force) > 0.0) arrows.push_back({bar.name, centroid_of(parts[k]), force});
+    arrows.push_back({bar.name, centroid_of(parts[k]), force_of(bar)});
   }
+  std::erase_if(arrows, [](const ForceArrow& arrow) { return !(norm(arrow.force) > 0.0); });
   const auto add_pushed = [&](const solver::Entry& entry, const std::vector<std::string>& names) {
     const mesh::Point force = force_of(entry);
     if (!(norm(force) > 0.0)) return;
@@ -85,11 +85,18 @@ std::vector<ForceArrow> force_arrows(const Results& results) {
   return arrows;
 }
 
-ArrowScale arrow_scale(const std::vector<ForceArrow>& arrows, double longest_pixels) {
-  constexpr double shortest_pixels = 9.0;
+ArrowScale arrow_scale(const std::vector<ForceArrow>& arrows, double pixels_per_metre) {
+  constexpr double shortest_pixels = 14.0;
   double largest = 0.0;
-  for (const ForceArrow& arrow : arrows) largest = std::max(largest, norm(arrow.force));
+  double apart = HUGE_VAL;  // least distance between two arrows' starts
+  for (std::size_t k = 0; k < arrows.size(); ++k) {
+    largest = std::max(largest, norm(arrows[k].force));
+    for (std::size_t m = 0; m < k; ++m) {
+      apart = std::min(apart, distance(arrows[k].at, arrows[m].at));
+    }
+  }
   if (!(largest > 0.0)) return {};
+  const double longest_pixels = std::clamp(0.75 * apart * pixels_per_metre, 55.0, 120.0);
   ArrowScale scale;
   scale.pixels = longest_pixels / largest;
   scale.reference = round_down_125(largest);

@@ -16,8 +16,8 @@ struct ForceArrow {
   mesh::Point force;
 };
 
-/// The forces on bars, walls and bodies of parts in contact; with a frequency each one's peak,
-/// in its direction. A bar's starts at its centroid, another's at the outline it pushes on.
+/// The forces on bars, walls and bodies of parts in contact; with a frequency each one's peak, in
+/// its direction. A bar's starts at its centroid, another's at the outline that it pushes on.
 std::vector<ForceArrow> force_arrows(const Results& results);
 
 /// Pixels per N/m.
@@ -26,7 +26,7 @@ struct ArrowScale {
   double reference = 0.0;  ///< a round force for the scale's own arrow [N/m]; 0: no forces
   double least = 0.0;      ///< smaller forces get no arrow [N/m]
 };
-ArrowScale arrow_scale(const std::vector<ForceArrow>& arrows, double longest_pixels);
+ArrowScale arrow_scale(const std::vector<ForceArrow>& arrows, double pixels_per_metre);
 
 void draw_arrow(Canvas& canvas, PagePoint from, PagePoint to);
 

@@ -8,6 +8,7 @@ namespace barwall::io {
 namespace {
 
 constexpr double label_gap = 4.0;    ///< between labels, and from label to part
+constexpr double beside = 6.0;       ///< a label this near to its part is clearly its own
 constexpr double leader_from = 14.0; ///< a label further than this from its part gets a leader
 constexpr double sample_step = 6.0;
 
@@ -91,7 +92,7 @@ void LabelPlacement::block_line(PagePoint from, PagePoint to, double half_width)
   const PagePoint half{half_width, half_width};
   for (int k = 0; k <= pieces; ++k) {
     const PagePoint p = between(from, to, static_cast<double>(k) / pieces);
-    blocked_.push_back({p - half, p + half});
+    blocked_lines_.push_back({p - half, p + half});
   }
 }
 
@@ -110,13 +111,20 @@ bool LabelPlacement::free(const PageBox& box) const {
       box.high.y > bounds_.high.y) {
     return false;
   }
-  return std::none_of(blocked_.begin(), blocked_.end(),
-                      [&](const PageBox& other) { return close(box, other, label_gap); });
+  const auto on_box = [&](const PageBox& other) { return close(box, other, label_gap); };
+  return std::none_of(blocked_.begin(), blocked_.end(), on_box) &&
+         std::none_of(blocked_lines_.begin(), blocked_lines_.end(), on_box);
 }
 
-bool LabelPlacement::crosses_blocked(PagePoint from, PagePoint to) const {
-  return std::any_of(blocked_.begin(), blocked_.end(),
-                     [&](const PageBox& box) { return segment_meets(box, from, to); });
+bool LabelPlacement::nearer_to_another(const PageBox& box, double own,
+                                       const std::vector<PagePoint>& edge) const {
+  // Points of the part's own outline are among those to avoid.
+  constexpr double same = 0.51 * sample_step;
+  return std::any_of(avoided_.begin(), avoided_.end(), [&](PagePoint p) {
+    if (distance(nearest_in(box, p), p) >= own - 1.0) return false;
+    return std::none_of(edge.begin(), edge.end(),
+                        [&](PagePoint q) { return distance(p, q) <= same; });
+  });
 }
 
 double LabelPlacement::disturbance(const PageBox& box) const {
@@ -143,9 +151,15 @@ std::optional<LabelPlacement::Label> LabelPlacement::place(double width, double 
           edge.begin(), edge.end(), [&](PagePoint a, PagePoint b) { return off(a) < off(b); });
       const PagePoint start = nearest_in(candidate.box, nearest);
       const bool inside = about.contains(candidate.box.low) && about.contains(candidate.box.high);
-      if (off(nearest) > leader_from && !(within && inside)) {
-        if (crosses_blocked(start, nearest)) continue;
-        cost += 0.01 * off(nearest);
+      const bool within_part = within && inside;
+      const double own = off(nearest);
+      const bool led = !within_part && own > beside &&
+                       (own > leader_from || nearer_to_another(candidate.box, own, edge));
+      if (led) {
+        const auto crossed = [&](const PageBox& box) { return segment_meets(box, start, nearest); };
+        if (std::any_of(blocked_.begin(), blocked_.end(), crossed)) continue;
+        if (std::any_of(blocked_lines_.begin(), blocked_lines_.end(), crossed)) cost += 1.5;
+        cost += 1.5 + 0.01 * own;
         label.leader = {start, nearest};
       }
     }

@@ -20,9 +20,9 @@ class LabelPlacement {
 
   /// Nothing may be put here.
   void block(const PageBox& box) { blocked_.push_back(box); }
-  /// The same along a line.
+  /// No label may lie on this line; leaders better do not cross it.
   void block_line(PagePoint from, PagePoint to, double half_width);
-  /// Better not here.
+  /// An outline that labels better do not lie on.
   void avoid_line(const std::vector<PagePoint>& points);
 
   struct Label {
@@ -39,11 +39,13 @@ class LabelPlacement {
 
  private:
   bool free(const PageBox& box) const;
-  bool crosses_blocked(PagePoint from, PagePoint to) const;
   double disturbance(const PageBox& box) const;
+  /// Another outline comes nearer to the box than `own` pixels.
+  bool nearer_to_another(const PageBox& box, double own, const std::vector<PagePoint>& edge) const;
 
   PageBox bounds_;
   std::vector<PageBox> blocked_;
+  std::vector<PageBox> blocked_lines_;
   std::vector<PagePoint> avoided_;
 };
 

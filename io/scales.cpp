@@ -69,7 +69,8 @@ std::string plain_number(double value) {
     }
   }
   if (text == "-0") return "0";
-  return text[0] == '-' ? "\u2212" + text.substr(1) : text;
+  if (text[0] == '-') text.replace(0, 1, "\u2212");
+  return text;
 }
 
 double LogScale::position(double value_in) const {

@@ -70,7 +70,7 @@ std::vector<Named> named_pieces(const solver::Problem& problem, const Frame& fra
       Named& named = found[side];
       named.part = side.part;
       named.name = part.name;
-      if (bar && part.pieces.size() > 1) named.name += "." + std::to_string(side.piece + 1);
+      if (bar && part.pieces.size() > 1) named.name.append(1, '.').append(std::to_string(side.piece + 1));
       named.box.include(bounds(piece.curve));
       const int samples = std::clamp(static_cast<int>(length(piece.curve) * frame.scale() / 8.0), 1,
                                      400);
@@ -93,8 +93,9 @@ bool shows(const mesh::Box& box, const mesh::Box& window) {
          window.low.y < box.high.y;
 }
 
-/// True when the part covers every corner of a square about its middle.
+/// True when the part covers the middle and every corner of a square.
 bool covers(const solver::Problem& problem, int part, mesh::Point middle, double half) {
+  if (occupant_at(problem.section, middle).part != part) return false;
   for (double x : {-half, half}) {
     for (double y : {-half, half}) {
       if (occupant_at(problem.section, middle + mesh::Point{x, y}).part != part) return false;
@@ -159,7 +160,8 @@ int draw_names(Canvas& canvas, const solver::Problem& problem, const Frame& fram
                const std::vector<double>& currents, LabelPlacement& labels, double text_size) {
   constexpr double least_radius = 5.0;
   const std::vector<Named> all = named_pieces(problem, frame);
-  const TextStyle style{text_size, Align::start, false, ink, 0.22 * text_size, false};
+  constexpr double backing = 2.0;
+  const TextStyle style{text_size, Align::start, false, ink, 0.0, false};
   for (const Named& named : all) labels.avoid_line(named.edge);
 
   // Signs first: their places are given.
@@ -189,9 +191,9 @@ int draw_names(Canvas& canvas, const solver::Problem& problem, const Frame& fram
     if (!shows(named.box, frame.window)) continue;
     const bool solid = covers(problem, named.part, named.box.centre(), 0.0);
     const double sign = beside[k] > 0.0 ? 2.0 * beside[k] + 0.25 * text_size : 0.0;
-    const double width = canvas.text_width(named.name, style) + sign;
-    const auto label =
-        labels.place(width, text_size, page_box(named.box, frame), solid, named.edge);
+    const double width = canvas.text_width(named.name, style) + sign + 2.0 * backing;
+    const double height = 1.12 * text_size + 2.0 * backing;
+    const auto label = labels.place(width, height, page_box(named.box, frame), solid, named.edge);
     if (!label) {
       ++left_out;
       continue;
@@ -200,9 +202,10 @@ int draw_names(Canvas& canvas, const solver::Problem& problem, const Frame& fram
       canvas.line({(*label->leader)[0], (*label->leader)[1]}, {{1.0, 1.0, 1.0, 0.8}, 3.0, {}});
       canvas.line({(*label->leader)[0], (*label->leader)[1]}, {ink, 1.2, {}});
     }
-    const PagePoint low = label->box.low;
+    canvas.box(label->box, Colour{1.0, 1.0, 1.0, 0.85});
+    const PagePoint low = label->box.low + PagePoint{backing, backing};
     if (sign > 0.0) {
-      draw_current_sign(canvas, {low.x + beside[k], low.y + 0.5 * text_size}, beside[k],
+      draw_current_sign(canvas, {low.x + beside[k], low.y + 0.56 * text_size}, beside[k],
                         currents[static_cast<std::size_t>(named.part)]);
     }
     canvas.text({low.x + sign, low.y + 0.84 * text_size}, named.name, style);
