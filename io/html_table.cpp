@@ -25,8 +25,10 @@ void HtmlTable::row(const std::vector<std::string>& cells) { rows_.push_back(cel
 std::string HtmlTable::html() const {
   if (rows_.empty()) return "";
   std::string text = fmt::format("<table>\n<caption>{}</caption>\n<thead><tr>", escaped(caption_));
-  for (const std::string& heading : headings_) {
-    text += fmt::format("<th scope=\"col\">{}</th>", escaped(heading));
+  for (std::size_t k = 0; k < headings_.size(); ++k) {
+    const bool right = k > 0 && k < rows_.front().size() && number(rows_.front()[k]);
+    text += fmt::format("<th scope=\"col\"{}>{}</th>", right ? " class=\"number\"" : "",
+                        escaped(headings_[k]));
   }
   text += "</tr></thead>\n<tbody>\n";
   for (const auto& cells : rows_) {

@@ -15,8 +15,8 @@ class HtmlTable {
   void row(const std::vector<std::string>& cells);
   bool empty() const { return rows_.empty(); }
 
-  /// The element's text; nothing for a table without rows. Cells that begin with a digit or a
-  /// sign stand to the right.
+  /// The element's text; nothing for a table without rows. Cells that begin with a number
+  /// stand to the right, and so do the headings of those in the first row.
   std::string html() const;
 
  private:

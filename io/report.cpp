@@ -34,13 +34,14 @@ h2 { font-size: 1.2rem; margin: 1.8rem 0 0.5rem; border-bottom: 2px solid #31688
 figure { margin: 1.2rem 0; }
 img { width: 100%; height: auto; }
 figcaption { font-size: 0.9rem; color: #55555c; }
-table { border-collapse: collapse; width: 100%; margin: 0.6rem 0 1.2rem; font-size: 0.88rem; }
+table { border-collapse: collapse; min-width: 45%; max-width: 100%; margin: 0.6rem 0 1.2rem; font-size: 0.88rem; }
 caption { text-align: left; font-weight: bold; padding: 0.2rem 0; }
 th, td { text-align: left; vertical-align: top; padding: 0.22rem 0.5rem;
-         border-bottom: 1px solid #dcdce2; overflow-wrap: anywhere; }
+         border-bottom: 1px solid #dcdce2; overflow-wrap: break-word; }
 thead th { background: #eef2f6; border-bottom: 1px solid #9a9aa4; font-weight: normal; }
-tbody th { font-weight: bold; min-width: 4rem; }
-td.number { text-align: right; white-space: nowrap; font-variant-numeric: tabular-nums; }
+tbody th { font-weight: bold; min-width: 4rem; max-width: 18rem; overflow-wrap: anywhere; }
+.number { text-align: right; }
+td.number { white-space: nowrap; font-variant-numeric: tabular-nums; }
 dt { font-weight: bold; }
 .wide { overflow-x: auto; }
 @media print {
@@ -56,7 +57,7 @@ dt { font-weight: bold; }
 
 std::string state_box(const std::string& what, const std::string& state, const std::string& means,
                       bool bad) {
-  return fmt::format("<div{}><dt>{}</dt><dd><strong>{}</strong><br>{}</dd></div>\n",
+  return fmt::format("<div{}><dt>{}</dt><dd><strong>{}</strong><br/>{}</dd></div>\n",
                      bad ? " class=\"bad\"" : "", what, escaped(state), escaped(means));
 }
 
@@ -128,7 +129,7 @@ std::string file_bytes(const std::filesystem::path& file) {
 
 std::string shown(const solver::Figure& figure) {
   if (!std::isfinite(figure.value)) return "-";
-  if (figure.unit == "deg") return fmt::format("{:.1f}°", figure.value);
+  if (figure.unit == "deg") return fmt::format("{:.1f}°", std::round(10.0 * figure.value) / 10.0 + 0.0);
   if (figure.unit == "1") return fmt::format("{:.4g} %", 100.0 * figure.value);
   return quantity_text(figure);
 }
@@ -136,17 +137,17 @@ std::string shown(const solver::Figure& figure) {
 std::string report_html(const Results& results, const std::string& picture_png) {
   const std::string title = escaped(results.input.title);
   std::string page = fmt::format(
-      "<!DOCTYPE html>\n<html lang=\"en\">\n<head>\n<meta charset=\"utf-8\">\n"
+      "<!DOCTYPE html>\n<html lang=\"en\">\n<head>\n<meta charset=\"utf-8\"/>\n"
       "<meta http-equiv=\"Content-Security-Policy\" content=\"default-src 'none'; img-src data:; "
-      "style-src 'unsafe-inline'\">\n"
-      "<meta name=\"viewport\" content=\"width=device-width, initial-scale=1\">\n"
+      "style-src 'unsafe-inline'\"/>\n"
+      "<meta name=\"viewport\" content=\"width=device-width, initial-scale=1\"/>\n"
       "<title>{}</title>\n<style>{}</style>\n</head>\n<body>\n<header>\n<h1>{}</h1>\n"
       "<p class=\"of\">Case {}, solved by barwall {}</p>\n</header>\n<main>\n",
       title, style, title, escaped(results.input.name), escaped(version()));
   page += state_boxes(results);
   page += fmt::format(
       "<figure>\n<img alt=\"Section of {} with its magnetic flux density in colours, flux lines, "
-      "forces and names\" src=\"data:image/png;base64,{}\">\n</figure>\n",
+      "forces and names\" src=\"data:image/png;base64,{}\"/>\n</figure>\n",
       title, base64(picture_png));
   const std::string forces = force_tables(results);
   page += section("Forces", forces.empty() ? "" : explanations_of_forces + forces);
