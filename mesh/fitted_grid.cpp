@@ -37,6 +37,9 @@ std::vector<double> lines_along(const AxisFeatures& features, int cells_across,
         spacing, SpacingFunction(features.sharp, {{{fine_low, fine_high, sharp_slope}}, far_slope}));
   }
   std::vector<double> fixed = thinned_lines(features.lines, spacing, merge_fraction);
+  // A section may reach the boundary (at a reach of 1, with its own lines there) or beyond it.
+  const double clear = 1e-9 * (high - low);
+  std::erase_if(fixed, [&](double v) { return v < low + clear || v > high - clear; });
   fixed.insert(fixed.begin(), low);
   fixed.push_back(high);
   return graded_lines(fixed, spacing, cells_across);
