@@ -45,24 +45,23 @@ mesh::Point cell_flux_density(const mesh::FittedGrid& grid, int triangle,
 
 RecoveredField::RecoveredField(const Solution& solution) : solution_(&solution) {
   number_places();
-  const auto patterns = static_cast<std::size_t>(solution.pattern_count());
-  field_.assign(patterns, std::vector<Local>(node_of_place_.size()));
-  std::vector<std::vector<double>> density;
+  field_.assign(static_cast<std::size_t>(solution.pattern_count()),
+                std::vector<Local>(node_of_place_.size()));
+  // mu J of each occupant, a row of load patterns: minus div grad A there.
+  const auto permeability = permeability_by_region(*solution.problem);
+  std::vector<std::vector<double>> source(permeability.size());
   for (const CurrentPattern& pattern : solution.patterns) {
-    density.push_back(density_by_region(*solution.problem, pattern.part_current));
-  }
-  const int regions = static_cast<int>(solution.grid().occupants.size());
-  // Per region, the load patterns' current densities in one row.
-  std::vector<std::vector<double>> by_region(static_cast<std::size_t>(regions));
-  for (std::size_t r = 0; r < by_region.size(); ++r) {
-    for (const auto& d : density) by_region[r].push_back(d[r]);
+    const auto density = density_by_region(*solution.problem, pattern.part_current);
+    for (std::size_t r = 0; r < source.size(); ++r) {
+      source[r].push_back(mu_0 * permeability[r] * density[r]);
+    }
   }
 #pragma omp parallel
   {
     std::vector<int> nodes;
 #pragma omp for schedule(static)
     for (int place = 0; place < place_count(); ++place) {
-      fit_place(place, nodes, by_region[static_cast<std::size_t>(region_of_place(place))]);
+      fit_place(place, nodes, source[static_cast<std::size_t>(region_of_place(place))]);
     }
   }
 }
@@ -106,7 +105,28 @@ std::array<int, 3> RecoveredField::places(int triangle) const {
   return {place(n[0], region), place(n[1], region), place(n[2], region)};
 }
 
-void RecoveredField::gather(int node, int region, int layers, std::vector<int>& nodes) const {
+/// The nodes within two cells of a node, when all cells there belong to one occupant.
+bool RecoveredField::gather_window(int node, int region, std::vector<int>& nodes) const {
+  const mesh::FittedGrid& grid = solution_->grid();
+  const int i = node % grid.columns;
+  const int j = node / grid.columns;
+  if (i < 2 || j < 2 || i > grid.columns - 3 || j > grid.rows - 3) return false;
+  for (int q = j - 2; q < j + 2; ++q) {
+    const auto t = 2 * static_cast<std::size_t>(q * (grid.columns - 1) + i - 2);
+    for (std::size_t k = t; k < t + 8; ++k) {
+      if (grid.region[k] != region) return false;
+    }
+  }
+  nodes.clear();
+  for (int q = j - 2; q <= j + 2; ++q) {
+    for (int p = i - 2; p <= i + 2; ++p) nodes.push_back(grid.node(p, q));
+  }
+  return true;
+}
+
+/// The nodes that can be reached from a node over at most `layers` triangles of one occupant.
+void RecoveredField::gather_layers(int node, int region, int layers,
+                                   std::vector<int>& nodes) const {
   const mesh::FittedGrid& grid = solution_->grid();
   nodes.assign(1, node);
   std::size_t from = 0;
@@ -123,22 +143,20 @@ void RecoveredField::gather(int node, int region, int layers, std::vector<int>& 
 }
 
 void RecoveredField::fit_place(int place, std::vector<int>& nodes,
-                               const std::vector<double>& density) {
+                               const std::vector<double>& source) {
+  constexpr int terms = 7;
+  constexpr std::size_t enough = 20;  // well more nodes than terms
+  using Row = Eigen::Matrix<double, terms, 1>;
   const mesh::FittedGrid& grid = solution_->grid();
   const int node = node_of_place(place);
   const int region = region_of_place(place);
   const mesh::Point origin = grid.nodes[static_cast<std::size_t>(node)];
-  const auto occupant = grid.occupants[static_cast<std::size_t>(region)];
-  const double mu =
-      mu_0 * (occupant.part < 0 ? 1.0
-                                : solution_->problem->materials[static_cast<std::size_t>(occupant.part)]
-                                      .relative_permeability);
-  constexpr std::size_t enough = 8;
-  gather(node, region, 1, nodes);
-  for (int layers = 2; nodes.size() < enough && layers <= 4; ++layers) {
-    gather(node, region, layers, nodes);
+  if (!gather_window(node, region, nodes)) {
+    int layers = 1;
+    do {
+      gather_layers(node, region, ++layers, nodes);
+    } while (nodes.size() < enough && layers < 4);
   }
-  // Scales: mean square distances of the patch along each axis.
   double sx = 0.0;
   double sy = 0.0;
   for (int n : nodes) {
@@ -146,38 +164,46 @@ void RecoveredField::fit_place(int place, std::vector<int>& nodes,
     sx = std::max(sx, std::abs(d.x));
     sy = std::max(sy, std::abs(d.y));
   }
-  if (sx == 0.0 || sy == 0.0) sx = sy = std::max(sx, sy);
-  const double s2 = std::max(sx * sx, sy * sy);
-  // A = a0 + gx x + gy y + p (x2 - y2)/2 + q xy - mu J (x2 + y2)/4
-  const auto patterns = solution_->potential.cols();
-  Eigen::Matrix<double, 5, 5> normal = Eigen::Matrix<double, 5, 5>::Zero();
-  Eigen::Matrix<double, 5, Eigen::Dynamic, 0, 5, 2> right =
-      Eigen::Matrix<double, 5, Eigen::Dynamic, 0, 5, 2>::Zero(5, patterns);
+  const double s = std::max(sx, sy);
+  // A = a0 + gx x + gy y + p (x2 - y2)/2 + q xy + c Re z3 + d Im z3 - mu J (x2 + y2)/4, each term
+  // scaled to the patch, which may be long and narrow.
+  const double narrow = std::min(sx, sy) / s;
+  const double re_scale = sx > sy ? 1.0 : narrow;
+  const double im_scale = sx > sy ? narrow : 1.0;
+  const auto patterns = static_cast<std::size_t>(solution_->potential.cols());
+  Eigen::Matrix<double, terms, terms> normal = Eigen::Matrix<double, terms, terms>::Zero();
+  std::array<Row, 2> right{Row::Zero(), Row::Zero()};
   for (int n : nodes) {
     const mesh::Point d = grid.nodes[static_cast<std::size_t>(n)] - origin;
     const double u = d.x / sx;
     const double v = d.y / sy;
+    const double x = d.x / s;
+    const double y = d.y / s;
     const double root = 1.0 / (0.1 + u * u + v * v);
-    const double weight = root * root;
-    Eigen::Matrix<double, 5, 1> row;
-    row << 1.0, u, v, 0.5 * (d.x * d.x - d.y * d.y) / s2, u * v;
-    normal.noalias() += weight * row * row.transpose();
-    for (Eigen::Index c = 0; c < patterns; ++c) {
-      const double curved =
-          -0.25 * mu * density[static_cast<std::size_t>(c)] * dot(d, d);
-      const double value =
-          solution_->potential(n, c) - solution_->potential(node, c) - curved;
-      right.col(c) += weight * value * row;
+    Row row;
+    row << 1.0, u, v, 0.5 * (x * x - y * y), u * v, (x * x * x - 3.0 * x * y * y) / re_scale,
+        (3.0 * x * x * y - y * y * y) / im_scale;
+    const Row weighted = root * root * row;
+    normal.noalias() += weighted * row.transpose();
+    for (std::size_t c = 0; c < patterns; ++c) {
+      const auto column = static_cast<Eigen::Index>(c);
+      const double value = solution_->potential(n, column) - solution_->potential(node, column) +
+                           0.25 * source[c] * dot(d, d);
+      right[c] += value * weighted;
     }
   }
-  const Eigen::CompleteOrthogonalDecomposition<Eigen::Matrix<double, 5, 5>> solver(normal);
-  for (Eigen::Index c = 0; c < patterns; ++c) {
-    const Eigen::Matrix<double, 5, 1> a = solver.solve(right.col(c));
-    const double half_source = 0.5 * mu * density[static_cast<std::size_t>(c)];
-    const double a_xx = a[3] / s2 - half_source;
-    const double a_yy = -a[3] / s2 - half_source;
+  // In the narrow ends of a part a patch may not tell all terms apart: least-norm then.
+  const Eigen::LDLT<Eigen::Matrix<double, terms, terms>> direct(normal);
+  const auto pivots = direct.vectorD().cwiseAbs();
+  const bool regular = pivots.minCoeff() > 1e-10 * pivots.maxCoeff();
+  for (std::size_t c = 0; c < patterns; ++c) {
+    const Row a = regular ? Row(direct.solve(right[c]))
+                          : Row(normal.completeOrthogonalDecomposition().solve(right[c]));
+    const double half_source = 0.5 * source[c];
+    const double a_xx = a[3] / (s * s) - half_source;
+    const double a_yy = -a[3] / (s * s) - half_source;
     const double a_xy = a[4] / (sx * sy);
-    Local& local = field_[static_cast<std::size_t>(c)][static_cast<std::size_t>(place)];
+    Local& local = field_[c][static_cast<std::size_t>(place)];
     local.b = {a[2] / sy, -a[1] / sx};
     local.b_dx = {a_xy, -a_xx};
     local.b_dy = {a_yy, -a_xy};

@@ -16,9 +16,10 @@ mesh::Point cell_flux_density(const mesh::FittedGrid& grid, int triangle,
 /// The second-order field: A's gradient and second derivatives at every node, once for each
 /// occupant that meets there, never averaged across an outline.
 ///
-/// At each node a quadratic is fitted to A over the neighbouring nodes of the same occupant
-/// (Z. Zhang and A. Naga, SIAM J. Sci. Comput. 26, 2005), bound to -div grad A = mu J where the
-/// permeability is constant.
+/// At each node a polynomial is fitted to A over the nodes of the same occupant within two cells
+/// (recovery by local least squares: Z. Zhang and A. Naga, SIAM J. Sci. Comput. 26, 2005), here
+/// one that satisfies -div grad A = mu J exactly, as A does where the permeability is constant:
+/// the source's own quadratic and the harmonic polynomials up to the third degree.
 class RecoveredField {
  public:
   explicit RecoveredField(const Solution& solution);
@@ -53,8 +54,9 @@ class RecoveredField {
     mesh::Point b_dy;    ///< dB/dy [T/m]
   };
   void number_places();
-  void fit_place(int place, std::vector<int>& nodes, const std::vector<double>& density);
-  void gather(int node, int region, int layers, std::vector<int>& nodes) const;
+  void fit_place(int place, std::vector<int>& nodes, const std::vector<double>& source);
+  bool gather_window(int node, int region, std::vector<int>& nodes) const;
+  void gather_layers(int node, int region, int layers, std::vector<int>& nodes) const;
 
   const Solution* solution_;
   std::vector<int> node_of_place_;
