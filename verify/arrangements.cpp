@@ -33,7 +33,8 @@ void add_wall(Arrangement& arrangement, mesh::Shape shape, double relative_perme
 }
 
 /// The region of comparison: the box round all parts, drawn out by a quarter of its size.
-void set_region(Arrangement& arrangement) {
+void set_region(Arrangement& arrangement, double near) {
+  arrangement.near = near;
   const mesh::Box box = bounds(arrangement.section);
   const mesh::Point margin{0.25 * box.width(), 0.25 * box.height()};
   arrangement.region = {box.low - margin, box.high + margin};
@@ -60,8 +61,7 @@ void set_exact(Arrangement& arrangement, const Steel& steel, const std::vector<R
   // Of all that comes from elsewhere the mean over a disc is the value at its centre; its own
   // current's is less than that by a quarter of mu_0 I / 2 pi.
   const auto mean = [&](const RoundBar& bar) {
-    return potential_of(steel, loop, bar.centre) -
-           0.25 * mu_0_over_2pi * bar.current;
+    return potential_of(steel, loop, bar.centre) - 0.25 * mu_0_over_2pi * bar.current;
   };
   arrangement.loop = {"loop", {0}, {1}};
   arrangement.inductance = mean(loop[0]) - mean(loop[1]);
@@ -79,7 +79,7 @@ void add_force_on_steel(Arrangement& arrangement, int part) {
 Arrangement round_bar_in_air() {
   Arrangement result;
   add_bar(result, mesh::Round{{}, 30 * mm}, 1000.0);
-  set_region(result);
+  set_region(result, 3 * mm);
   result.flux_density = [](mesh::Point at) { return field_of_disc({}, 15 * mm, 1000.0, at); };
   return result;
 }
@@ -88,7 +88,7 @@ Arrangement flat_bar_in_air() {
   Arrangement result;
   const mesh::Rectangle bar{{}, 10 * mm, 60 * mm, 0.0};
   add_bar(result, bar, 1000.0);
-  set_region(result);
+  set_region(result, 1.5 * mm);
   result.flux_density = [bar](mesh::Point at) { return field_of(bar, 1000.0, at); };
   return result;
 }
@@ -99,7 +99,7 @@ Arrangement pair_of_flat_bars() {
   const mesh::Rectangle back{{15 * mm, 0.0}, 10 * mm, 60 * mm, 0.0};
   add_bar(result, go, 1000.0);
   add_bar(result, back, -1000.0);
-  set_region(result);
+  set_region(result, 1.5 * mm);
   result.flux_density = [go, back](mesh::Point at) {
     return field_of(go, 1000.0, at) + field_of(back, -1000.0, at);
   };
@@ -118,11 +118,14 @@ Arrangement bars_before_steel() {
       result, {{{-6 * mm, 25 * mm}, 1000.0, 10 * mm}, {{13 * mm, 55 * mm}, -700.0, 10 * mm}});
   add_wall(result, mesh::Rectangle{{0.0, -0.5 * far}, 2.0 * far, far, 0.0}, permeability);
   // A wall of air makes the section, and with it the grid, as high above the steel as it is deep.
-  result.section.parts.push_back({"air", mesh::Part::Kind::wall,
+  result.section.parts.push_back({"air",
+                                  mesh::Part::Kind::wall,
                                   {mesh::Rectangle{{0.0, 0.5 * far}, 2.0 * far, far, 0.0}},
-                                  true, false});
+                                  true,
+                                  false});
   result.materials.push_back({});
   result.currents.push_back(0.0);
+  result.near = 2 * mm;
   result.region = {{-60 * mm, -40 * mm}, {60 * mm, 90 * mm}};
   const HalfSpace steel{{}, {0.0, 1.0}, permeability};
   set_exact(result, steel, bars);
@@ -138,7 +141,7 @@ Arrangement bars_in_pipe() {
                                             {{3 * mm, 27 * mm}, 300.0, 8 * mm}});
   const Pipe pipe{60 * mm, 65 * mm, 200.0};
   add_wall(result, mesh::Tube{{}, 130 * mm, 5 * mm}, pipe.relative_permeability);
-  set_region(result);
+  set_region(result, 1 * mm);
   set_exact(result, pipe, bars);
   add_force_on_steel(result, 3);
   return result;
@@ -150,7 +153,7 @@ Arrangement bars_beside_rod() {
       result, {{{50 * mm, 4 * mm}, 1000.0, 10 * mm}, {{21 * mm, 47 * mm}, -600.0, 10 * mm}});
   const SteelRod rod{30 * mm, 100.0};
   add_wall(result, mesh::Round{{}, 60 * mm}, rod.relative_permeability);
-  set_region(result);
+  set_region(result, 2 * mm);
   set_exact(result, rod, bars);
   add_force_on_steel(result, 2);
   return result;
@@ -160,7 +163,7 @@ Arrangement coaxial_line() {
   Arrangement result;
   add_bar(result, mesh::Tube{{}, 30 * mm, 5 * mm}, 1000.0);
   add_bar(result, mesh::Tube{{}, 80 * mm, 5 * mm}, -1000.0);
-  set_region(result);
+  set_region(result, 1 * mm);
   result.flux_density = [](mesh::Point at) {
     return field_of_tube({}, 10 * mm, 15 * mm, 1000.0, at) +
            field_of_tube({}, 35 * mm, 40 * mm, -1000.0, at);
@@ -173,8 +176,9 @@ Arrangement coaxial_line() {
                              (outer * outer - inner * inner) -
                          0.5;
   result.loop = {"loop", {0}, {1}};
-  result.inductance = mu_0_over_2pi * (2.0 * between - std::log(own_distance_of_ring(10 * mm, 15 * mm)) -
-                                       std::log(own_distance_of_ring(inner, outer)));
+  result.inductance =
+      mu_0_over_2pi * (2.0 * between - std::log(own_distance_of_ring(10 * mm, 15 * mm)) -
+                       std::log(own_distance_of_ring(inner, outer)));
   return result;
 }
 

@@ -5,7 +5,9 @@
 
 namespace barwall::verify {
 
-double LadderRow::order() const { return std::log2(error[1] / error[2]); }
+double LadderRow::order() const {
+  return std::log2(error[1] / error[2]);
+}
 
 bool LadderRow::order_in_band() const {
   return order() >= quantity.order.least && order() <= quantity.order.most;  // false for NaN
@@ -25,7 +27,8 @@ std::shared_ptr<const mesh::FittedGrid> grid_of(const LadderProblem& problem, in
 
 std::vector<LadderRow> climb(const LadderProblem& problem) {
   std::vector<LadderRow> rows;
-  for (const LadderQuantity& quantity : problem.quantities) rows.push_back({problem.name, quantity});
+  for (const LadderQuantity& quantity : problem.quantities)
+    rows.push_back({problem.name, quantity});
   int cells_across = problem.grid.cells_across;
   for (std::size_t step = 0; step < 3; ++step, cells_across *= 2) {
     const auto errors = problem.errors(grid_of(problem, cells_across));

@@ -37,7 +37,7 @@ inline constexpr double error_margin = 2.0;
 struct LadderProblem {
   std::string name;
   mesh::Section section;
-  mesh::GridOptions grid;             ///< its cells_across is that of the coarsest grid
+  mesh::GridOptions grid;  ///< its cells_across is that of the coarsest grid
   std::vector<LadderQuantity> quantities;
   /// Solves on a grid of the section; relative errors, one for each quantity.
   std::function<std::vector<double>(std::shared_ptr<const mesh::FittedGrid>)> errors;
