@@ -37,7 +37,7 @@ double distance_from(const mesh::Outline& outline, mesh::Point at) {
 /// Of B off the outlines and near them.
 std::array<double, 2> field_errors(const Arrangement& arrangement,
                                    const solver::Solution& solution) {
-  constexpr int points = 4000;
+  constexpr int points = 10000;
   const solver::RecoveredField field(solution);
   const mesh::Section& section = arrangement.section;
   const mesh::Box& region = arrangement.region;

@@ -34,7 +34,7 @@ struct Arrangement {
 
 /// Errors of the scheme's solution of an arrangement on a grid, relative:
 ///
-/// 1. B off the outlines: r.m.s. of the vector error over r.m.s. of B, over those of 4000
+/// 1. B off the outlines: r.m.s. of the vector error over r.m.s. of B, over those of 10000
 ///    low-discrepancy points of the region, bars and steel included, that lie farther than `near`
 ///    from every outline;
 /// 2. B near the outlines: the same over the other points. One that the exact outline and the

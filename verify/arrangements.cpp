@@ -139,9 +139,9 @@ Arrangement bars_in_pipe() {
   const auto bars = add_round_bars(result, {{{-22 * mm, -13 * mm}, 1000.0, 10 * mm},
                                             {{24 * mm, -9 * mm}, -800.0, 10 * mm},
                                             {{3 * mm, 27 * mm}, 300.0, 8 * mm}});
-  const Pipe pipe{60 * mm, 65 * mm, 200.0};
-  add_wall(result, mesh::Tube{{}, 130 * mm, 5 * mm}, pipe.relative_permeability);
-  set_region(result, 1 * mm);
+  const Pipe pipe{55 * mm, 65 * mm, 200.0};
+  add_wall(result, mesh::Tube{{}, 130 * mm, 10 * mm}, pipe.relative_permeability);
+  set_region(result, 5 * mm);  // the wall, a few cells thick, is all near its outlines
   set_exact(result, pipe, bars);
   add_force_on_steel(result, 3);
   return result;
@@ -163,7 +163,7 @@ Arrangement coaxial_line() {
   Arrangement result;
   add_bar(result, mesh::Tube{{}, 30 * mm, 5 * mm}, 1000.0);
   add_bar(result, mesh::Tube{{}, 80 * mm, 5 * mm}, -1000.0);
-  set_region(result, 1 * mm);
+  set_region(result, 2 * mm);
   result.flux_density = [](mesh::Point at) {
     return field_of_tube({}, 10 * mm, 15 * mm, 1000.0, at) +
            field_of_tube({}, 35 * mm, 40 * mm, -1000.0, at);

@@ -16,7 +16,7 @@ Arrangement pair_of_flat_bars();
 /// Two round bars of 20 mm, one above the other before a plane of steel, that carry unequal
 /// currents. The steel reaches the outer boundary, which carries the image solution.
 Arrangement bars_before_steel();
-/// Three round bars at odd places in a steel pipe of 130 x 5 mm, with a net current.
+/// Three round bars at odd places in a steel pipe of 130 x 10 mm, with a net current.
 Arrangement bars_in_pipe();
 /// Two round bars beside a steel rod of 60 mm.
 Arrangement bars_beside_rod();
