@@ -8,16 +8,16 @@ namespace barwall::io {
 namespace {
 
 // One layout for the heading and for the rows.
-constexpr const char* heading_layout = "  {:<18} {:>9} {:>9} {:>9}  {:>17}  {:>5}  {:>8}  {}\n";
+constexpr const char* heading_layout = "  {:<18} {:>9} {:>9} {:>9}  {:>17}  {:>5}  {:>7}\n";
 constexpr const char* row_layout =
-    "  {:<18} {:>9.2e} {:>9.2e} {:>9.2e}  {:>17}  {:>5.2f}  {:>8}  {}\n";
+    "  {:<18} {:>9.2e} {:>9.2e} {:>9.2e}  {:>17}  {:>5.2f}  {:>7}  {}\n";
 
 std::string heading() {
   const auto across = [](std::size_t k) {
     return fmt::format("{} cells", verify::ladder_cells[k]);
   };
   return fmt::format(heading_layout, "relative error", across(0), across(1), across(2),
-                     across(1) + " within", "order", "within", "");
+                     across(1) + " within", "order", "within");
 }
 
 std::string line_of(const verify::LadderRow& row) {
