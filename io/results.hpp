@@ -1,6 +1,6 @@
 #pragma once
 
-#include <chrono>
+#include <functional>
 #include <memory>
 #include <string>
 #include <utility>
@@ -44,7 +44,8 @@ std::shared_ptr<const solver::Problem> problem_of(const Case& input);
 std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& outline);
 
 /// The main job up to the files: grid, solve, figures, checks, notices.
+/// \param on_stage told the name of each stage as it begins
 /// \throws InputError, solver::SolveError
-Results run_case(Case input);
+Results run_case(Case input, const std::function<void(const std::string&)>& on_stage = {});
 
 }  // namespace barwall::io

@@ -2,6 +2,7 @@
 #include <sys/sysinfo.h>
 
 #include <algorithm>
+#include <chrono>
 
 #include "io/input_error.hpp"
 #include "io/results.hpp"
@@ -14,7 +15,9 @@ namespace {
 
 /// Memory that a direct solve of n nodes takes, by measurement: about 31 n log2 n bytes for the
 /// factor and 700 n for everything else.
-double bytes_needed(double nodes) { return nodes * (31.0 * std::log2(nodes) + 700.0); }
+double bytes_needed(double nodes) {
+  return nodes * (31.0 * std::log2(nodes) + 700.0);
+}
 
 /// Largest number of nodes that three quarters of the free memory hold.
 double nodes_that_fit() {
@@ -27,16 +30,27 @@ double nodes_that_fit() {
 }
 
 class Stopwatch {
- public:
-  explicit Stopwatch(StageTimes& stages) : stages_(stages) {}
-  void lap(const std::string& name) {
+public:
+  Stopwatch(StageTimes& stages, const std::function<void(const std::string&)>& on_stage)
+      : stages_(stages), on_stage_(on_stage) {}
+  void begin(const std::string& name) {
+    end();
+    name_ = name;
+    if (on_stage_) on_stage_(name);
+  }
+  void end() {
     const auto now = std::chrono::steady_clock::now();
-    stages_.emplace_back(name, std::chrono::duration<double>(now - last_).count());
+    if (!name_.empty()) {
+      stages_.emplace_back(name_, std::chrono::duration<double>(now - last_).count());
+    }
+    name_.clear();
     last_ = now;
   }
 
- private:
+private:
   StageTimes& stages_;
+  const std::function<void(const std::string&)>& on_stage_;
+  std::string name_;
   std::chrono::steady_clock::time_point last_ = std::chrono::steady_clock::now();
 };
 
@@ -49,9 +63,8 @@ std::vector<mesh::Point> points_around(const mesh::Outline& outline, double clea
   // Lines within others run round parts in the hollow of another: not outermost.
   std::vector<std::vector<mesh::Point>> outermost;
   for (auto& line : lines) {
-    const bool hidden = std::any_of(outermost.begin(), outermost.end(), [&](const auto& outer) {
-      return inside(outer, line.front());
-    });
+    const bool hidden = std::any_of(outermost.begin(), outermost.end(),
+                                    [&](const auto& outer) { return inside(outer, line.front()); });
     if (!hidden) outermost.push_back(std::move(line));
   }
   const auto length = [](const std::vector<mesh::Point>& line) {
@@ -76,10 +89,15 @@ std::vector<mesh::Point> points_around(const mesh::Outline& outline, double clea
 std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& outline) {
   std::vector<solver::Probe> probes;
   for (const ProbeRequest& request : input.probes) {
-    solver::Probe probe{request.name, {}, request.kind != ProbeRequest::Kind::point,
-                        request.limit_t, request.limit_from};
+    solver::Probe probe{request.name,
+                        {},
+                        request.kind != ProbeRequest::Kind::point,
+                        request.limit_t,
+                        request.limit_from};
     switch (request.kind) {
-      case ProbeRequest::Kind::point: probe.points = {request.at}; break;
+      case ProbeRequest::Kind::point:
+        probe.points = {request.at};
+        break;
       case ProbeRequest::Kind::line:
         for (int k = 0; k < request.points; ++k) {
           const double t = static_cast<double>(k) / (request.points - 1);
@@ -118,21 +136,22 @@ std::shared_ptr<const solver::Problem> problem_of(const Case& input) {
   return problem;
 }
 
-Results run_case(Case input) {
+Results run_case(Case input, const std::function<void(const std::string&)>& on_stage) {
   Results results;
   results.input = std::move(input);
-  Stopwatch watch(results.stages);
+  Stopwatch watch(results.stages, on_stage);
+  watch.begin("grid");
   results.problem = problem_of(results.input);
-  watch.lap("grid");
+  watch.begin("solve");
   auto solution = std::make_shared<solver::Solution>(solve(results.problem));
   results.solution = solution;
-  watch.lap("solve");
+  watch.begin("figures");
   results.field = std::make_shared<solver::RecoveredField>(*solution);
   const solver::StressBands bands(*solution, bodies(results.problem->outline));
   results.figures =
       figures_of(*solution, *results.field, bands,
                  probes_of(results.input, results.problem->outline), results.input.circuits);
-  watch.lap("figures");
+  watch.begin("checks");
   results.checks = verify::run_checks(*solution, *results.field, bands);
   if (results.input.run_length_m) {
     const auto notices =
@@ -140,7 +159,7 @@ Results run_case(Case input) {
     auto& all = results.figures.notices;
     all.insert(all.end(), notices.begin(), notices.end());
   }
-  watch.lap("checks");
+  watch.end();
   return results;
 }
 

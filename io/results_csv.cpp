@@ -1,0 +1,92 @@
+#include "io/results_csv.hpp"
+
+#include <fmt/format.h>
+
+#include <unordered_map>
+#include <vector>
+
+#include "io/tidy_figures.hpp"
+
+namespace barwall::io {
+namespace {
+
+/// Limit and share of it that stand beside a figure.
+struct Limit {
+  double value = solver::not_given;
+  double share = solver::not_given;
+};
+
+std::string text_of(double value) {
+  return number_text(to_ten_digits(value));
+}
+
+std::string row(const std::string& address, const solver::Figure& figure, const Limit& limit = {}) {
+  // Two empty fields: the hand formula's value and the ratio to it.
+  return fmt::format("{},{},{},{},,,{},{}\n", csv_field(address), text_of(figure.value),
+                     csv_field(figure.unit), text_of(figure.plus_minus), text_of(limit.value),
+                     text_of(limit.share));
+}
+
+/// The limits beside the figures they bound, by address: the field at a point, or the largest on
+/// a line.
+std::unordered_map<std::string, Limit> limits_by_address(const solver::Figures& figures) {
+  std::unordered_map<std::string, Limit> limits;
+  for (const solver::ProbeFigures& probe : figures.probes) {
+    const solver::Figure* limit = solver::find_figure(probe.figures, "limit");
+    const solver::Figure* share = solver::find_figure(probe.figures, "of_limit");
+    if (limit == nullptr || share == nullptr) continue;
+    for (const char* key : {"b", "b_rms", "b_max", "b_rms_max"}) {
+      limits["probes/" + probe.probe.name + "/" + key] = {limit->value, share->value};
+    }
+  }
+  return limits;
+}
+
+}  // namespace
+
+std::string csv_field(const std::string& text) {
+  if (text.find_first_of(",\"\r\n") == std::string::npos) return text;
+  std::string quoted = "\"";
+  for (char c : text) quoted += c == '"' ? std::string("\"\"") : std::string(1, c);
+  return quoted + "\"";
+}
+
+std::string figures_csv(const Results& results) {
+  const solver::Figures figures = tidy(results.figures);
+  std::string text = "address,value,unit,plus_minus,hand,ratio,limit,of_limit\n";
+  const auto limits = limits_by_address(figures);
+  for (const auto& [address, figure] : addresses(figures)) {
+    const auto found = limits.find(address);
+    text += row(address, *figure, found == limits.end() ? Limit{} : found->second);
+  }
+  for (const verify::Check& check : tidy(results.checks)) {
+    text += row("checks/" + check.name + "/measured", {"measured", check.measured, check.unit},
+                {check.limit, check.measured / check.limit});
+    text += row("checks/" + check.name + "/limit", {"limit", check.limit, check.unit});
+  }
+  return text;
+}
+
+std::string probes_csv(const Results& results) {
+  const solver::Figures figures = tidy(results.figures);
+  const bool alternating = results.alternating();
+  std::string text =
+      alternating ? "probe,x_mm,y_mm,b_rms_t,b_peak_t\n" : "probe,x_mm,y_mm,b_x_t,b_y_t,b_t\n";
+  for (const solver::ProbeFigures& probe : figures.probes) {
+    for (const solver::ProbePoint& point : probe.points) {
+      text += fmt::format("{},{},{}", csv_field(probe.probe.name), text_of(1e3 * point.at.x),
+                          text_of(1e3 * point.at.y));
+      const std::vector<const char*> keys =
+          alternating ? std::vector{"b_rms", "b_peak"} : std::vector{"b_x", "b_y", "b"};
+      for (const char* key : keys) {
+        const solver::Figure* figure = solver::find_figure(point.figures, key);
+        text += ',';
+        if (figure != nullptr) text += text_of(figure->value);
+      }
+      text += "\n";
+    }
+  }
+  return text;
+}
+
+}  // namespace barwall::io

@@ -1,0 +1,66 @@
+#include "io/run_json.hpp"
+
+#include <omp.h>
+#include <sys/resource.h>
+
+#include <cmath>
+#include <nlohmann/json.hpp>
+
+#include "io/version.hpp"
+
+namespace barwall::io {
+namespace {
+
+using Json = nlohmann::ordered_json;
+
+Json milliseconds(double seconds) {
+  return std::round(1e3 * seconds) / 1e3;
+}
+
+}  // namespace
+
+double peak_memory() {
+  rusage usage{};
+  getrusage(RUSAGE_SELF, &usage);
+  return 1024.0 * static_cast<double>(usage.ru_maxrss);
+}
+
+std::string place_of_case(const Case& input, const std::filesystem::path& folder) {
+  std::error_code error;
+  const auto file = std::filesystem::weakly_canonical(input.file, error);
+  if (error) return {};
+  const auto from = std::filesystem::weakly_canonical(folder, error);
+  return error ? std::string() : file.lexically_relative(from).generic_string();
+}
+
+std::string run_json(const Results& results, const std::filesystem::path& folder) {
+  const solver::Solution& solution = *results.solution;
+  const mesh::FittedGrid& grid = solution.grid();
+  Json json;
+  json["format"] = 1;
+  json["barwall"] = version();
+  json["case"] = {{"name", results.input.name},
+                  {"file", place_of_case(results.input, folder)},
+                  {"sha256", results.input.sha256}};
+  json["nodes"] = grid.node_count();
+  json["triangles"] = grid.triangle_count();
+  json["seconds"] = Json::object();
+  double whole = 0.0;
+  for (const auto& [stage, seconds] : results.stages) {
+    json["seconds"][stage] = milliseconds(seconds);
+    whole += seconds;
+  }
+  json["seconds"]["total"] = milliseconds(whole);
+  json["solver"] = {
+      {"method", solution.report.method},
+      {"converged", solution.report.converged},
+      {"right_hand_sides", solution.pattern_count() + static_cast<int>(solution.unit_bars.size())},
+      {"seconds", milliseconds(solution.linear_seconds)},
+      {"iterations", solution.report.iterations},
+      {"residuals", solution.report.residuals}};
+  json["threads"] = omp_get_max_threads();
+  json["peak_memory_bytes"] = static_cast<std::int64_t>(peak_memory());
+  return json.dump(1, ' ', false, Json::error_handler_t::replace) + "\n";
+}
+
+}  // namespace barwall::io

@@ -1,0 +1,283 @@
+#include "io/summary.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cmath>
+#include <numbers>
+
+#include "io/plain_table.hpp"
+#include "io/quantity_text.hpp"
+#include "io/tidy_figures.hpp"
+
+namespace barwall::io {
+namespace {
+
+constexpr int name_width = 26;
+constexpr std::size_t most_rows = 12;
+constexpr double degree = std::numbers::pi / 180.0;
+
+std::string red(const std::string& text, bool colour) {
+  return colour ? "\x1b[31m" + text + "\x1b[0m" : text;
+}
+
+double value_of(const std::vector<solver::Figure>& figures, const char* key) {
+  const solver::Figure* figure = solver::find_figure(figures, key);
+  return figure == nullptr ? solver::not_given : figure->value;
+}
+
+std::string text_of(const std::vector<solver::Figure>& figures, const char* key) {
+  const solver::Figure* figure = solver::find_figure(figures, key);
+  return figure == nullptr ? "-" : quantity_text(*figure);
+}
+
+std::string name_of(const std::string& name) {
+  return clipped(name, name_width);
+}
+
+std::string more_rows(std::size_t all) {
+  return all > most_rows ? fmt::format("  and {} more in figures.csv\n", all - most_rows) : "";
+}
+
+std::string place_text(mesh::Point at) {
+  const auto shown = [](double mm) { return to_ten_digits(std::round(mm * 10.0) / 10.0); };
+  return fmt::format("({}, {}) mm", number_text(shown(1e3 * at.x)), number_text(shown(1e3 * at.y)));
+}
+
+std::string percent_text(double share) {
+  const double percent = 100.0 * share;
+  return percent >= 999.5 ? fmt::format("{:.0f} %", percent) : fmt::format("{:.3g} %", percent);
+}
+
+/// A limit as the case file gives it.
+std::string limit_text(double tesla) {
+  return fmt::format("{:g} µT", to_ten_digits(1e6 * tesla));
+}
+
+/// A vector's size and direction in two cells.
+void add_vector(std::vector<std::string>& cells, double x, double y) {
+  const double size = std::hypot(x, y);
+  cells.push_back(quantity_text(size, "N/m"));
+  cells.push_back(size > 0.0 ? direction_text(std::atan2(y, x) / degree) : "");
+}
+
+class Summary {
+public:
+  Summary(const Results& results, bool colour)
+      : results_(results),
+        figures_(tidy(results.figures)),
+        alternating_(results.alternating()),
+        colour_(colour) {}
+
+  std::string head() const {
+    std::string text = wrapped(results_.input.title, 0, summary_width);
+    std::string line =
+        alternating_
+            ? fmt::format("alternating currents, {:g} Hz, r.m.s. values unless said otherwise",
+                          results_.problem->excitation.frequency_hz)
+            : std::string("steady currents");
+    for (const auto& [name, value] : results_.input.given) {
+      line += fmt::format(", {} = {:g}", name, value);
+    }
+    return text + wrapped(line, 0, summary_width);
+  }
+
+  std::string forces() const {
+    struct Row {
+      double size;
+      std::vector<std::string> cells;
+    };
+    std::vector<Row> rows;
+    const auto add = [&](const solver::Entry& entry, const std::string& current) {
+      const bool given =
+          std::isfinite(value_of(entry.figures, alternating_ ? "force_peak" : "force_x"));
+      if (!given) return;
+      Row row{0.0, {name_of(entry.name), current}};
+      if (alternating_) {
+        row.size = value_of(entry.figures, "force_peak");
+        row.cells.push_back(text_of(entry.figures, "force_peak"));
+        row.cells.push_back(direction_text(value_of(entry.figures, "force_peak_direction")));
+        const double at = value_of(entry.figures, "force_peak_at");
+        row.cells.push_back(std::isfinite(at) ? fmt::format("at wt = {:.0f}°", at) : "");
+        add_vector(row.cells, value_of(entry.figures, "force_mean_x"),
+                   value_of(entry.figures, "force_mean_y"));
+      } else {
+        row.size =
+            std::hypot(value_of(entry.figures, "force_x"), value_of(entry.figures, "force_y"));
+        add_vector(row.cells, value_of(entry.figures, "force_x"),
+                   value_of(entry.figures, "force_y"));
+      }
+      rows.push_back(std::move(row));
+    };
+    for (const solver::Entry& bar : figures_.bars) add(bar, current_text(bar.current));
+    for (const solver::Entry& wall : figures_.walls) add(wall, "");
+    for (const solver::Entry& body : figures_.bodies) add(body, "in contact");
+    if (rows.empty()) return "";
+    std::stable_sort(rows.begin(), rows.end(),
+                     [](const Row& a, const Row& b) { return a.size > b.size; });
+    PlainTable table(alternating_ ? "lrrllrl" : "lrrl");
+    if (alternating_) table.add({"", "", "peak", "", "", "mean", ""});
+    for (std::size_t k = 0; k < std::min(rows.size(), most_rows); ++k) table.add(rows[k].cells);
+    return section("Forces, per metre of run", table, rows.size());
+  }
+
+  std::string probes() const {
+    std::vector<const solver::ProbeFigures*> order;
+    for (const solver::ProbeFigures& probe : figures_.probes) order.push_back(&probe);
+    std::stable_partition(order.begin(), order.end(), [](const solver::ProbeFigures* probe) {
+      return probe->limit_state == solver::LimitState::exceeded ||
+             probe->limit_state == solver::LimitState::undecided;
+    });
+    PlainTable table("lrlrrll");
+    std::string sources;
+    for (std::size_t k = 0; k < std::min(order.size(), most_rows); ++k) {
+      const solver::ProbeFigures& probe = *order[k];
+      const std::string key = alternating_ ? "b_rms" : "b";
+      const bool line = probe.probe.line;
+      const bool limited = probe.limit_state != solver::LimitState::none;
+      std::vector<std::string> cells = {name_of(probe.probe.name)};
+      cells.push_back(line ? text_of(probe.figures, (key + "_max").c_str())
+                           : text_of(probe.points.front().figures, key.c_str()));
+      cells.push_back(state_text(probe.limit_state));
+      cells.push_back(limited ? percent_text(value_of(probe.figures, "of_limit")) : "");
+      cells.push_back(limited ? "of " + limit_text(value_of(probe.figures, "limit")) : "");
+      cells.push_back(line ? "largest," : "");
+      cells.push_back("at " + place_text(line ? probe.largest_at : probe.points.front().at));
+      if (limited) {
+        const std::string source = "limit from: " + probe.probe.limit_from;
+        if (sources.find(source + "\n") == std::string::npos) sources += source + "\n";
+      }
+      table.add(std::move(cells));
+    }
+    std::string text = section("Magnetic flux density", table, order.size());
+    for (std::size_t from = 0; from < sources.size();) {
+      const std::size_t to = sources.find('\n', from);
+      text += wrapped(sources.substr(from, to - from), 2, summary_width);
+      from = to + 1;
+    }
+    return text;
+  }
+
+  std::string inductances() const {
+    PlainTable loops("lr");
+    for (std::size_t k = 0; k < std::min(figures_.loops.size(), most_rows); ++k) {
+      const solver::Entry& loop = figures_.loops[k];
+      loops.add({name_of(loop.name), quantity_text(loop.figures.front())});
+    }
+    PlainTable bars("lr");
+    std::size_t count = 0;
+    const auto add = [&](const std::string& name, const solver::Entry& entry, const char* key) {
+      if (!std::isfinite(value_of(entry.figures, key))) return;
+      if (++count <= most_rows) bars.add({name, text_of(entry.figures, key)});
+    };
+    for (const solver::Entry& circuit : figures_.circuits) {
+      std::string names;
+      for (const std::string& part : circuit.parts) names += (names.empty() ? "" : ", ") + part;
+      add("mean of " + clipped(names, name_width), circuit, "reactance_mean");
+    }
+    for (const solver::Entry& bar : figures_.bars) add(name_of(bar.name), bar, "reactance");
+    return section("Inductance of the loops, per metre of run", loops, figures_.loops.size()) +
+           section("Reactance, per metre of run", bars, count);
+  }
+
+  std::string walls() const {
+    PlainTable table("lrr");
+    if (!figures_.walls.empty()) table.add({"", "mean", "exceeded on 1 % of the area"});
+    for (std::size_t k = 0; k < std::min(figures_.walls.size(), most_rows); ++k) {
+      const solver::Entry& wall = figures_.walls[k];
+      table.add(
+          {name_of(wall.name), text_of(wall.figures, "b_mean"), text_of(wall.figures, "b_high")});
+    }
+    return section(alternating_ ? "Flux density in the walls, largest in the cycle"
+                                : "Flux density in the walls",
+                   table, figures_.walls.size());
+  }
+
+  std::string notices() const {
+    if (figures_.notices.empty()) return "";
+    std::string text = "\nNotices\n";
+    for (const solver::Notice& notice : figures_.notices) {
+      text += wrapped(fmt::format("{}: {}", notice.name, notice.detail), 2, summary_width);
+    }
+    return text;
+  }
+
+private:
+  static std::string section(const std::string& title, const PlainTable& table, std::size_t all) {
+    if (table.empty()) return "";
+    return "\n" + title + "\n" + table.text(summary_width) + more_rows(all);
+  }
+
+  std::string current_text(std::complex<double> current) const {
+    if (!alternating_) return fmt::format("{:.6g} A", to_ten_digits(current.real()));
+    const double size = std::abs(current);
+    double largest = 0.0;
+    for (const solver::Entry& bar : figures_.bars)
+      largest = std::max(largest, std::abs(bar.current));
+    if (size < 1e-12 * largest || size == 0.0) return "0 A";
+    const double phase = to_ten_digits(std::round(10.0 * std::arg(current) / degree) / 10.0);
+    return fmt::format("{:.6g} A at {:g}°", size, phase);
+  }
+
+  std::string state_text(solver::LimitState state) const {
+    switch (state) {
+      case solver::LimitState::none:
+        return "";
+      case solver::LimitState::met:
+        return "met";
+      case solver::LimitState::exceeded:
+        return red("EXCEEDED", colour_);
+      case solver::LimitState::undecided:
+        return red("UNDECIDED", colour_);
+    }
+    return "";
+  }
+
+  const Results& results_;
+  solver::Figures figures_;
+  bool alternating_;
+  bool colour_;
+};
+
+std::string check_value(double value, const std::string& unit) {
+  return fmt::format("{:.3g}{}", value, unit == "1" ? "" : " " + unit);
+}
+
+}  // namespace
+
+std::string checks_table(const Results& results, bool colour) {
+  if (results.checks.empty()) return "  no check was made\n";
+  PlainTable table("llrl");
+  std::string details;
+  for (const verify::Check& check : tidy(results.checks)) {
+    table.add({check.passed ? "passed" : red("FAILED", colour), check.name,
+               check_value(check.measured, check.unit),
+               "limit " + check_value(check.limit, check.unit)});
+    if (!check.passed) {
+      details += wrapped(fmt::format("{} failed: {}", check.name, check.detail), 2, summary_width);
+    }
+  }
+  return table.text(summary_width) + details;
+}
+
+std::string verdict_line(const Results& results, bool colour) {
+  const bool sound = results.verdict() == "sound";
+  const std::string verdict = sound ? "sound" : red("unsound, do not use the numbers", colour);
+  const std::string limits = results.limits();
+  const bool good = limits == "none" || limits == "met";
+  return fmt::format("Verdict: {}.  Validity: {}.  Limits: {}.\n", verdict, results.validity(),
+                     good ? limits : red(limits, colour));
+}
+
+std::string summary(const Results& results, const std::filesystem::path& folder, bool colour) {
+  const Summary parts(results, colour);
+  return parts.head() + parts.forces() + parts.probes() + parts.inductances() + parts.walls() +
+         "\nChecks\n" + checks_table(results, colour) + parts.notices() + "\n" +
+         verdict_line(results, colour) + fmt::format("Results: {}\n", folder.string()) +
+         wrapped(
+             "A computed figure supports but does not replace a licensed engineer, the local "
+             "code and type tests.",
+             0, summary_width);
+}
+
+}  // namespace barwall::io

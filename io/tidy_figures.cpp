@@ -1,0 +1,111 @@
+#include "io/tidy_figures.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cmath>
+#include <cstdlib>
+
+namespace barwall::io {
+namespace {
+
+constexpr double smallest_share = 1e-11;
+
+double largest(const std::vector<solver::Figure>& figures, const std::string& unit) {
+  double result = 0.0;
+  for (const solver::Figure& figure : figures) {
+    if (figure.unit == unit && std::isfinite(figure.value)) {
+      result = std::max(result, std::abs(figure.value));
+    }
+  }
+  return result;
+}
+
+double largest(const std::vector<solver::Entry>& entries, const std::string& unit) {
+  double result = 0.0;
+  for (const solver::Entry& entry : entries) {
+    result = std::max({result, largest(entry.figures, unit), largest(entry.pieces, unit)});
+  }
+  return result;
+}
+
+void drop_below(std::vector<solver::Figure>& figures, const std::string& unit, double floor) {
+  for (solver::Figure& figure : figures) {
+    if (figure.unit == unit && std::abs(figure.value) < floor) figure.value = 0.0;
+  }
+}
+
+void round_all(std::vector<solver::Figure>& figures) {
+  const solver::Figure* peak = solver::find_figure(figures, "force_peak");
+  const bool no_peak = peak != nullptr && peak->value == 0.0;
+  for (solver::Figure& figure : figures) {
+    if (no_peak && (figure.key == "force_peak_at" || figure.key == "force_peak_direction")) {
+      figure.value = solver::not_given;
+    }
+    figure.value = to_ten_digits(figure.value);
+    figure.plus_minus = to_ten_digits(figure.plus_minus);
+  }
+}
+
+struct Floors {
+  double force = 0.0;
+  double linkage = 0.0;
+};
+
+void tidy_entries(std::vector<solver::Entry>& entries, const Floors& floors) {
+  for (solver::Entry& entry : entries) {
+    drop_below(entry.figures, "N/m", floors.force);
+    drop_below(entry.figures, "Wb/m", floors.linkage);
+    round_all(entry.figures);
+    tidy_entries(entry.pieces, floors);
+  }
+}
+
+}  // namespace
+
+double to_digits(double value, int digits) {
+  if (!std::isfinite(value)) return solver::not_given;
+  const double rounded = std::strtod(fmt::format("{:.{}e}", value, digits - 1).c_str(), nullptr);
+  return rounded == 0.0 ? 0.0 : rounded;
+}
+
+double to_ten_digits(double value) {
+  return to_digits(value, 10);
+}
+
+std::string number_text(double value) {
+  return std::isfinite(value) ? fmt::format("{}", value) : std::string();
+}
+
+solver::Figures tidy(solver::Figures figures) {
+  Floors floors;
+  for (const auto* entries : {&figures.bars, &figures.walls, &figures.bodies}) {
+    floors.force = std::max(floors.force, smallest_share * largest(*entries, "N/m"));
+    floors.linkage = std::max(floors.linkage, smallest_share * largest(*entries, "Wb/m"));
+  }
+  for (auto* entries :
+       {&figures.bars, &figures.walls, &figures.bodies, &figures.loops, &figures.circuits}) {
+    tidy_entries(*entries, floors);
+  }
+  round_all(figures.energy);
+  for (solver::ProbeFigures& probe : figures.probes) {
+    for (solver::ProbePoint& point : probe.points) {
+      drop_below(point.figures, "T", smallest_share * largest(point.figures, "T"));
+      round_all(point.figures);
+    }
+    round_all(probe.figures);
+  }
+  for (solver::Clearance& clearance : figures.clearances) {
+    clearance.gap.value = to_ten_digits(clearance.gap.value);
+  }
+  return figures;
+}
+
+std::vector<verify::Check> tidy(std::vector<verify::Check> checks) {
+  for (verify::Check& check : checks) {
+    check.measured = check.measured < 1e-6 * check.limit ? 0.0 : to_digits(check.measured, 4);
+  }
+  return checks;
+}
+
+}  // namespace barwall::io
