@@ -30,6 +30,12 @@ struct FittedGrid {
   int cell_count() const { return (columns - 1) * (rows - 1); }
   int triangle_count() const { return 2 * cell_count(); }
   int node(int i, int j) const { return j * columns + i; }
+  /// True when fitting moved a node off its place in the plain grid.
+  bool moved(int node_index) const {
+    const Point p = nodes[static_cast<std::size_t>(node_index)];
+    return p.x != x_lines[static_cast<std::size_t>(node_index % columns)] ||
+           p.y != y_lines[static_cast<std::size_t>(node_index / columns)];
+  }
   bool on_boundary(int node_index) const {
     const int i = node_index % columns;
     const int j = node_index / columns;
