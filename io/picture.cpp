@@ -1,0 +1,293 @@
+#include "io/picture.hpp"
+
+#include <fmt/format.h>
+
+#include <algorithm>
+#include <cmath>
+#include <future>
+#include <fstream>
+#include <numbers>
+
+#include "io/field_raster.hpp"
+#include "io/flux_lines.hpp"
+#include "io/force_arrows.hpp"
+#include "io/frame.hpp"
+#include "io/page_text.hpp"
+#include "io/results_folder.hpp"
+#include "io/section_drawing.hpp"
+
+namespace barwall::io {
+namespace {
+
+constexpr int page_width = 1600;
+constexpr int left_margin = 122;
+constexpr int frame_width = 1442;
+constexpr int least_height = 460;
+constexpr int largest_height = 1080;
+constexpr int flux_line_count = 40;
+constexpr double text_size = 21.0;
+constexpr Colour ink{0.1, 0.1, 0.12, 1.0};
+
+/// What the picture shows, found once and drawn in every format.
+struct Scene {
+  Frame frame;
+  FieldRaster raster;
+  LogScale scale;
+  std::vector<FluxLine> lines;
+  double instant = 0.0;  ///< wt of the flux lines and of the currents' signs [rad]
+  std::vector<ForceArrow> arrows;
+  ArrowScale arrow_scale;
+};
+
+Scene scene_of(const Results& results) {
+  Scene scene;
+  scene.frame = frame_round(bounds(results.problem->section), {left_margin, heading_height},
+                            frame_width, least_height, largest_height);
+  scene.raster = field_raster(results, scene.frame.window, frame_width,
+                              static_cast<int>(scene.frame.box.height()));
+  scene.scale = log_scale_of(scene.raster.magnitude);
+  scene.lines = flux_lines(results, scene.frame.window, flux_line_count);
+  scene.instant = flux_line_instant(results);
+  scene.arrows = force_arrows(results);
+  scene.arrow_scale = arrow_scale(scene.arrows, scene.frame.scale());
+  return scene;
+}
+
+/// Flux between neighbouring lines [Wb/m], 0 where there are none.
+double flux_step(const std::vector<FluxLine>& lines) {
+  double least = HUGE_VAL;
+  double largest = -HUGE_VAL;
+  for (const FluxLine& line : lines) {
+    least = std::min(least, line.potential);
+    largest = std::max(largest, line.potential);
+  }
+  return largest > least ? (largest - least) / (flux_line_count - 1) : 0.0;
+}
+
+/// The flux lines, but for stretches where they would run together and hide the colours.
+void draw_flux_lines(Canvas& canvas, const Scene& scene) {
+  constexpr double least_step = 0.8;  // pixels
+  constexpr double least_gap = 3.0;   // pixels between neighbouring lines
+  const double dense = flux_step(scene.lines) * scene.frame.scale() / least_gap;  // [T]
+  const FieldRaster& raster = scene.raster;
+  const auto shows = [&](PagePoint p) {
+    const PagePoint from_corner = p - scene.frame.box.low;
+    const int column = std::clamp(static_cast<int>(from_corner.x), 0, raster.width - 1);
+    const int row = std::clamp(static_cast<int>(from_corner.y), 0, raster.height - 1);
+    return raster.at(column, row) <= dense;
+  };
+  const auto stroke = [&](const std::vector<PagePoint>& points, bool closed) {
+    if (points.size() < 2) return;
+    canvas.line(points, {{0.0, 0.0, 0.0, 0.22}, 2.2, {}}, closed);
+    canvas.line(points, {{1.0, 1.0, 1.0, 0.75}, 1.0, {}}, closed);
+  };
+  canvas.begin_clip(scene.frame.box);
+  for (const FluxLine& line : scene.lines) {
+    std::vector<PagePoint> stretch;
+    bool whole = true;
+    const std::size_t count = line.points.size() + (line.closed ? 1 : 0);
+    for (std::size_t k = 0; k < count; ++k) {
+      const PagePoint p = scene.frame.page(line.points[k % line.points.size()]);
+      if (!shows(p)) {
+        stroke(stretch, false);
+        stretch.clear();
+        whole = false;
+      } else if (stretch.empty() || k + 1 == count || distance(stretch.back(), p) > least_step) {
+        stretch.push_back(p);
+      }
+    }
+    stroke(stretch, whole && line.closed);
+  }
+  canvas.end_clip();
+}
+
+void draw_point_probes(Canvas& canvas, const Results& results, const Frame& frame,
+                       LabelPlacement& labels) {
+  constexpr std::size_t most = 20;
+  constexpr double half = 7.0;
+  std::vector<std::pair<std::string, PagePoint>> shown;
+  for (const solver::ProbeFigures& found : results.figures.probes) {
+    const mesh::Point at = found.probe.points.front();
+    if (!found.probe.line && frame.window.contains(at)) {
+      shown.emplace_back(found.probe.name, frame.page(at));
+    }
+  }
+  if (shown.size() > most) return;
+  const auto box_of = [](PagePoint p) {
+    return PageBox{p - PagePoint{half, half}, p + PagePoint{half, half}};
+  };
+  for (const auto& [name, p] : shown) {
+    const std::vector<PagePoint> diamond = {p + PagePoint{half, 0.0}, p + PagePoint{0.0, half},
+                                            p - PagePoint{half, 0.0}, p - PagePoint{0.0, half}};
+    canvas.fill({diamond}, {1.0, 1.0, 1.0, 1.0});
+    canvas.line(diamond, {ink, 1.6, {}}, true);
+    labels.block(box_of(p));
+  }
+  TextStyle style;
+  style.size = 0.85 * text_size;
+  constexpr double backing = 2.0;
+  for (const auto& [name, p] : shown) {
+    const auto label = labels.place(canvas.text_width(name, style) + 2.0 * backing,
+                                    1.12 * style.size + 2.0 * backing, box_of(p), false,
+                                    {p + PagePoint{half, 0.0}, p - PagePoint{half, 0.0}});
+    if (!label) continue;
+    if (label->leader) canvas.line({(*label->leader)[0], (*label->leader)[1]}, {ink, 1.0, {}});
+    canvas.box(label->box, Colour{1.0, 1.0, 1.0, 0.85});
+    canvas.text(label->box.low + PagePoint{backing, backing + 0.84 * style.size}, name, style);
+  }
+}
+
+/// The prefix in which the middle of the scale reads best.
+PrefixedUnit unit_of(const LogScale& scale) {
+  return prefixed_unit(std::sqrt(scale.low * scale.high) * 5.0, "T");
+}
+
+void draw_colour_bar(Canvas& canvas, const LogScale& scale, const FieldRaster& raster,
+                     const PageBox& box, bool alternating) {
+  const PrefixedUnit unit = unit_of(scale);
+  TextStyle style;
+  style.size = text_size;
+  canvas.text({box.low.x, box.low.y - 12.0},
+              fmt::format("{} in {}", alternating ? "Flux density B, r.m.s.," : "Flux density |B|",
+                          unit.name),
+              style);
+  const int width = static_cast<int>(box.width());
+  const int height = static_cast<int>(box.height());
+  Bitmap bitmap{width, height, {}};
+  for (int row = 0; row < height; ++row) {
+    for (int column = 0; column < width; ++column) {
+      bitmap.pixels.push_back(viridis_rgb(viridis_index((column + 0.5) / width)));
+    }
+  }
+  canvas.image(bitmap, box.low);
+  const Pen pen{ink, 1.5, {}};
+  canvas.box(box, pen);
+  // Values beyond the ends have the ends' colours: triangles say so.
+  const double middle = box.centre().y;
+  const double tip = 16.0;
+  const auto [least, largest] =
+      std::minmax_element(raster.magnitude.begin(), raster.magnitude.end());
+  for (const bool right : {false, true}) {
+    if (right ? *largest <= scale.high : *least >= scale.low) continue;
+    const double x = right ? box.high.x : box.low.x;
+    const std::vector<PagePoint> triangle = {
+        {x, box.low.y}, {right ? x + tip : x - tip, middle}, {x, box.high.y}};
+    canvas.fill({triangle}, colour_of(viridis_rgb(right ? viridis_count - 1 : 0)));
+    canvas.line(triangle, pen, true);
+  }
+  style.align = Align::middle;
+  const std::vector<ScaleMark> marks = scale_marks(scale);
+  const auto place = [&](double value) { return box.low.x + scale.position(value) * box.width(); };
+  const auto label = [&](double value) { return plain_number(value / unit.size); };
+  // All labels where they fit, else the decades alone.
+  bool all_fit = true;
+  double last = -HUGE_VAL;
+  for (const ScaleMark& mark : marks) {
+    const double half = 0.5 * canvas.text_width(label(mark.value), style) + 7.0;
+    all_fit = all_fit && place(mark.value) - half > last;
+    last = place(mark.value) + half;
+  }
+  for (const ScaleMark& mark : marks) {
+    const double x = place(mark.value);
+    const bool labelled = all_fit || mark.decade;
+    canvas.line({{x, box.high.y}, {x, box.high.y + (labelled ? 9.0 : 5.0)}}, pen);
+    if (labelled) canvas.text({x, box.high.y + 31.0}, label(mark.value), style);
+  }
+}
+
+void draw_force_key(Canvas& canvas, const ArrowScale& scale, PagePoint at, bool alternating) {
+  TextStyle style;
+  style.size = text_size;
+  if (!(scale.reference > 0.0)) {
+    canvas.text(at, "No forces", style);
+    return;
+  }
+  canvas.text(at, alternating ? "Peak force per metre of run" : "Force per metre of run", style);
+  const PagePoint from = at + PagePoint{0.0, 26.0};
+  const PagePoint to = from + PagePoint{scale.pixels * scale.reference, 0.0};
+  draw_arrow(canvas, from, to);
+  const PrefixedUnit unit = prefixed_unit(scale.reference, "N/m");
+  canvas.text(to + PagePoint{14.0, 7.0},
+              fmt::format("{} {}", plain_number(scale.reference / unit.size), unit.name), style);
+}
+
+std::string flux_line_note(const Scene& scene, bool alternating) {
+  std::string note = "Thin lines: flux lines";
+  if (const double step = flux_step(scene.lines); step > 0.0) {
+    const PrefixedUnit unit = prefixed_unit(step, "Wb/m");
+    note += fmt::format(", {:.3g} {} between neighbours, not drawn where closest", step / unit.size,
+                        unit.name);
+  }
+  if (alternating) {
+    note += fmt::format("; they and the currents' signs at \u03c9t = {:.1f}\u00b0, when the "
+                        "field's energy is largest",
+                        scene.instant * 180.0 / std::numbers::pi);
+  }
+  return note + ".";
+}
+
+std::string state_line(const Results& results) {
+  const std::string verdict = results.verdict();
+  std::string line = fmt::format("{}:  verdict {},  validity {},  limits {}", results.input.name,
+                                 verdict, results.validity(), results.limits());
+  if (verdict != "sound") line += "  \u2013  a check failed: do not use the numbers";
+  return line;
+}
+
+std::string drawn(Canvas::Kind kind, const Results& results, const Scene& scene,
+                  const Bitmap& bitmap) {
+  const bool alternating = results.alternating();
+  const Frame& frame = scene.frame;
+  const double bottom = frame.box.high.y;
+  Canvas canvas(kind, page_width, static_cast<int>(bottom) + 256);
+  const bool sound = results.verdict() == "sound";
+  draw_heading(canvas, results.input.title, state_line(results),
+               sound ? Colour{0.3, 0.3, 0.33, 1.0} : colour_of(0xb03a00), left_margin, frame_width);
+
+  canvas.image(bitmap, frame.box.low);
+  draw_flux_lines(canvas, scene);
+  draw_outlines(canvas, *results.problem, frame);
+  LabelPlacement labels(frame.box);
+  canvas.begin_clip(frame.box);
+  draw_forces(canvas, scene.arrows, scene.arrow_scale, frame, labels);
+  const int left_out =
+      draw_names(canvas, *results.problem, frame,
+                 currents_at(results.problem->excitation, scene.instant), labels, text_size + 2.0);
+  draw_point_probes(canvas, results, frame, labels);
+  canvas.end_clip();
+  draw_axes(canvas, frame, text_size - 1.0);
+
+  const double bar_top = bottom + 112.0;
+  const double key_left = page_width - 440.0;
+  draw_colour_bar(canvas, scene.scale, scene.raster, {{left_margin + 16.0, bar_top}, {key_left - 70.0, bar_top + 28.0}},
+                  alternating);
+  draw_force_key(canvas, scene.arrow_scale, {key_left, bar_top - 12.0}, alternating);
+  TextStyle small;
+  small.size = 18.0;
+  small.colour = {0.3, 0.3, 0.33, 1.0};
+  canvas.text({left_margin, bar_top + 98.0}, flux_line_note(scene, alternating), small);
+  std::string last = "Model: 2-D static field, no eddy currents, no skin effect.";
+  if (left_out > 0) last += fmt::format("  Names without room: {}.", left_out);
+  canvas.text({left_margin, bar_top + 124.0}, last, small);
+  return canvas.bytes();
+}
+
+}  // namespace
+
+Pictures draw_pictures(const Results& results) {
+  const Scene scene = scene_of(results);
+  const Bitmap bitmap = coloured(scene.raster, scene.scale);
+  auto svg = std::async(std::launch::async, [&] {
+    return drawn(Canvas::Kind::svg, results, scene, bitmap);
+  });
+  std::string png = drawn(Canvas::Kind::png, results, scene, bitmap);
+  return {std::move(png), svg.get()};
+}
+
+void write_pictures(const Results& results, const std::filesystem::path& folder) {
+  const Pictures pictures = draw_pictures(results);
+  write_text(folder / "picture.png", pictures.png);
+  write_text(folder / "picture.svg", pictures.svg);
+}
+
+}  // namespace barwall::io

@@ -1,0 +1,19 @@
+#pragma once
+
+#include <string>
+
+#include "io/results.hpp"
+
+namespace barwall::io {
+
+// The report's tables, as HTML; a table without rows is an empty text.
+
+std::string force_tables(const Results& results);
+std::string probe_tables(const Results& results);
+std::string circuit_tables(const Results& results);
+std::string part_tables(const Results& results);
+std::string check_table(const Results& results);
+std::string notice_list(const Results& results);
+std::string case_tables(const Results& results);
+
+}  // namespace barwall::io
