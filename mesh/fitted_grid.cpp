@@ -13,8 +13,8 @@ namespace {
 
 // Bounds on the spacing's slope; with slope g neighbouring intervals differ by a factor exp(g).
 constexpr double sharp_slope = 0.113;  // away from sharp corners: below ln 1.12
-constexpr double near_slope = 0.1;   // otherwise within the section
-constexpr double open_slope = 0.085;   // in the open: the far field's error goes with its square
+constexpr double near_slope = 0.09;   // otherwise within the section
+constexpr double open_slope = 0.1;   // in the open: the far field's error goes with its square
 constexpr double far_slope = 0.35;     // beyond every place where the field is asked for
 constexpr double merge_fraction = 0.3;
 constexpr int most_attempts = 12;

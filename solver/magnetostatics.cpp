@@ -1,5 +1,6 @@
 #include "solver/magnetostatics.hpp"
 
+#include <algorithm>
 #include <chrono>
 #include <cmath>
 #include <numbers>
@@ -59,7 +60,8 @@ double mean_on_circle(const Problem& problem, const Eigen::Ref<const Eigen::Vect
 void set_reference(const Problem& problem, std::span<const CurrentPattern> patterns,
                    Eigen::Ref<Eigen::MatrixXd> potential) {
   const mesh::Point centre = bounds(problem.section).centre();
-  const double radius = 5.0 * half_size(problem.section);
+  const auto& x = problem.grid->x_lines;
+  const double radius = std::min(5.0 * half_size(problem.section), 0.4 * (x.back() - x.front()));
   for (Eigen::Index c = 0; c < potential.cols(); ++c) {
     const double net = patterns[static_cast<std::size_t>(c)].net;
     const double exact = -mu_0 * net / (2.0 * std::numbers::pi) * std::log(radius);
