@@ -20,7 +20,9 @@ bool number(const std::string& text) {
 HtmlTable::HtmlTable(std::string caption, std::vector<std::string> headings)
     : caption_(std::move(caption)), headings_(std::move(headings)) {}
 
-void HtmlTable::row(const std::vector<std::string>& cells) { rows_.push_back(cells); }
+void HtmlTable::row(const std::vector<std::string>& cells) {
+  rows_.push_back(cells);
+}
 
 std::string HtmlTable::html() const {
   if (rows_.empty()) return "";
@@ -38,7 +40,8 @@ std::string HtmlTable::html() const {
       if (k == 0) {
         text += fmt::format("<th scope=\"row\">{}</th>", escaped(cell));
       } else {
-        text += fmt::format("<td{}>{}</td>", number(cell) ? " class=\"number\"" : "", escaped(cell));
+        text +=
+            fmt::format("<td{}>{}</td>", number(cell) ? " class=\"number\"" : "", escaped(cell));
       }
     }
     text += "</tr>\n";

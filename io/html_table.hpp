@@ -8,7 +8,7 @@ namespace barwall::io {
 /// A table of a page: a caption, headings, and rows whose first cell names the row. All texts
 /// are escaped.
 class HtmlTable {
- public:
+public:
   HtmlTable(std::string caption, std::vector<std::string> headings);
 
   /// A row; it may be shorter than the headings.
@@ -19,7 +19,7 @@ class HtmlTable {
   /// stand to the right, and so do the headings of those in the first row.
   std::string html() const;
 
- private:
+private:
   std::string caption_;
   std::vector<std::string> headings_;
   std::vector<std::vector<std::string>> rows_;

@@ -67,7 +67,9 @@ std::string in_words(const std::string& key) {
   return text;
 }
 
-bool is_force(const Figure& figure) { return figure.key.rfind("force_", 0) == 0; }
+bool is_force(const Figure& figure) {
+  return figure.key.rfind("force_", 0) == 0;
+}
 
 /// One table of entries: a column for each key that any of them has and `wanted` accepts.
 template <class Wanted>
@@ -115,10 +117,14 @@ std::string millimetres(mesh::Point p) {
 
 std::string in_words(solver::LimitState state) {
   switch (state) {
-    case solver::LimitState::none: return "";
-    case solver::LimitState::met: return "met";
-    case solver::LimitState::exceeded: return "exceeded";
-    case solver::LimitState::undecided: return "undecided";
+    case solver::LimitState::none:
+      return "";
+    case solver::LimitState::met:
+      return "met";
+    case solver::LimitState::exceeded:
+      return "exceeded";
+    case solver::LimitState::undecided:
+      return "undecided";
   }
   return "";
 }
@@ -159,7 +165,9 @@ std::string probe_tables(const Results& results) {
              : millimetres(found.probe.points.front());
     const Figure* at_point = find_figure(found.points.front().figures, key);
     table.row({found.probe.name, where,
-               line ? cell(key + "_max") : at_point == nullptr ? "" : shown(*at_point),
+               line                  ? cell(key + "_max")
+               : at_point == nullptr ? ""
+                                     : shown(*at_point),
                cell("limit"), cell("of_limit"), in_words(found.limit_state),
                found.probe.limit_from});
     if (line && find_figure(found.figures, "b_peak_max") != nullptr) {
@@ -195,7 +203,8 @@ std::string part_tables(const Results& results) {
 }
 
 std::string check_table(const Results& results) {
-  HtmlTable table("Self-checks of this run", {"Check", "Measured", "Limit", "Passed", "Where and what"});
+  HtmlTable table("Self-checks of this run",
+                  {"Check", "Measured", "Limit", "Passed", "Where and what"});
   for (const verify::Check& check : results.checks) {
     const auto number = [&check](double value) {
       return fmt::format("{:.3g}{}{}", value, check.unit == "1" ? "" : " ",
@@ -228,14 +237,15 @@ std::string case_tables(const Results& results) {
                              ? fmt::format("r.m.s. phasors at {:.6g} Hz",
                                            results.problem->excitation.frequency_hz)
                              : "steady"});
-  if (input.run_length_m) table.row({"Length of the run", fmt::format("{:.6g} m", *input.run_length_m)});
+  if (input.run_length_m)
+    table.row({"Length of the run", fmt::format("{:.6g} m", *input.run_length_m)});
   table.row({"Grid", fmt::format("{} x {} lines, {} nodes, {} triangles", grid.columns, grid.rows,
                                  grid.node_count(), grid.triangle_count())});
-  table.row({"Cells across", fmt::format("at least {} across every part and gap",
-                                         input.grid.cells_across)});
-  table.row({"Reach", fmt::format("{:.6g} half-sizes asked; outer boundary {:.4g} m from the middle",
-                                  input.grid.reach,
-                                  0.5 * (grid.x_lines.back() - grid.x_lines.front()))});
+  table.row({"Cells across",
+             fmt::format("at least {} across every part and gap", input.grid.cells_across)});
+  table.row(
+      {"Reach", fmt::format("{:.6g} half-sizes asked; outer boundary {:.4g} m from the middle",
+                            input.grid.reach, 0.5 * (grid.x_lines.back() - grid.x_lines.front()))});
   HtmlTable given("Given dimensions", {"Name", "Value"});
   for (const auto& [name, value] : input.given) given.row({name, fmt::format("{:.10g}", value)});
   HtmlTable materials("Materials", {"Part", "Kind", "Material", "Relative permeability"});
