@@ -1,5 +1,6 @@
 #pragma once
 
+#include <cstddef>
 #include <string>
 #include <vector>
 
@@ -9,7 +10,10 @@ namespace barwall::io {
 /// are escaped.
 class HtmlTable {
 public:
-  HtmlTable(std::string caption, std::vector<std::string> headings);
+  /// \param words columns, counted from 0, whose cells are words even where they begin with a
+  /// number
+  HtmlTable(std::string caption, std::vector<std::string> headings,
+            std::vector<std::size_t> words = {});
 
   /// A row; it may be shorter than the headings.
   void row(const std::vector<std::string>& cells);
@@ -20,8 +24,11 @@ public:
   std::string html() const;
 
 private:
+  bool number(const std::vector<std::string>& cells, std::size_t column) const;
+
   std::string caption_;
   std::vector<std::string> headings_;
+  std::vector<std::size_t> words_;
   std::vector<std::vector<std::string>> rows_;
 };
 

@@ -150,7 +150,8 @@ std::string probe_tables(const Results& results) {
   const std::string key = results.alternating() ? "b_rms" : "b";
   const std::string what = results.alternating() ? "B, r.m.s." : "|B|";
   HtmlTable table("Field at the probes",
-                  {"Probe", "Where", what, "Limit", "Share", "Limit is", "The limit's source"});
+                  {"Probe", "Where", what, "Limit", "Share", "Limit is", "The limit's source"},
+                  {1, 5, 6});
   HtmlTable peaks("Peak over the cycle on probe lines", {"Probe", in_words("b_peak_max")});
   std::vector<Entry> points;
   for (const solver::ProbeFigures& found : results.figures.probes) {
@@ -194,7 +195,7 @@ std::string part_tables(const Results& results) {
   const auto others = [](const Figure& figure) { return !is_force(figure); };
   std::vector<std::string> currents;
   for (const Entry& bar : f.bars) currents.push_back(current_text(results, bar));
-  HtmlTable gaps("Clearances", {"Between", "and", "Clearance"});
+  HtmlTable gaps("Clearances", {"Between", "and", "Clearance"}, {1});
   for (const solver::Clearance& clearance : f.clearances) {
     gaps.row({clearance.between[0], clearance.between[1], shown(clearance.gap)});
   }
@@ -204,7 +205,7 @@ std::string part_tables(const Results& results) {
 
 std::string check_table(const Results& results) {
   HtmlTable table("Self-checks of this run",
-                  {"Check", "Measured", "Limit", "Passed", "Where and what"});
+                  {"Check", "Measured", "Limit", "Passed", "Where and what"}, {3, 4});
   for (const verify::Check& check : results.checks) {
     const auto number = [&check](double value) {
       return fmt::format("{:.3g}{}{}", value, check.unit == "1" ? "" : " ",
@@ -230,7 +231,7 @@ std::string notice_list(const Results& results) {
 std::string case_tables(const Results& results) {
   const Case& input = results.input;
   const mesh::FittedGrid& grid = *results.problem->grid;
-  HtmlTable table("The case", {"What", "Value"});
+  HtmlTable table("The case", {"What", "Value"}, {1});
   table.row({"Case file", input.file});
   table.row({"SHA-256", input.sha256});
   table.row({"Currents", results.alternating()
@@ -248,7 +249,7 @@ std::string case_tables(const Results& results) {
                             input.grid.reach, 0.5 * (grid.x_lines.back() - grid.x_lines.front()))});
   HtmlTable given("Given dimensions", {"Name", "Value"});
   for (const auto& [name, value] : input.given) given.row({name, fmt::format("{:.10g}", value)});
-  HtmlTable materials("Materials", {"Part", "Kind", "Material", "Relative permeability"});
+  HtmlTable materials("Materials", {"Part", "Kind", "Material", "Relative permeability"}, {1, 2});
   for (int part : visible_parts(results.problem->outline)) {
     const auto k = static_cast<std::size_t>(part);
     const mesh::Part& p = results.problem->section.parts[k];

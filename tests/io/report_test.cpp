@@ -109,6 +109,9 @@ TEST_CASE("A table puts numbers to the right and is nothing without rows") {
   const std::string html = table.html();
   CHECK(test::count_of(html, "<th scope=\"row\">&lt;a&gt;</th>") == 1);
   CHECK(test::count_of(html, "<td class=\"number\">-1.5 mT</td><td>-x</td>") == 1);
+  io::HtmlTable worded("T", {"name", "detail"}, {1});
+  worded.row({"a", "240 points"});
+  CHECK(test::count_of(worded.html(), "<td>240 points</td>") == 1);
 }
 
 }  // namespace barwall
