@@ -15,9 +15,9 @@ namespace {
 constexpr Allowed any_current{-1e12, 1e12, true, " A"};
 constexpr Allowed any_frequency{0.0, 1e12, false, " Hz"};
 
-/// The phasor of a magnitude at an angle in degrees.
+/// The phasor of a magnitude at an angle in degrees, without negative zeros.
 std::complex<double> phasor(double magnitude, double degrees) {
-  return {magnitude * cos_degrees(degrees), magnitude * sin_degrees(degrees)};
+  return {magnitude * cos_degrees(degrees) + 0.0, magnitude * sin_degrees(degrees) + 0.0};
 }
 
 std::string title_of(const CaseParts& parts, int part) {

@@ -7,9 +7,7 @@
 #include "io/results_folder.hpp"
 #include "io/results_json.hpp"
 #include "io/run_json.hpp"
-#if __has_include("io/vtk_export.hpp")
 #include "io/vtk_export.hpp"
-#endif
 #if __has_include("io/picture.hpp")
 #include "io/picture.hpp"
 #endif
@@ -29,9 +27,7 @@ void write_results(Results& results, const fs::path& folder, bool replace) {
     write_text(to / "figures.csv", figures_csv(results));
     write_text(to / "probes.csv", probes_csv(results));
   });
-#if __has_include("io/vtk_export.hpp")
   writers.emplace_back([&](const fs::path& to) { write_vtk(results, to); });
-#endif
 #if __has_include("io/picture.hpp")
   writers.emplace_back([&](const fs::path& to) { write_pictures(results, to); });
 #endif

@@ -25,9 +25,9 @@ void add_source(Features& features, const Box& box, Point direction, double spac
   }
 }
 
-void add_width(Features& features, Point p, Point q) {
+void add_width(Features& features, Point p, Point q, double contact) {
   const double width = distance(p, q);
-  if (width == 0.0) return;
+  if (width <= contact) return;
   Box box;
   box.include(p);
   box.include(q);
@@ -35,7 +35,7 @@ void add_width(Features& features, Point p, Point q) {
 }
 
 /// The stretch over which two nearly parallel segments face each other.
-bool add_facing(Features& features, const Segment& a, const Segment& b) {
+bool add_facing(Features& features, const Segment& a, const Segment& b, double contact) {
   const Point d = a.to - a.from;
   const double size = norm(d);
   const Point along = (1.0 / size) * d;
@@ -57,13 +57,14 @@ bool add_facing(Features& features, const Segment& a, const Segment& b) {
   const double gap_from = gap_at(from);
   const double gap_to = gap_at(to);
   if (gap_from * gap_to <= 0.0) return false;
+  const double width = std::min(std::abs(gap_from), std::abs(gap_to));
+  if (width <= contact) return true;  // one line, or outlines in contact
   Box box;
   for (double s : {from, to}) {
     box.include(a.from + s * along);
     box.include(a.from + s * along + gap_at(s) * across_it);
   }
-  add_source(features, box, across_it,
-             across * std::min(std::abs(gap_from), std::abs(gap_to)));
+  add_source(features, box, across_it, across * width);
   return true;
 }
 
@@ -81,15 +82,15 @@ void add_pair(Features& features, const Curve& a, const Curve& b, double contact
   const auto* t = std::get_if<Segment>(&b);
   const bool end_in_common = share_end(a, b, contact);
   if (s != nullptr && t != nullptr) {
-    if (add_facing(features, *s, *t) || end_in_common) return;
+    if (add_facing(features, *s, *t, contact) || end_in_common) return;
     const Gap gap = gap_between(a, b);
-    add_width(features, gap.from, gap.to);
+    add_width(features, gap.from, gap.to, contact);
     return;
   }
   if (!end_in_common) {
     const Gap gap = gap_between(a, b);
     if (gap.width <= contact) return;  // outlines that touch: the cusp between them is closed
-    add_width(features, gap.from, gap.to);
+    add_width(features, gap.from, gap.to, contact);
   }
   // A curved pair: the width where it changes along the way. Where the two draw apart faster
   // than the spacing may grow the samples ask nothing, so a bounded number of them will do.
@@ -102,7 +103,7 @@ void add_pair(Features& features, const Curve& a, const Curve& b, double contact
       const Point q = at(*other, nearest_parameter(*other, p));
       if (distance(p, q) > 0.3 * length(*one)) continue;
       if (end_in_common && distance(p, q) < 0.02 * length(*one)) continue;
-      add_width(features, p, q);
+      add_width(features, p, q, contact);
     }
   }
 }

@@ -18,6 +18,7 @@ constexpr double open_slope = 0.085;   // in the open: the far field's error goe
 constexpr double far_slope = 0.35;     // beyond every place where the field is asked for
 constexpr double merge_fraction = 0.3;
 constexpr int most_attempts = 12;
+constexpr double most_lines = 1e6;
 
 /// Stretches of one axis, each within the next.
 struct Extents {
@@ -36,7 +37,15 @@ std::vector<double> lines_along(const AxisFeatures& features, int cells_across,
     spacing = smaller_of(
         spacing, SpacingFunction(features.sharp, {{{fine_low, fine_high, sharp_slope}}, far_slope}));
   }
+  const double wanted = spacing.intervals(low, high) * cells_across / 4.0;
+  if (!(wanted < most_lines)) {
+    throw GridError("the grid would have " + std::to_string(static_cast<long long>(wanted)) +
+                    " lines along one axis: the section holds gaps or widths far too small for its size");
+  }
   std::vector<double> fixed = thinned_lines(features.lines, spacing, merge_fraction);
+  // A section may reach the boundary (at a reach of 1, with its own lines there) or beyond it.
+  const double clear = 1e-9 * (high - low);
+  std::erase_if(fixed, [&](double v) { return v < low + clear || v > high - clear; });
   fixed.insert(fixed.begin(), low);
   fixed.push_back(high);
   return graded_lines(fixed, spacing, cells_across);

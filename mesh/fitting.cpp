@@ -61,6 +61,11 @@ class Fitter {
     return found != on_.end() &&
            std::find(found->second.begin(), found->second.end(), piece) != found->second.end();
   }
+  bool curved(int piece) const { return std::holds_alternative<Arc>(curve(piece)); }
+  bool on_curved(int n) const {
+    const auto& pieces = on_.at(n);
+    return std::any_of(pieces.begin(), pieces.end(), [this](int k) { return curved(k); });
+  }
   void put_on(int n, int piece) {
     auto& pieces = on_[n];
     if (std::find(pieces.begin(), pieces.end(), piece) == pieces.end()) pieces.push_back(piece);
@@ -225,12 +230,14 @@ class Fitter {
       const int near = t <= 0.5 ? a : b;
       const int far = t <= 0.5 ? b : a;
       const double share = std::min(t, 1.0 - t);
-      if (fixed(near) && share < cusp) {
+      if (fixed(near) && share < cusp && (curved(piece) || on_curved(near))) {
         put_on(near, piece);
       } else if (!fixed(near) && may_move(near, target, least_area)) {
         move(near, target, piece);
       } else if (!fixed(far) && may_move(far, target, least_area)) {
         move(far, target, piece);
+      } else if (fixed(near) && share < cusp) {
+        put_on(near, piece);
       } else {
         fault_beside(a, b);
       }

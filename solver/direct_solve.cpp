@@ -137,6 +137,10 @@ class DirectSystem final : public PreparedSystem<double> {
       residual.row(j * stencil_.columns).setZero();
       residual.row((j + 1) * stencil_.columns - 1).setZero();
     }
+    // Comparisons would pass over them.
+    if (!residual.allFinite()) {
+      throw SolveError("the direct solve met values that are not finite numbers");
+    }
   }
 
   /// True when no residual exceeds what rounding leaves in the sum of a row's terms.

@@ -1,9 +1,12 @@
 #include "solver/magnetostatics.hpp"
 
+#include <algorithm>
 #include <chrono>
 #include <cmath>
 #include <numbers>
 #include <set>
+#include <span>
+#include <stdexcept>
 
 #include "mesh/sampling.hpp"
 #include "solver/assembly.hpp"
@@ -54,10 +57,11 @@ double mean_on_circle(const Problem& problem, const Eigen::Ref<const Eigen::Vect
 /// Sets the constant of A anew where the grid is fine: beyond, it is so coarse that a net
 /// current's logarithm gathers an error. On a circle round all currents, free and bound, the
 /// mean of A is that of the net current at any place inside (mean value property), exactly.
-void set_reference(const Problem& problem, const std::vector<CurrentPattern>& patterns,
-                   Eigen::MatrixXd& potential) {
+void set_reference(const Problem& problem, std::span<const CurrentPattern> patterns,
+                   Eigen::Ref<Eigen::MatrixXd> potential) {
   const mesh::Point centre = bounds(problem.section).centre();
-  const double radius = 5.0 * half_size(problem.section);
+  const auto& x = problem.grid->x_lines;
+  const double radius = std::min(5.0 * half_size(problem.section), 0.4 * (x.back() - x.front()));
   for (Eigen::Index c = 0; c < potential.cols(); ++c) {
     const double net = patterns[static_cast<std::size_t>(c)].net;
     const double exact = -mu_0 * net / (2.0 * std::numbers::pi) * std::log(radius);
@@ -67,7 +71,16 @@ void set_reference(const Problem& problem, const std::vector<CurrentPattern>& pa
 
 }  // namespace
 
+SolveReport solve_nodes(const mesh::FittedGrid& grid, const std::vector<double>& reluctivity,
+                        const Eigen::MatrixXd& current, Eigen::MatrixXd& potential,
+                        double tolerance) {
+  return prepare(assemble_operator(grid, reluctivity))->solve(current, potential, tolerance);
+}
+
 Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& options) {
+  if (options.boundary && problem->excitation.alternating()) {
+    throw std::invalid_argument("boundary values are given for steady currents alone");
+  }
   Solution solution;
   const mesh::FittedGrid& grid = *problem->grid;
   solution.patterns = load_patterns(*problem);
@@ -89,20 +102,22 @@ Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& optio
   for (Eigen::Index c = 0; c < columns; ++c) {
     const CurrentPattern& pattern = all[static_cast<std::size_t>(c)];
     rhs.col(c) = assemble_current(grid, density_by_region(*problem, pattern.part_current));
-    if (pattern.net == 0.0) continue;
+    const bool given = options.boundary && c == 0;
+    if (pattern.net == 0.0 && !given) continue;
     for (int n = 0; n < grid.node_count(); ++n) {
       if (grid.on_boundary(n)) {
-        x(n, c) = pattern.boundary_value(grid.nodes[static_cast<std::size_t>(n)]);
+        const mesh::Point at = grid.nodes[static_cast<std::size_t>(n)];
+        x(n, c) = given ? options.boundary(at) : pattern.boundary_value(at);
       }
     }
   }
-  const auto stencil = assemble_operator(grid, solution.reluctivity);
   const auto start = std::chrono::steady_clock::now();
-  const auto prepared = prepare(stencil);
-  solution.report = prepared->solve(rhs, x, options.tolerance);
+  solution.report = solve_nodes(grid, solution.reluctivity, rhs, x, options.tolerance);
   solution.linear_seconds =
       std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
-  set_reference(*problem, all, x);
+  const Eigen::Index kept = options.boundary ? 1 : 0;
+  set_reference(*problem, std::span(all).subspan(static_cast<std::size_t>(kept)),
+                x.rightCols(columns - kept));
   const auto loads = static_cast<Eigen::Index>(solution.patterns.size());
   solution.potential = x.leftCols(loads);
   solution.unit_potential = x.rightCols(columns - loads);

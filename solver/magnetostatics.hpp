@@ -1,7 +1,9 @@
 #pragma once
 
 #include <Eigen/Dense>
+#include <functional>
 #include <memory>
+#include <vector>
 
 #include "solver/linear_solve.hpp"
 #include "solver/open_boundary.hpp"
@@ -30,9 +32,25 @@ struct Solution {
 
 struct SolveOptions {
   double tolerance = 1e-12;  ///< on the relative residual
+  /// A at the nodes of the outer boundary [Wb/m] in place of the open boundary's values, for steady
+  /// currents alone; A then keeps the constant that these values give it. Fields of 1 A in a bar
+  /// have the open boundary always.
+  std::function<double(mesh::Point)> boundary;
 };
 
+/// The equations of the scheme, as they are: at every node within the boundary the flux of
+/// H = nu grad A out of its control cell, with the current through it, adds up to nothing.
+/// \param reluctivity per triangle [m/H]
+/// \param current through each node's control cell [A], all nodes, a column per right-hand side;
+///        boundary rows are not read
+/// \param potential in: A at the boundary nodes; out: A at all nodes [Wb/m]
 /// \throws SolveError
+SolveReport solve_nodes(const mesh::FittedGrid& grid, const std::vector<double>& reluctivity,
+                        const Eigen::MatrixXd& current, Eigen::MatrixXd& potential,
+                        double tolerance = 1e-12);
+
+/// \throws SolveError
+/// \throws std::invalid_argument when boundary values are given for currents that alternate
 Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& options = {});
 
 }  // namespace barwall::solver

@@ -73,7 +73,7 @@ TEST_CASE("Wrong input and wrong usage exit with 2 and write nothing") {
     CHECK_FALSE(run.err.empty());
     CHECK(test::names_in(scratch.path()) == before);
   }
-  CHECK(run_barwall(scratch.path(), "solve bad.toml").err.find("bad.toml:29:1") !=
+  CHECK(run_barwall(scratch.path(), "solve bad.toml").err.find("bad.toml:27:1") !=
         std::string::npos);
 }
 

@@ -1,0 +1,26 @@
+#pragma once
+
+#include <filesystem>
+
+#include "io/results.hpp"
+
+namespace barwall::io {
+
+// The single files of write_vtk, each \throws WriteError.
+
+/// field.vtu and field_far.vtu.
+void write_field(const Results& results, const std::filesystem::path& folder);
+/// outlines.vtp: a polyline per outline piece; of a circle no chord is farther than 4e-5 of the
+/// radius from it.
+void write_outlines(const Results& results, const std::filesystem::path& folder);
+/// flux_lines.vtp: 40 levels of A in the box that field.vtu covers round the section.
+void write_flux_lines(const Results& results, const std::filesystem::path& folder);
+/// forces.vtp: a point for every bar, wall and body whose force is given.
+void write_forces(const Results& results, const std::filesystem::path& folder);
+/// probes.vtp: the probes' points, those of a line joined.
+void write_probes(const Results& results, const std::filesystem::path& folder);
+
+/// The section's box alone, 3 section sizes to every side of its centre [m].
+mesh::Box section_surroundings(const Results& results);
+
+}  // namespace barwall::io
