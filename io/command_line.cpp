@@ -11,6 +11,7 @@
 #include <memory>
 #include <new>
 
+#include "io/blas_memory.hpp"
 #include "io/input_error.hpp"
 #include "io/plain_table.hpp"
 #include "io/progress.hpp"
@@ -78,6 +79,7 @@ int solve_case(const Request& request) {
   Case input = read_case(request.file, settings_of(request));
   const auto folder = folder_of(request, input);
   check_folder(folder, input, Contents::results, request.replace);
+  claim_blas_memory();
   Progress progress = progress_for(request);
   Results results = run_case(std::move(input), [&](const std::string& s) { progress.stage(s); });
   progress.stage("files");
@@ -109,6 +111,7 @@ int draw_case(const Request& request) {
 
 int verify_case(const Request& request) {
   Case input = read_case(request.file, settings_of(request));
+  claim_blas_memory();
   Progress progress = progress_for(request);
   const Results results =
       run_case(std::move(input), [&](const std::string& s) { progress.stage(s); });
@@ -205,6 +208,8 @@ int run_program(int argc, char** argv) {
     return 2;
   }
   if (request.threads > 0) omp_set_num_threads(request.threads);
+  // Serial even where a library asks for a number of its own.
+  if (request.threads == 1) omp_set_max_active_levels(0);
   return guarded([&] {
     if (solve->parsed()) return solve_case(request);
 #if __has_include("io/picture.hpp")
