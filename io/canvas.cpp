@@ -176,12 +176,15 @@ void Canvas::begin_clip(const PageBox& box) {
   cairo_clip(state_->cairo);
 }
 
-void Canvas::end_clip() { cairo_restore(state_->cairo); }
+void Canvas::end_clip() {
+  cairo_restore(state_->cairo);
+}
 
 std::string Canvas::bytes() {
   State& s = *state_;
   check(cairo_status(s.cairo));
-  if (kind_ == Kind::png) check(cairo_surface_write_to_png_stream(s.surface, append_bytes, &s.bytes));
+  if (kind_ == Kind::png)
+    check(cairo_surface_write_to_png_stream(s.surface, append_bytes, &s.bytes));
   cairo_surface_finish(s.surface);
   check(cairo_surface_status(s.surface));
   return kind_ == Kind::svg ? with_plain_ids(s.bytes) : std::move(s.bytes);

@@ -29,8 +29,8 @@ struct TextStyle {
   Align align = Align::start;
   bool bold = false;
   Colour colour{0.1, 0.1, 0.12, 1.0};
-  double backing = 0.0;        ///< a white box behind the text, so far beyond it
-  bool upwards = false;        ///< turned by a quarter, to be read from the right
+  double backing = 0.0;  ///< a white box behind the text, so far beyond it
+  bool upwards = false;  ///< turned by a quarter, to be read from the right
 };
 
 /// A picture of opaque pixels 0x00RRGGBB, rows from the top.
@@ -42,7 +42,7 @@ struct Bitmap {
 
 /// A page to draw on; one drawing code serves bitmaps, SVG and PDF.
 class Canvas {
- public:
+public:
   enum class Kind { png, svg, pdf };
 
   /// A white page of width x height pixels.
@@ -75,7 +75,7 @@ class Canvas {
   /// std::runtime_error when drawing failed
   std::string bytes();
 
- private:
+private:
   struct State;
   Kind kind_;
   int width_;

@@ -12,6 +12,8 @@
 #include <new>
 
 #include "io/input_error.hpp"
+#include "io/ladder_table.hpp"
+#include "io/memory.hpp"
 #include "io/plain_table.hpp"
 #include "io/progress.hpp"
 #include "io/results.hpp"
@@ -19,9 +21,6 @@
 #include "io/results_folder.hpp"
 #include "io/summary.hpp"
 #include "io/version.hpp"
-#if __has_include("io/ladder_table.hpp")
-#include "io/ladder_table.hpp"
-#endif
 
 namespace barwall::io {
 namespace {
@@ -78,6 +77,7 @@ int solve_case(const Request& request) {
   Case input = read_case(request.file, settings_of(request));
   const auto folder = folder_of(request, input);
   check_folder(folder, input, Contents::results, request.replace);
+  claim_blas_memory();
   Progress progress = progress_for(request);
   Results results = run_case(std::move(input), [&](const std::string& s) { progress.stage(s); });
   progress.stage("files");
@@ -87,7 +87,6 @@ int solve_case(const Request& request) {
   return results.exit_code();
 }
 
-#if __has_include("io/picture.hpp")
 int draw_case(const Request& request) {
   const Case input = read_case(request.file, settings_of(request));
   const auto folder = folder_of(request, input);
@@ -105,10 +104,10 @@ int draw_case(const Request& request) {
   }
   return 0;
 }
-#endif
 
 int verify_case(const Request& request) {
   Case input = read_case(request.file, settings_of(request));
+  claim_blas_memory();
   Progress progress = progress_for(request);
   const Results results =
       run_case(std::move(input), [&](const std::string& s) { progress.stage(s); });
@@ -120,15 +119,14 @@ int verify_case(const Request& request) {
   return results.exit_code();
 }
 
-#if __has_include("io/ladder_table.hpp")
 int verify_ladder(const Request& request) {
+  claim_blas_memory();
   if (!request.quiet) return print_ladder(stdout);
   const std::unique_ptr<std::FILE, int (*)(std::FILE*)> nowhere(std::fopen("/dev/null", "w"),
                                                                 std::fclose);
   if (!nowhere) throw WriteError("/dev/null cannot be opened");
   return print_ladder(nowhere.get());
 }
-#endif
 
 /// The exit code of a run, its errors reported.
 template <class Run>
@@ -205,17 +203,13 @@ int run_program(int argc, char** argv) {
     return 2;
   }
   if (request.threads > 0) omp_set_num_threads(request.threads);
+  // Serial even where a library asks for a number of its own.
+  if (request.threads == 1) omp_set_max_active_levels(0);
   return guarded([&] {
     if (solve->parsed()) return solve_case(request);
-#if __has_include("io/picture.hpp")
     if (draw->parsed()) return draw_case(request);
-#endif
     if (!verify_file->empty()) return verify_case(request);
-#if __has_include("io/ladder_table.hpp")
     return verify_ladder(request);
-#else
-    throw std::runtime_error("this build is without the part that was asked for");
-#endif
   });
 }
 

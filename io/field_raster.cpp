@@ -17,7 +17,7 @@ std::array<int, 2> cells_between(const std::vector<double>& lines, double low, d
 }
 
 class Painter {
- public:
+public:
   Painter(const Results& results, FieldRaster& raster)
       : grid_(*results.problem->grid),
         field_(*results.field),
@@ -29,8 +29,8 @@ class Painter {
   void paint(int from, int to) const {
     const mesh::Box& w = raster_.window;
     const auto columns = cells_between(grid_.x_lines, w.low.x, w.high.x);
-    const auto rows = cells_between(grid_.y_lines, w.high.y - to * pixel_.y,
-                                    w.high.y - from * pixel_.y);
+    const auto rows =
+        cells_between(grid_.y_lines, w.high.y - to * pixel_.y, w.high.y - from * pixel_.y);
     for (int j = rows[0]; j <= rows[1]; ++j) {
       for (int i = columns[0]; i <= columns[1]; ++i) {
         const int cell = j * (grid_.columns - 1) + i;
@@ -40,7 +40,7 @@ class Painter {
     }
   }
 
- private:
+private:
   void triangle(int t, int from, int to) const {
     const auto p = grid_.corners(t);
     mesh::Box box;
@@ -95,7 +95,8 @@ FieldRaster field_raster(const Results& results, const mesh::Box& window, int wi
   const Painter painter(results, raster);
   constexpr int band = 32;
 #pragma omp parallel for schedule(dynamic)
-  for (int from = 0; from < height; from += band) painter.paint(from, std::min(height, from + band));
+  for (int from = 0; from < height; from += band)
+    painter.paint(from, std::min(height, from + band));
   return raster;
 }
 

@@ -113,10 +113,9 @@ void draw_arrow(Canvas& canvas, PagePoint from, PagePoint to) {
   const double half_head = 0.42 * head;
   const double half_shaft = std::min(3.2, 0.2 * head);
   const PagePoint neck = to - head * along;
-  const std::vector<PagePoint> shape = {from + half_shaft * aside, neck + half_shaft * aside,
-                                        neck + half_head * aside,  to,
-                                        neck - half_head * aside,  neck - half_shaft * aside,
-                                        from - half_shaft * aside};
+  const std::vector<PagePoint> shape = {
+      from + half_shaft * aside, neck + half_shaft * aside, neck + half_head * aside, to,
+      neck - half_head * aside,  neck - half_shaft * aside, from - half_shaft * aside};
   canvas.line(shape, {{1.0, 1.0, 1.0, 0.95}, 3.5, {}}, true);
   // Vermilion of M. Okabe and K. Ito's palette for every kind of colour vision, 2008.
   canvas.fill({shape}, colour_of(0xd55e00));

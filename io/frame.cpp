@@ -46,8 +46,9 @@ void draw_axes(Canvas& canvas, const Frame& frame, double text_size) {
   // One step for both axes where that leaves enough labels on the shorter one.
   const double step = std::max(x_ticks.step, y_ticks.step);
   const auto places = [&](const RoundTicks& own, double low, double high) {
-    return (high - low) / step < 2.0 ? own : round_ticks(low, high, static_cast<int>(
-        std::ceil((high - low) / step)));
+    return (high - low) / step < 2.0
+               ? own
+               : round_ticks(low, high, static_cast<int>(std::ceil((high - low) / step)));
   };
   double widest = 0.0;
   for (double x : places(x_ticks, w.low.x / millimetre, w.high.x / millimetre).places) {

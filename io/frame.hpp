@@ -12,7 +12,8 @@ struct Frame {
 
   double scale() const { return box.width() / window.width(); }  ///< pixels per metre
   PagePoint page(mesh::Point p) const {
-    return {box.low.x + (p.x - window.low.x) * scale(), box.high.y - (p.y - window.low.y) * scale()};
+    return {box.low.x + (p.x - window.low.x) * scale(),
+            box.high.y - (p.y - window.low.y) * scale()};
   }
   mesh::Point section(PagePoint p) const {
     return {window.low.x + (p.x - box.low.x) / scale(),

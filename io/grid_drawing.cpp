@@ -91,9 +91,9 @@ void draw_grid(Canvas& canvas, const mesh::FittedGrid& grid, const Frame& frame,
 Frame finest_detail(const solver::Problem& problem, const PageBox& box) {
   const mesh::FittedGrid& grid = *problem.grid;
   const auto spacing_at = [](const std::vector<double>& lines, double v) {
-    const auto k = std::clamp<std::ptrdiff_t>(
-        std::upper_bound(lines.begin(), lines.end(), v) - lines.begin(), 1,
-        static_cast<std::ptrdiff_t>(lines.size()) - 1);
+    const auto k =
+        std::clamp<std::ptrdiff_t>(std::upper_bound(lines.begin(), lines.end(), v) - lines.begin(),
+                                   1, static_cast<std::ptrdiff_t>(lines.size()) - 1);
     return lines[static_cast<std::size_t>(k)] - lines[static_cast<std::size_t>(k) - 1];
   };
   std::vector<mesh::Point> places = problem.outline.vertices;
@@ -114,7 +114,8 @@ Frame finest_detail(const solver::Problem& problem, const PageBox& box) {
       finest = p;
     }
   }
-  // Wide enough for the thickness of the part there, so that its surroundings show.
+  // High enough for the thickness of the part there and some of its surroundings, but not for
+  // so many cells that they cannot be told apart.
   double thin = HUGE_VAL;
   for (const mesh::OutlinePiece& piece : problem.outline.pieces) {
     if (distance(piece.curve, finest) > problem.outline.contact) continue;
@@ -124,8 +125,10 @@ Frame finest_detail(const solver::Problem& problem, const PageBox& box) {
       thin = std::min(thin, thickness(part.pieces[static_cast<std::size_t>(side.piece)]));
     }
   }
-  if (!std::isfinite(thin)) thin = 20.0 * std::sqrt(least);
-  const double metres = 3.0 * thin / box.height();  // per pixel
+  const double spacing = std::sqrt(least);
+  if (!std::isfinite(thin)) thin = 20.0 * spacing;
+  const double height = std::min(3.0 * thin, std::max(1.8 * thin, 30.0 * spacing));
+  const double metres = height / box.height();  // per pixel
   const mesh::Point half{0.5 * metres * box.width(), 0.5 * metres * box.height()};
   return {{finest - half, finest + half}, box};
 }

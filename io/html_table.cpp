@@ -2,12 +2,14 @@
 
 #include <fmt/format.h>
 
+#include <algorithm>
+
 #include "io/printable_text.hpp"
 
 namespace barwall::io {
 namespace {
 
-bool number(const std::string& text) {
+bool begins_with_number(const std::string& text) {
   if (text.empty()) return false;
   const char first = text[0];
   const bool signed_number = (first == '-' || first == '+') && text.size() > 1;
@@ -17,16 +19,24 @@ bool number(const std::string& text) {
 
 }  // namespace
 
-HtmlTable::HtmlTable(std::string caption, std::vector<std::string> headings)
-    : caption_(std::move(caption)), headings_(std::move(headings)) {}
+HtmlTable::HtmlTable(std::string caption, std::vector<std::string> headings,
+                     std::vector<std::size_t> words)
+    : caption_(std::move(caption)), headings_(std::move(headings)), words_(std::move(words)) {}
 
-void HtmlTable::row(const std::vector<std::string>& cells) { rows_.push_back(cells); }
+bool HtmlTable::number(const std::vector<std::string>& cells, std::size_t column) const {
+  const bool worded = std::find(words_.begin(), words_.end(), column) != words_.end();
+  return column > 0 && column < cells.size() && !worded && begins_with_number(cells[column]);
+}
+
+void HtmlTable::row(const std::vector<std::string>& cells) {
+  rows_.push_back(cells);
+}
 
 std::string HtmlTable::html() const {
   if (rows_.empty()) return "";
   std::string text = fmt::format("<table>\n<caption>{}</caption>\n<thead><tr>", escaped(caption_));
   for (std::size_t k = 0; k < headings_.size(); ++k) {
-    const bool right = k > 0 && k < rows_.front().size() && number(rows_.front()[k]);
+    const bool right = number(rows_.front(), k);
     text += fmt::format("<th scope=\"col\"{}>{}</th>", right ? " class=\"number\"" : "",
                         escaped(headings_[k]));
   }
@@ -38,7 +48,8 @@ std::string HtmlTable::html() const {
       if (k == 0) {
         text += fmt::format("<th scope=\"row\">{}</th>", escaped(cell));
       } else {
-        text += fmt::format("<td{}>{}</td>", number(cell) ? " class=\"number\"" : "", escaped(cell));
+        text += fmt::format("<td{}>{}</td>", number(cells, k) ? " class=\"number\"" : "",
+                            escaped(cell));
       }
     }
     text += "</tr>\n";

@@ -1,5 +1,6 @@
 #pragma once
 
+#include <cstddef>
 #include <string>
 #include <vector>
 
@@ -8,8 +9,11 @@ namespace barwall::io {
 /// A table of a page: a caption, headings, and rows whose first cell names the row. All texts
 /// are escaped.
 class HtmlTable {
- public:
-  HtmlTable(std::string caption, std::vector<std::string> headings);
+public:
+  /// \param words columns, counted from 0, whose cells are words even where they begin with a
+  /// number
+  HtmlTable(std::string caption, std::vector<std::string> headings,
+            std::vector<std::size_t> words = {});
 
   /// A row; it may be shorter than the headings.
   void row(const std::vector<std::string>& cells);
@@ -19,9 +23,12 @@ class HtmlTable {
   /// stand to the right, and so do the headings of those in the first row.
   std::string html() const;
 
- private:
+private:
+  bool number(const std::vector<std::string>& cells, std::size_t column) const;
+
   std::string caption_;
   std::vector<std::string> headings_;
+  std::vector<std::size_t> words_;
   std::vector<std::vector<std::string>> rows_;
 };
 

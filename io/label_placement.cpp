@@ -7,10 +7,11 @@
 namespace barwall::io {
 namespace {
 
-constexpr double label_gap = 4.0;    ///< between labels, and from label to part
-constexpr double beside = 6.0;       ///< a label this near to its part is clearly its own
-constexpr double leader_from = 14.0; ///< a label further than this from its part gets a leader
+constexpr double label_gap = 4.0;     ///< between labels, and from label to part
+constexpr double beside = 6.0;        ///< a label this near to its part is clearly its own
+constexpr double leader_from = 14.0;  ///< a label further than this from its part gets a leader
 constexpr double sample_step = 6.0;
+constexpr double square = 32.0;
 
 PageBox box_at(double left, double top, double width, double height) {
   return {{left, top}, {left + width, top + height}};
@@ -87,6 +88,26 @@ bool close(const PageBox& a, const PageBox& b, double gap) {
          b.low.y < a.high.y + gap;
 }
 
+LabelPlacement::LabelPlacement(const PageBox& bounds)
+    : bounds_(bounds),
+      columns_(1 + static_cast<int>(bounds.width() / square)),
+      rows_(1 + static_cast<int>(bounds.height() / square)),
+      avoided_(static_cast<std::size_t>(columns_ * rows_)) {}
+
+template <class Function>
+void LabelPlacement::each_avoided(const PageBox& box, const Function& function) const {
+  const auto index = [](double offset, int count) {
+    return std::clamp(static_cast<int>(std::floor(offset / square)), 0, count - 1);
+  };
+  const PagePoint low = box.low - bounds_.low;
+  const PagePoint high = box.high - bounds_.low;
+  for (int row = index(low.y, rows_); row <= index(high.y, rows_); ++row) {
+    for (int column = index(low.x, columns_); column <= index(high.x, columns_); ++column) {
+      for (PagePoint p : avoided_[static_cast<std::size_t>(row * columns_ + column)]) function(p);
+    }
+  }
+}
+
 void LabelPlacement::block_line(PagePoint from, PagePoint to, double half_width) {
   const int pieces = std::max(1, static_cast<int>(distance(from, to) / sample_step));
   const PagePoint half{half_width, half_width};
@@ -101,7 +122,11 @@ void LabelPlacement::avoid_line(const std::vector<PagePoint>& points) {
     const double length = distance(points[k - 1], points[k]);
     const int pieces = std::clamp(static_cast<int>(length / sample_step), 1, 1000);
     for (int m = 0; m < pieces; ++m) {
-      avoided_.push_back(between(points[k - 1], points[k], static_cast<double>(m) / pieces));
+      const PagePoint p = between(points[k - 1], points[k], static_cast<double>(m) / pieces);
+      if (!bounds_.contains(p)) continue;
+      const auto column = static_cast<std::size_t>((p.x - bounds_.low.x) / square);
+      const auto row = static_cast<std::size_t>((p.y - bounds_.low.y) / square);
+      avoided_[row * static_cast<std::size_t>(columns_) + column].push_back(p);
     }
   }
 }
@@ -120,19 +145,22 @@ bool LabelPlacement::nearer_to_another(const PageBox& box, double own,
                                        const std::vector<PagePoint>& edge) const {
   // Points of the part's own outline are among those to avoid.
   constexpr double same = 0.51 * sample_step;
-  return std::any_of(avoided_.begin(), avoided_.end(), [&](PagePoint p) {
-    if (distance(nearest_in(box, p), p) >= own - 1.0) return false;
-    return std::none_of(edge.begin(), edge.end(),
-                        [&](PagePoint q) { return distance(p, q) <= same; });
+  const PagePoint reach{own, own};
+  bool found = false;
+  each_avoided({box.low - reach, box.high + reach}, [&](PagePoint p) {
+    if (found || distance(nearest_in(box, p), p) >= own - 1.0) return;
+    found =
+        std::none_of(edge.begin(), edge.end(), [&](PagePoint q) { return distance(p, q) <= same; });
   });
+  return found;
 }
 
 double LabelPlacement::disturbance(const PageBox& box) const {
-  const auto count = std::count_if(avoided_.begin(), avoided_.end(), [&](PagePoint p) {
-    return p.x > box.low.x - 2.0 && p.x < box.high.x + 2.0 && p.y > box.low.y - 2.0 &&
-           p.y < box.high.y + 2.0;
-  });
-  return std::min(8.0, 0.8 * static_cast<double>(count));
+  const PagePoint slack{2.0, 2.0};
+  const PageBox wider{box.low - slack, box.high + slack};
+  int count = 0;
+  each_avoided(wider, [&](PagePoint p) { count += wider.contains(p) ? 1 : 0; });
+  return std::min(8.0, 0.8 * count);
 }
 
 std::optional<LabelPlacement::Label> LabelPlacement::place(double width, double height,

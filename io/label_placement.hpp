@@ -14,9 +14,9 @@ bool close(const PageBox& a, const PageBox& b, double gap);
 /// Finds free places for labels on a page, each in turn: never on another label, a mark or an
 /// arrow, and rather not on an outline.
 class LabelPlacement {
- public:
+public:
   /// \param bounds labels stay within it
-  explicit LabelPlacement(const PageBox& bounds) : bounds_(bounds) {}
+  explicit LabelPlacement(const PageBox& bounds);
 
   /// Nothing may be put here.
   void block(const PageBox& box) { blocked_.push_back(box); }
@@ -37,16 +37,22 @@ class LabelPlacement {
   std::optional<Label> place(double width, double height, const PageBox& about, bool within,
                              const std::vector<PagePoint>& edge);
 
- private:
+private:
   bool free(const PageBox& box) const;
   double disturbance(const PageBox& box) const;
   /// Another outline comes nearer to the box than `own` pixels.
   bool nearer_to_another(const PageBox& box, double own, const std::vector<PagePoint>& edge) const;
 
+  /// Tells a function of every point to avoid in the squares that a box touches.
+  template <class Function>
+  void each_avoided(const PageBox& box, const Function& function) const;
+
   PageBox bounds_;
   std::vector<PageBox> blocked_;
   std::vector<PageBox> blocked_lines_;
-  std::vector<PagePoint> avoided_;
+  int columns_;
+  int rows_;
+  std::vector<std::vector<PagePoint>> avoided_;  ///< by squares of the page, row by row
 };
 
 }  // namespace barwall::io

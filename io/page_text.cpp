@@ -5,7 +5,9 @@
 namespace barwall::io {
 namespace {
 
-bool follows(char byte) { return (static_cast<unsigned char>(byte) & 0xc0u) == 0x80u; }
+bool follows(char byte) {
+  return (static_cast<unsigned char>(byte) & 0xc0u) == 0x80u;
+}
 
 }  // namespace
 

@@ -4,8 +4,8 @@
 
 #include <algorithm>
 #include <cmath>
-#include <future>
 #include <fstream>
+#include <future>
 #include <numbers>
 
 #include "io/field_raster.hpp"
@@ -41,8 +41,7 @@ struct Scene {
 
 Scene scene_of(const Results& results) {
   Scene scene;
-  scene.frame = frame_round(bounds(results.problem->section), {left_margin, heading_height},
-                            frame_width, least_height, largest_height);
+  scene.frame = picture_frame(results.problem->section);
   scene.raster = field_raster(results, scene.frame.window, frame_width,
                               static_cast<int>(scene.frame.box.height()));
   scene.scale = log_scale_of(scene.raster.magnitude);
@@ -219,9 +218,10 @@ std::string flux_line_note(const Scene& scene, bool alternating) {
                         unit.name);
   }
   if (alternating) {
-    note += fmt::format("; they and the currents' signs at \u03c9t = {:.1f}\u00b0, when the "
-                        "field's energy is largest",
-                        scene.instant * 180.0 / std::numbers::pi);
+    note += fmt::format(
+        "; they and the currents' signs at \u03c9t = {:.1f}\u00b0, when the "
+        "field's energy is largest",
+        scene.instant * 180.0 / std::numbers::pi);
   }
   return note + ".";
 }
@@ -259,8 +259,8 @@ std::string drawn(Canvas::Kind kind, const Results& results, const Scene& scene,
 
   const double bar_top = bottom + 112.0;
   const double key_left = page_width - 440.0;
-  draw_colour_bar(canvas, scene.scale, scene.raster, {{left_margin + 16.0, bar_top}, {key_left - 70.0, bar_top + 28.0}},
-                  alternating);
+  draw_colour_bar(canvas, scene.scale, scene.raster,
+                  {{left_margin + 16.0, bar_top}, {key_left - 70.0, bar_top + 28.0}}, alternating);
   draw_force_key(canvas, scene.arrow_scale, {key_left, bar_top - 12.0}, alternating);
   TextStyle small;
   small.size = 18.0;
@@ -274,12 +274,16 @@ std::string drawn(Canvas::Kind kind, const Results& results, const Scene& scene,
 
 }  // namespace
 
+Frame picture_frame(const mesh::Section& section) {
+  return frame_round(bounds(section), {left_margin, heading_height}, frame_width, least_height,
+                     largest_height);
+}
+
 Pictures draw_pictures(const Results& results) {
   const Scene scene = scene_of(results);
   const Bitmap bitmap = coloured(scene.raster, scene.scale);
-  auto svg = std::async(std::launch::async, [&] {
-    return drawn(Canvas::Kind::svg, results, scene, bitmap);
-  });
+  auto svg = std::async(std::launch::async,
+                        [&] { return drawn(Canvas::Kind::svg, results, scene, bitmap); });
   std::string png = drawn(Canvas::Kind::png, results, scene, bitmap);
   return {std::move(png), svg.get()};
 }

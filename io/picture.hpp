@@ -3,6 +3,7 @@
 #include <filesystem>
 #include <string>
 
+#include "io/frame.hpp"
 #include "io/results.hpp"
 
 namespace barwall::io {
@@ -12,6 +13,9 @@ struct Pictures {
   std::string png;
   std::string svg;
 };
+
+/// Where on its page a picture of results shows the section.
+Frame picture_frame(const mesh::Section& section);
 
 /// The section with |B| (with a frequency its r.m.s.) in colours on a logarithmic scale, flux
 /// lines, outlines, names, the currents' signs, forces and axes in millimetres.

@@ -68,20 +68,19 @@ std::string state_boxes(const Results& results) {
   const auto passed = std::count_if(results.checks.begin(), results.checks.end(),
                                     [](const verify::Check& check) { return check.passed; });
   const std::string count = fmt::format("{} of {} checks passed: ", passed, results.checks.size());
-  const std::string limits_mean =
-      limits == "none"       ? "no limit was set"
-      : limits == "met"      ? "every limit is met"
-      : limits == "exceeded" ? "at least one limit is exceeded"
-                             : "the numerical uncertainty does not let a limit be decided";
+  const std::string limits_mean = limits == "none"  ? "no limit was set"
+                                  : limits == "met" ? "every limit is met"
+                                  : limits == "exceeded"
+                                      ? "at least one limit is exceeded"
+                                      : "the numerical uncertainty does not let a limit be decided";
   return "<dl class=\"state\">\n" +
          state_box("Verdict", verdict,
                    count + (verdict == "sound" ? "the numbers are right for the model"
                                                : "do not use the numbers"),
                    verdict != "sound") +
          state_box("Validity", validity,
-                   validity == "full"
-                       ? "no notice speaks against the model for this case"
-                       : "the model fits this case only roughly: see the notices",
+                   validity == "full" ? "no notice speaks against the model for this case"
+                                      : "the model fits this case only roughly: see the notices",
                    validity != "full") +
          state_box("Limits", limits, limits_mean, limits == "exceeded" || limits == "undecided") +
          "</dl>\n";
@@ -89,8 +88,8 @@ std::string state_boxes(const Results& results) {
 
 std::string section(const std::string& heading, const std::string& content) {
   if (content.empty()) return "";
-  return fmt::format("<section>\n<h2>{}</h2>\n<div class=\"wide\">\n{}</div>\n</section>\n", heading,
-                     content);
+  return fmt::format("<section>\n<h2>{}</h2>\n<div class=\"wide\">\n{}</div>\n</section>\n",
+                     heading, content);
 }
 
 constexpr const char* explanations_of_forces =
@@ -129,7 +128,8 @@ std::string file_bytes(const std::filesystem::path& file) {
 
 std::string shown(const solver::Figure& figure) {
   if (!std::isfinite(figure.value)) return "-";
-  if (figure.unit == "deg") return fmt::format("{:.1f}°", std::round(10.0 * figure.value) / 10.0 + 0.0);
+  if (figure.unit == "deg")
+    return fmt::format("{:.1f}°", std::round(10.0 * figure.value) / 10.0 + 0.0);
   if (figure.unit == "1") return fmt::format("{:.4g} %", 100.0 * figure.value);
   return quantity_text(figure);
 }

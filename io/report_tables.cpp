@@ -67,7 +67,9 @@ std::string in_words(const std::string& key) {
   return text;
 }
 
-bool is_force(const Figure& figure) { return figure.key.rfind("force_", 0) == 0; }
+bool is_force(const Figure& figure) {
+  return figure.key.rfind("force_", 0) == 0;
+}
 
 /// One table of entries: a column for each key that any of them has and `wanted` accepts.
 template <class Wanted>
@@ -115,10 +117,14 @@ std::string millimetres(mesh::Point p) {
 
 std::string in_words(solver::LimitState state) {
   switch (state) {
-    case solver::LimitState::none: return "";
-    case solver::LimitState::met: return "met";
-    case solver::LimitState::exceeded: return "exceeded";
-    case solver::LimitState::undecided: return "undecided";
+    case solver::LimitState::none:
+      return "";
+    case solver::LimitState::met:
+      return "met";
+    case solver::LimitState::exceeded:
+      return "exceeded";
+    case solver::LimitState::undecided:
+      return "undecided";
   }
   return "";
 }
@@ -144,7 +150,8 @@ std::string probe_tables(const Results& results) {
   const std::string key = results.alternating() ? "b_rms" : "b";
   const std::string what = results.alternating() ? "B, r.m.s." : "|B|";
   HtmlTable table("Field at the probes",
-                  {"Probe", "Where", what, "Limit", "Share", "Limit is", "The limit's source"});
+                  {"Probe", "Where", what, "Limit", "Share", "Limit is", "The limit's source"},
+                  {1, 5, 6});
   HtmlTable peaks("Peak over the cycle on probe lines", {"Probe", in_words("b_peak_max")});
   std::vector<Entry> points;
   for (const solver::ProbeFigures& found : results.figures.probes) {
@@ -159,7 +166,9 @@ std::string probe_tables(const Results& results) {
              : millimetres(found.probe.points.front());
     const Figure* at_point = find_figure(found.points.front().figures, key);
     table.row({found.probe.name, where,
-               line ? cell(key + "_max") : at_point == nullptr ? "" : shown(*at_point),
+               line                  ? cell(key + "_max")
+               : at_point == nullptr ? ""
+                                     : shown(*at_point),
                cell("limit"), cell("of_limit"), in_words(found.limit_state),
                found.probe.limit_from});
     if (line && find_figure(found.figures, "b_peak_max") != nullptr) {
@@ -186,7 +195,7 @@ std::string part_tables(const Results& results) {
   const auto others = [](const Figure& figure) { return !is_force(figure); };
   std::vector<std::string> currents;
   for (const Entry& bar : f.bars) currents.push_back(current_text(results, bar));
-  HtmlTable gaps("Clearances", {"Between", "and", "Clearance"});
+  HtmlTable gaps("Clearances", {"Between", "and", "Clearance"}, {1});
   for (const solver::Clearance& clearance : f.clearances) {
     gaps.row({clearance.between[0], clearance.between[1], shown(clearance.gap)});
   }
@@ -195,7 +204,8 @@ std::string part_tables(const Results& results) {
 }
 
 std::string check_table(const Results& results) {
-  HtmlTable table("Self-checks of this run", {"Check", "Measured", "Limit", "Passed", "Where and what"});
+  HtmlTable table("Self-checks of this run",
+                  {"Check", "Measured", "Limit", "Passed", "Where and what"}, {3, 4});
   for (const verify::Check& check : results.checks) {
     const auto number = [&check](double value) {
       return fmt::format("{:.3g}{}{}", value, check.unit == "1" ? "" : " ",
@@ -221,24 +231,25 @@ std::string notice_list(const Results& results) {
 std::string case_tables(const Results& results) {
   const Case& input = results.input;
   const mesh::FittedGrid& grid = *results.problem->grid;
-  HtmlTable table("The case", {"What", "Value"});
+  HtmlTable table("The case", {"What", "Value"}, {1});
   table.row({"Case file", input.file});
   table.row({"SHA-256", input.sha256});
   table.row({"Currents", results.alternating()
                              ? fmt::format("r.m.s. phasors at {:.6g} Hz",
                                            results.problem->excitation.frequency_hz)
                              : "steady"});
-  if (input.run_length_m) table.row({"Length of the run", fmt::format("{:.6g} m", *input.run_length_m)});
+  if (input.run_length_m)
+    table.row({"Length of the run", fmt::format("{:.6g} m", *input.run_length_m)});
   table.row({"Grid", fmt::format("{} x {} lines, {} nodes, {} triangles", grid.columns, grid.rows,
                                  grid.node_count(), grid.triangle_count())});
-  table.row({"Cells across", fmt::format("at least {} across every part and gap",
-                                         input.grid.cells_across)});
-  table.row({"Reach", fmt::format("{:.6g} half-sizes asked; outer boundary {:.4g} m from the middle",
-                                  input.grid.reach,
-                                  0.5 * (grid.x_lines.back() - grid.x_lines.front()))});
+  table.row({"Cells across",
+             fmt::format("at least {} across every part and gap", input.grid.cells_across)});
+  table.row(
+      {"Reach", fmt::format("{:.6g} half-sizes asked; outer boundary {:.4g} m from the middle",
+                            input.grid.reach, 0.5 * (grid.x_lines.back() - grid.x_lines.front()))});
   HtmlTable given("Given dimensions", {"Name", "Value"});
   for (const auto& [name, value] : input.given) given.row({name, fmt::format("{:.10g}", value)});
-  HtmlTable materials("Materials", {"Part", "Kind", "Material", "Relative permeability"});
+  HtmlTable materials("Materials", {"Part", "Kind", "Material", "Relative permeability"}, {1, 2});
   for (int part : visible_parts(results.problem->outline)) {
     const auto k = static_cast<std::size_t>(part);
     const mesh::Part& p = results.problem->section.parts[k];

@@ -6,8 +6,10 @@
 
 #include <algorithm>
 #include <cerrno>
+#include <exception>
 #include <fstream>
 #include <iterator>
+#include <new>
 
 #include "io/deferred_stop.hpp"
 
@@ -95,6 +97,12 @@ private:
   fs::path path_;
 };
 
+/// A text without a part of it, so that messages name the file as it would have been.
+std::string without(std::string text, const std::string& part) {
+  const std::size_t found = text.find(part);
+  return found == std::string::npos ? text : text.erase(found, part.size());
+}
+
 /// Those of the names under which a folder holds something.
 std::vector<std::string> names_in(const fs::path& folder, const std::vector<std::string>& names) {
   std::vector<std::string> found;
@@ -133,8 +141,10 @@ void fill_folder(const fs::path& folder, const Case& input, Contents contents, b
     for (const FileWriter& write : writers) {
       try {
         write(fresh.path());
-      } catch (const fs::filesystem_error& error) {
-        throw WriteError(error.what());
+      } catch (const std::bad_alloc&) {
+        throw;
+      } catch (const std::exception& error) {
+        throw WriteError(without(error.what(), "/" + fresh.path().filename().string()));
       }
       stop.check();
     }

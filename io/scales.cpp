@@ -77,21 +77,24 @@ double LogScale::position(double value_in) const {
   return std::log(value_in / low) / std::log(high / low);
 }
 
-double LogScale::value(double at) const { return low * std::pow(high / low, at); }
+double LogScale::value(double at) const {
+  return low * std::pow(high / low, at);
+}
 
 LogScale log_scale_of(std::vector<float> values) {
   std::erase_if(values, [](float v) { return !(v > 0.0f) || !std::isfinite(v); });
   if (values.empty()) return {};
   const auto exceeded_by = [&values](double share) {
-    const auto k = static_cast<std::ptrdiff_t>((1.0 - share) *
-                                               static_cast<double>(values.size() - 1));
+    const auto k =
+        static_cast<std::ptrdiff_t>((1.0 - share) * static_cast<double>(values.size() - 1));
     std::nth_element(values.begin(), values.begin() + k, values.end());
     return static_cast<double>(values[static_cast<std::size_t>(k)]);
   };
   LogScale scale;
   scale.high = round_up_125(exceeded_by(0.002));
   scale.low = round_down_125(exceeded_by(0.99));
-  scale.low = std::clamp(scale.low, round_up_125(scale.high * 1e-4), round_down_125(scale.high * 0.1));
+  scale.low =
+      std::clamp(scale.low, round_up_125(scale.high * 1e-4), round_down_125(scale.high * 0.1));
   return scale;
 }
 

@@ -70,10 +70,11 @@ std::vector<Named> named_pieces(const solver::Problem& problem, const Frame& fra
       Named& named = found[side];
       named.part = side.part;
       named.name = part.name;
-      if (bar && part.pieces.size() > 1) named.name.append(1, '.').append(std::to_string(side.piece + 1));
+      if (bar && part.pieces.size() > 1)
+        named.name.append(1, '.').append(std::to_string(side.piece + 1));
       named.box.include(bounds(piece.curve));
-      const int samples = std::clamp(static_cast<int>(length(piece.curve) * frame.scale() / 8.0), 1,
-                                     400);
+      const int samples =
+          std::clamp(static_cast<int>(length(piece.curve) * frame.scale() / 8.0), 1, 400);
       for (int k = 0; k <= samples; ++k) {
         named.edge.push_back(frame.page(at(piece.curve, static_cast<double>(k) / samples)));
       }
@@ -159,7 +160,9 @@ void draw_current_sign(Canvas& canvas, PagePoint centre, double radius, double c
 int draw_names(Canvas& canvas, const solver::Problem& problem, const Frame& frame,
                const std::vector<double>& currents, LabelPlacement& labels, double text_size) {
   constexpr double least_radius = 5.0;
+  constexpr std::size_t many = 40;
   const std::vector<Named> all = named_pieces(problem, frame);
+  if (all.size() > many) text_size *= 0.75;
   constexpr double backing = 2.0;
   const TextStyle style{text_size, Align::start, false, ink, 0.0, false};
   for (const Named& named : all) labels.avoid_line(named.edge);

@@ -71,10 +71,13 @@ void draw_dimension(Canvas& canvas, PagePoint from, PagePoint to, PagePoint offs
   style.align = Align::middle;
   style.upwards = std::abs(along.y) > std::abs(along.x);
   style.backing = 3.0;
-  const PagePoint shift = style.upwards ? PagePoint{-7.0, 0.0} : PagePoint{0.0, 26.0};
-  const PagePoint at = between(a, b, 0.5) + shift;
-  canvas.text(at, size, style);
   const double half = 0.5 * canvas.text_width(size, style);
+  // Beside the middle of the line; beyond its end where it is too short for that.
+  const bool fits = distance(a, b) > 2.0 * half + 30.0;
+  const PagePoint beside = style.upwards ? PagePoint{-7.0, 0.0} : PagePoint{0.0, 26.0};
+  const PagePoint past_end = style.upwards ? PagePoint{7.0, 0.0} : PagePoint{0.0, 7.0};
+  const PagePoint at = fits ? between(a, b, 0.5) + beside : b + (half + 16.0) * along + past_end;
+  canvas.text(at, size, style);
   labels.block_line(a, b, 3.0);
   labels.block(style.upwards ? PageBox{at - PagePoint{text_size, half}, at + PagePoint{4.0, half}}
                              : PageBox{at - PagePoint{half, text_size}, at + PagePoint{half, 4.0}});
@@ -103,9 +106,7 @@ std::string spaced(int number) {
 
 std::string current_text(const Case& input, std::size_t part) {
   const std::complex<double> current = input.excitation.current[part];
-  const auto number = [](double value) {
-    return plain_number(std::round(value * 1e3) / 1e3);
-  };
+  const auto number = [](double value) { return plain_number(std::round(value * 1e3) / 1e3); };
   if (!input.excitation.alternating()) return number(current.real()) + " A";
   const double angle = std::arg(current) * 180.0 / std::numbers::pi;
   return fmt::format("{} A, {}\u00b0", number(std::abs(current)),
@@ -113,8 +114,8 @@ std::string current_text(const Case& input, std::size_t part) {
 }
 
 /// Grid size, materials, and every part's material and current, in a column of the page.
-void draw_key(Canvas& canvas, const Case& input, const solver::Problem& problem,
-              const Tints& tints, const PageBox& column) {
+void draw_key(Canvas& canvas, const Case& input, const solver::Problem& problem, const Tints& tints,
+              const PageBox& column) {
   const mesh::FittedGrid& grid = *problem.grid;
   constexpr double row = 29.0;
   double y = column.low.y + text_size;
@@ -137,9 +138,9 @@ void draw_key(Canvas& canvas, const Case& input, const solver::Problem& problem,
   put(fmt::format("outer boundary {:.3g} m from the middle", half_side), style, 0.0);
   y += 0.4 * row;
 
-  put(input.excitation.alternating()
-          ? fmt::format("Parts; currents r.m.s. at {} Hz", plain_number(input.excitation.frequency_hz))
-          : "Parts; steady currents",
+  put(input.excitation.alternating() ? fmt::format("Parts; currents r.m.s. at {} Hz",
+                                                   plain_number(input.excitation.frequency_hz))
+                                     : "Parts; steady currents",
       head, 0.0);
   const std::vector<int> parts = visible_parts(problem.outline);
   const auto rows = static_cast<std::size_t>(std::max(1.0, (column.high.y - y) / row + 1.0));
@@ -173,13 +174,14 @@ void draw_key(Canvas& canvas, const Case& input, const solver::Problem& problem,
 std::string drawn(Canvas::Kind kind, const Case& input, const solver::Problem& problem) {
   const Tints tints(input);
   std::vector<Colour> colours;
-  for (const solver::Material& material : input.materials) colours.push_back(tints.of(material.name));
+  for (const solver::Material& material : input.materials)
+    colours.push_back(tints.of(material.name));
   const mesh::Box box = bounds(problem.section);
   const Frame whole = frame_round(box, {left_margin, heading_height}, frame_width, 460, 900);
   const double detail_top = whole.box.high.y + 130.0;
-  const Frame detail = finest_detail(
-      problem, {{1.0 * left_margin, detail_top},
-                {1.0 * left_margin + detail_width, detail_top + detail_height}});
+  const Frame detail =
+      finest_detail(problem, {{1.0 * left_margin, detail_top},
+                              {1.0 * left_margin + detail_width, detail_top + detail_height}});
   Canvas canvas(kind, page_width, static_cast<int>(detail.box.high.y) + 84);
   draw_heading(canvas, input.title, input.name + ":  section and grid, not solved", grey,
                left_margin, frame_width);
@@ -194,7 +196,9 @@ std::string drawn(Canvas::Kind kind, const Case& input, const solver::Problem& p
                        whole.page({detail.window.high.x, detail.window.low.y})};
   const Colour mark = colour_of(0xd55e00);
   canvas.box(marked, Pen{mark, 2.5, {}});
-  labels.block(marked);
+  const PagePoint corners[] = {
+      marked.low, {marked.high.x, marked.low.y}, marked.high, {marked.low.x, marked.high.y}};
+  for (std::size_t k = 0; k < 4; ++k) labels.block_line(corners[k], corners[(k + 1) % 4], 2.0);
   draw_names(canvas, problem, whole, {}, labels, text_size + 2.0);
   canvas.end_clip();
   draw_axes(canvas, whole, text_size);
@@ -215,8 +219,8 @@ std::string drawn(Canvas::Kind kind, const Case& input, const solver::Problem& p
 }  // namespace
 
 Pictures draw_section(const Case& input, const solver::Problem& problem) {
-  auto svg = std::async(std::launch::async,
-                        [&] { return drawn(Canvas::Kind::svg, input, problem); });
+  auto svg =
+      std::async(std::launch::async, [&] { return drawn(Canvas::Kind::svg, input, problem); });
   std::string png = drawn(Canvas::Kind::png, input, problem);
   return {std::move(png), svg.get()};
 }

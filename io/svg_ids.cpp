@@ -23,7 +23,8 @@ std::string with_plain_ids(const std::string& svg) {
   const std::string_view text = svg;
   constexpr std::string_view definition = " id=\"";
   std::map<std::string_view, std::string> plain;
-  for (std::size_t at = text.find(definition); at != text.npos; at = text.find(definition, at + 1)) {
+  for (std::size_t at = text.find(definition); at != text.npos;
+       at = text.find(definition, at + 1)) {
     const auto number = std::to_string(plain.size() + 1);
     plain.emplace(id_at(text, at + definition.size()), "i" + number);
   }

@@ -72,6 +72,8 @@ struct GridOptions {
   int cells_across = 4;    ///< at least this many cells across every bar, wall and gap
   double reach = 400.0;    ///< outer boundary's distance, in half-sizes of the section
   Box fine;                ///< spacing grows by less than 1.12 a cell within this box [m] too
+  double wide = 0.0;       ///< half-sizes out to which the field of a net current is looked at: so
+                           ///< far the spacing grows by less than 1.17 a cell
   double max_nodes = 5e7;  ///< more is refused before anything is allocated
 };
 

@@ -83,7 +83,7 @@ TEST_CASE("Without room for its files a run exits with 3 and leaves no trace") {
   const auto before = test::names_in(scratch.path());
   const auto run = run_barwall(scratch.path(), "solve pair.toml --out a/b", "ulimit -f 4;");
   CHECK(run.code == 3);
-  CHECK(run.err.find("cannot be written whole") != std::string::npos);
+  CHECK(run.err.find("a/b/figures.json: cannot be written whole: ") != std::string::npos);
   CHECK(test::names_in(scratch.path()) == before);
   CHECK(run_barwall(scratch.path(), "solve pair.toml --out a --quiet").code == 0);
   const std::string figures = test::text_of_file(scratch.path() / "a" / "figures.json");
@@ -93,6 +93,28 @@ TEST_CASE("Without room for its files a run exits with 3 and leaves no trace") {
       3);
   CHECK(test::names_in(scratch.path() / "a") == names);
   CHECK(test::text_of_file(scratch.path() / "a" / "figures.json") == figures);
+}
+
+TEST_CASE("Out of memory exits with 3 and leaves no trace") {
+  const test::ScratchFolder scratch;
+  scratch.write("pair.toml", test::two_bars);
+  const auto before = test::names_in(scratch.path());
+  // From ample room down to little more than the program takes to start.
+  bool refused = false;
+  for (int megabytes = 640; megabytes >= 160; megabytes -= 80) {
+    const auto run = run_barwall(scratch.path(), "solve pair.toml --out out --threads 1",
+                                 "ulimit -v " + std::to_string(1024 * megabytes) + ";");
+    INFO(megabytes << " MB: " << run.err);
+    if (run.code == 0) {
+      fs::remove_all(scratch.path() / "out");
+      continue;
+    }
+    CHECK(run.code == 3);
+    refused = true;
+    CHECK(run.err.find("memory") != std::string::npos);
+    CHECK(test::names_in(scratch.path()) == before);
+  }
+  CHECK(refused);
 }
 
 TEST_CASE("Another case's folder is refused with 2 until it may be replaced") {
@@ -178,4 +200,27 @@ TEST_CASE("A summary that cannot be printed is an error") {
   const auto run = run_barwall(scratch.path(), "solve pair.toml > /dev/full");
   CHECK(run.code == 3);
   CHECK(run.err.find("standard output") != std::string::npos);
+}
+
+TEST_CASE("draw writes the section's pictures alone, again and beside results") {
+  const test::ScratchFolder scratch;
+  scratch.write("pair.toml", test::two_bars);
+  const fs::path folder = scratch.path() / "results" / "pair";
+  CHECK(run_barwall(scratch.path(), "draw pair.toml").code == 0);
+  CHECK(test::names_in(folder) == std::vector<std::string>{"section.png", "section.svg"});
+  CHECK(run_barwall(scratch.path(), "solve pair.toml --quiet").code == 0);
+  CHECK(run_barwall(scratch.path(), "draw pair.toml --quiet").code == 0);
+  CHECK(fs::exists(folder / "figures.json"));
+  CHECK(fs::exists(folder / "section.png"));
+}
+
+TEST_CASE("A run writes every file of a results folder") {
+  const test::ScratchFolder scratch;
+  scratch.write("pair.toml", test::two_bars);
+  REQUIRE(run_barwall(scratch.path(), "solve pair.toml --out out --quiet").code == 0);
+  CHECK(test::names_in(scratch.path() / "out") ==
+        std::vector<std::string>{"field.vtu", "field_far.vtu", "figures.csv", "figures.json",
+                                 "flux_lines.vtp", "forces.vtp", "outlines.vtp", "picture.png",
+                                 "picture.svg", "probes.csv", "probes.vtp", "report.html",
+                                 "run.json"});
 }
