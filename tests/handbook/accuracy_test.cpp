@@ -35,6 +35,21 @@ double worst_b(const Solved& run, const std::vector<Point>& group, Exact exact) 
   return worst;
 }
 
+/// The place of the largest relative vector error, for messages.
+template <class Exact>
+std::string where_worst(const Solved& run, const std::vector<Point>& group, Exact exact) {
+  std::string place;
+  double worst = 0.0;
+  for (Point p : group) {
+    const double error = norm(run.b(p) - exact(p)) / norm(exact(p));
+    if (error <= worst) continue;
+    worst = error;
+    place = "worst at (" + std::to_string(1e3 * p.x) + ", " + std::to_string(1e3 * p.y) +
+            ") mm, |B| = " + std::to_string(1e3 * norm(exact(p))) + " mT";
+  }
+  return place;
+}
+
 /// Points of a box, on a low-discrepancy sequence, at least `clearance` from any outline and, in
 /// air or in the given part only.
 std::vector<Point> points_in(const mesh::Section& section, mesh::Box box, double clearance,
@@ -163,6 +178,7 @@ TEST_CASE("Trefoil in a steel pipe: forces within 0.05 %, B within 0.3 % inside 
   for (Point p : points_in(section, box, 5 * mm, 300)) {
     if (norm(p) < 60 * mm) inside.push_back(p);
   }
+  INFO(where_worst(run, inside, exact));
   CHECK(worst_b(run, inside, exact) < 3e-3);
   CHECK(worst_b(run, points_outside(70 * mm, 1.0, 200), exact) < 2e-2);
 }
