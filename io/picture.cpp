@@ -265,10 +265,14 @@ std::string drawn(Canvas::Kind kind, const Results& results, const Scene& scene,
   TextStyle small;
   small.size = 18.0;
   small.colour = {0.3, 0.3, 0.33, 1.0};
-  canvas.text({left_margin, bar_top + 98.0}, flux_line_note(scene, alternating), small);
-  std::string last = "Model: 2-D static field, no eddy currents, no skin effect.";
-  if (left_out > 0) last += fmt::format("  Names without room: {}.", left_out);
-  canvas.text({left_margin, bar_top + 124.0}, last, small);
+  std::string note = flux_line_note(scene, alternating) +
+                     " Model: 2-D static field, no eddy currents, no skin effect.";
+  if (left_out > 0) note += fmt::format(" Names without room: {}.", left_out);
+  double y = bar_top + 98.0;
+  for (const std::string& line : wrapped(canvas, note, small, frame_width)) {
+    canvas.text({left_margin, y}, line, small);
+    y += 26.0;
+  }
   return canvas.bytes();
 }
 
@@ -280,9 +284,10 @@ Frame picture_frame(const mesh::Section& section) {
 }
 
 Pictures draw_pictures(const Results& results) {
+  require_memory_for_drawing();
   const Scene scene = scene_of(results);
   const Bitmap bitmap = coloured(scene.raster, scene.scale);
-  auto svg = std::async(std::launch::async,
+  auto svg = std::async(std::launch::async | std::launch::deferred,
                         [&] { return drawn(Canvas::Kind::svg, results, scene, bitmap); });
   std::string png = drawn(Canvas::Kind::png, results, scene, bitmap);
   return {std::move(png), svg.get()};
