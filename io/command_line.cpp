@@ -11,8 +11,9 @@
 #include <memory>
 #include <new>
 
-#include "io/blas_memory.hpp"
 #include "io/input_error.hpp"
+#include "io/ladder_table.hpp"
+#include "io/memory.hpp"
 #include "io/plain_table.hpp"
 #include "io/progress.hpp"
 #include "io/results.hpp"
@@ -20,9 +21,6 @@
 #include "io/results_folder.hpp"
 #include "io/summary.hpp"
 #include "io/version.hpp"
-#if __has_include("io/ladder_table.hpp")
-#include "io/ladder_table.hpp"
-#endif
 
 namespace barwall::io {
 namespace {
@@ -89,7 +87,6 @@ int solve_case(const Request& request) {
   return results.exit_code();
 }
 
-#if __has_include("io/picture.hpp")
 int draw_case(const Request& request) {
   const Case input = read_case(request.file, settings_of(request));
   const auto folder = folder_of(request, input);
@@ -107,7 +104,6 @@ int draw_case(const Request& request) {
   }
   return 0;
 }
-#endif
 
 int verify_case(const Request& request) {
   Case input = read_case(request.file, settings_of(request));
@@ -123,15 +119,14 @@ int verify_case(const Request& request) {
   return results.exit_code();
 }
 
-#if __has_include("io/ladder_table.hpp")
 int verify_ladder(const Request& request) {
+  claim_blas_memory();
   if (!request.quiet) return print_ladder(stdout);
   const std::unique_ptr<std::FILE, int (*)(std::FILE*)> nowhere(std::fopen("/dev/null", "w"),
                                                                 std::fclose);
   if (!nowhere) throw WriteError("/dev/null cannot be opened");
   return print_ladder(nowhere.get());
 }
-#endif
 
 /// The exit code of a run, its errors reported.
 template <class Run>
@@ -212,15 +207,9 @@ int run_program(int argc, char** argv) {
   if (request.threads == 1) omp_set_max_active_levels(0);
   return guarded([&] {
     if (solve->parsed()) return solve_case(request);
-#if __has_include("io/picture.hpp")
     if (draw->parsed()) return draw_case(request);
-#endif
     if (!verify_file->empty()) return verify_case(request);
-#if __has_include("io/ladder_table.hpp")
     return verify_ladder(request);
-#else
-    throw std::runtime_error("this build is without the part that was asked for");
-#endif
   });
 }
 

@@ -3,21 +3,29 @@
 #include <chrono>
 #include <fstream>
 
+#include "io/memory.hpp"
+#include "io/picture.hpp"
+#include "io/report.hpp"
 #include "io/results_csv.hpp"
 #include "io/results_folder.hpp"
 #include "io/results_json.hpp"
 #include "io/run_json.hpp"
 #include "io/vtk_export.hpp"
-#if __has_include("io/picture.hpp")
-#include "io/picture.hpp"
-#endif
-#if __has_include("io/report.hpp")
-#include "io/report.hpp"
-#endif
 
 namespace barwall::io {
 
 namespace fs = std::filesystem;
+
+namespace {
+
+/// What the libraries for fonts, pictures and grid files need at most while one file is made.
+void require_room_to_write(const mesh::FittedGrid& grid) {
+  constexpr std::size_t base = std::size_t{64} << 20U;
+  constexpr std::size_t per_node = 600;
+  require_memory(base + per_node * static_cast<std::size_t>(grid.node_count()));
+}
+
+}  // namespace
 
 void write_results(Results& results, const fs::path& folder, bool replace) {
   const auto start = std::chrono::steady_clock::now();
@@ -27,13 +35,12 @@ void write_results(Results& results, const fs::path& folder, bool replace) {
     write_text(to / "figures.csv", figures_csv(results));
     write_text(to / "probes.csv", probes_csv(results));
   });
-  writers.emplace_back([&](const fs::path& to) { write_vtk(results, to); });
-#if __has_include("io/picture.hpp")
-  writers.emplace_back([&](const fs::path& to) { write_pictures(results, to); });
-#endif
-#if __has_include("io/report.hpp")
-  writers.emplace_back([&](const fs::path& to) { write_report(results, to); });
-#endif
+  for (const auto write : {write_vtk, write_pictures, write_report}) {
+    writers.emplace_back([&results, write](const fs::path& to) {
+      require_room_to_write(*results.problem->grid);
+      write(results, to);
+    });
+  }
   writers.emplace_back([&](const fs::path& to) {
     const std::chrono::duration<double> taken = std::chrono::steady_clock::now() - start;
     results.stages.emplace_back("files", taken.count());
@@ -42,10 +49,10 @@ void write_results(Results& results, const fs::path& folder, bool replace) {
   fill_folder(folder, results.input, Contents::results, replace, writers);
 }
 
-#if __has_include("io/picture.hpp")
 void write_drawing(const Case& input, const solver::Problem& problem, const fs::path& folder,
                    bool replace) {
   const auto draw = [&](const fs::path& to) {
+    require_room_to_write(*problem.grid);
     draw_section(input, problem, to);
     std::ofstream stream(to / "section.svg", std::ios::binary | std::ios::app);
     stream << drawing_mark();
@@ -54,6 +61,5 @@ void write_drawing(const Case& input, const solver::Problem& problem, const fs::
   };
   fill_folder(folder, input, Contents::drawing, replace, {draw});
 }
-#endif
 
 }  // namespace barwall::io

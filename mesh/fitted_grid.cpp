@@ -14,7 +14,8 @@ namespace {
 // Bounds on the spacing's slope; with slope g neighbouring intervals differ by a factor exp(g).
 constexpr double sharp_slope = 0.113;  // away from sharp corners: below ln 1.12
 constexpr double near_slope = 0.1;   // otherwise within the section
-constexpr double open_slope = 0.085;   // in the open: the far field's error goes with its square
+constexpr double open_slope = 0.1;   // in the open: the far field's error goes with its square
+constexpr double wide_slope = 0.15;   // where the net current's field is looked at
 constexpr double far_slope = 0.35;     // beyond every place where the field is asked for
 constexpr double merge_fraction = 0.3;
 constexpr int most_attempts = 12;
@@ -24,18 +25,22 @@ constexpr double most_lines = 1e6;
 struct Extents {
   double near_low, near_high;    ///< the section
   double fine_low, fine_high;    ///< where the field is asked for
+  double wide_low, wide_high;    ///< where a net current's field is looked at
   double outer_low, outer_high;  ///< the boundary
 };
 
 std::vector<double> lines_along(const AxisFeatures& features, int cells_across,
                                 const Extents& extents) {
-  const auto [near_low, near_high, fine_low, fine_high, low, high] = extents;
+  const auto [near_low, near_high, fine_low, fine_high, wide_low, wide_high, low, high] = extents;
   SpacingFunction spacing(
       features.smooth,
-      {{{near_low, near_high, near_slope}, {fine_low, fine_high, open_slope}}, far_slope});
+      {{{near_low, near_high, near_slope},
+        {fine_low, fine_high, open_slope},
+        {wide_low, wide_high, wide_slope}},
+       far_slope});
   if (!features.sharp.empty()) {
     spacing = smaller_of(
-        spacing, SpacingFunction(features.sharp, {{{fine_low, fine_high, sharp_slope}}, far_slope}));
+        spacing, SpacingFunction(features.sharp, {{{fine_low, fine_high, sharp_slope}, {wide_low, wide_high, wide_slope}}, far_slope}));
   }
   const double wanted = spacing.intervals(low, high) * cells_across / 4.0;
   if (!(wanted < most_lines)) {
@@ -111,10 +116,13 @@ FittedGrid make_grid(const Section& section, const Outline& outline, const GridO
     }
   }
   const double outer = std::max(options.reach * half, 100.0 * farthest);
-  const Extents along_x{box.low.x,  box.high.x,       fine.low.x,
-                        fine.high.x, centre.x - outer, centre.x + outer};
-  const Extents along_y{box.low.y,  box.high.y,       fine.low.y,
-                        fine.high.y, centre.y - outer, centre.y + outer};
+  Box wide = fine;
+  wide.include(centre - Point{options.wide * half, options.wide * half});
+  wide.include(centre + Point{options.wide * half, options.wide * half});
+  const Extents along_x{box.low.x,   box.high.x,  fine.low.x,       fine.high.x,
+                        wide.low.x,  wide.high.x, centre.x - outer, centre.x + outer};
+  const Extents along_y{box.low.y,   box.high.y,  fine.low.y,       fine.high.y,
+                        wide.low.y,  wide.high.y, centre.y - outer, centre.y + outer};
   Features features = features_of(section, outline);
   FitResult result;
   for (int attempt = 0; attempt < most_attempts; ++attempt) {

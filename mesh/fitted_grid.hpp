@@ -30,6 +30,12 @@ struct FittedGrid {
   int cell_count() const { return (columns - 1) * (rows - 1); }
   int triangle_count() const { return 2 * cell_count(); }
   int node(int i, int j) const { return j * columns + i; }
+  /// True when fitting moved a node off its place in the plain grid.
+  bool moved(int node_index) const {
+    const Point p = nodes[static_cast<std::size_t>(node_index)];
+    return p.x != x_lines[static_cast<std::size_t>(node_index % columns)] ||
+           p.y != y_lines[static_cast<std::size_t>(node_index / columns)];
+  }
   bool on_boundary(int node_index) const {
     const int i = node_index % columns;
     const int j = node_index / columns;
@@ -66,6 +72,8 @@ struct GridOptions {
   int cells_across = 4;    ///< at least this many cells across every bar, wall and gap
   double reach = 400.0;    ///< outer boundary's distance, in half-sizes of the section
   Box fine;                ///< spacing grows by less than 1.12 a cell within this box [m] too
+  double wide = 0.0;       ///< half-sizes out to which the field of a net current is looked at: so
+                           ///< far the spacing grows by less than 1.17 a cell
   double max_nodes = 5e7;  ///< more is refused before anything is allocated
 };
 

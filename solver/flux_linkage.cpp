@@ -2,6 +2,8 @@
 
 #include <algorithm>
 
+#include "solver/assembly.hpp"
+
 namespace barwall::solver {
 namespace {
 
@@ -32,10 +34,12 @@ double mean_potential(const Solution& solution, int part,
   double area = 0.0;
   for (int t = 0; t < grid.triangle_count(); ++t) {
     if (grid.occupant(t).part != part) continue;
-    const double a = triangle_area(grid.corners(t));
     const auto n = grid.triangle(t);
-    sum += a * (potential[n[0]] + potential[n[1]] + potential[n[2]]) / 3.0;
-    area += a;
+    const auto share = control_areas(grid.corners(t));
+    for (std::size_t k = 0; k < 3; ++k) {
+      sum += share[k] * potential[n[k]];
+      area += share[k];
+    }
   }
   return sum / area;
 }

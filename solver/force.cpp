@@ -57,8 +57,11 @@ StressBands::StressBands(const Solution& solution, std::vector<std::vector<int>>
   for (std::size_t b = 0; b < bodies_.size(); ++b) {
     for (int part : bodies_[b]) body_of_part_[static_cast<std::size_t>(part)] = static_cast<int>(b);
   }
-  // Outside, the next body is taken to be half a section size away.
-  cap_ = half_size(problem.section);
+  // Outside, the next body is taken to be half a section size away, less where the boundary is
+  // so near that the band would reach it.
+  const double half = half_size(problem.section);
+  const double room = 0.5 * (grid.x_lines.back() - grid.x_lines.front()) - half;
+  cap_ = std::min(half, room / 10.0);
   const mesh::Box box = bounds(problem.section);
   const auto window = [](const std::vector<double>& lines, double low, double high) {
     const auto first = std::lower_bound(lines.begin(), lines.end(), low);
@@ -67,7 +70,7 @@ StressBands::StressBands(const Solution& solution, std::vector<std::vector<int>>
                      std::min(static_cast<int>(lines.size()) - 1,
                               static_cast<int>(last - lines.begin()) + 2)};
   };
-  const double margin = 10.0 * cap_;  // weights are 0 from a tenth of the way on: d > 9 cap
+  const double margin = 10.0 * cap_;  // weights are 0 from 9 caps on
   std::tie(first_column_, last_column_) =
       window(grid.x_lines, box.low.x - margin, box.high.x + margin);
   std::tie(first_row_, last_row_) = window(grid.y_lines, box.low.y - margin, box.high.y + margin);

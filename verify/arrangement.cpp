@@ -74,7 +74,9 @@ std::vector<double> errors_of(const Arrangement& arrangement,
   problem->grid = std::move(grid);
   problem->materials = arrangement.materials;
   for (double current : arrangement.currents) problem->excitation.current.push_back(current);
-  if (arrangement.inductance > 0.0) problem->loops = {arrangement.loop};
+  for (const Arrangement::Inductance& known : arrangement.inductances) {
+    problem->loops.push_back(known.loop);
+  }
   const auto solution = solver::solve(problem, {1e-12, arrangement.boundary});
 
   const auto [off, near] = field_errors(arrangement, solution);
@@ -93,9 +95,12 @@ std::vector<double> errors_of(const Arrangement& arrangement,
     errors.push_back(lorentz.value());
     if (!arrangement.boundary) errors.push_back(stress.value());
   }
-  if (arrangement.inductance > 0.0) {
-    const double found = loop_inductance(solution, arrangement.loop);
-    errors.push_back(std::abs(found - arrangement.inductance) / arrangement.inductance);
+  if (!arrangement.inductances.empty()) {
+    RelativeError inductance;
+    for (const Arrangement::Inductance& known : arrangement.inductances) {
+      inductance.add({loop_inductance(solution, known.loop), 0.0}, {known.exact, 0.0});
+    }
+    errors.push_back(inductance.value());
   }
   return errors;
 }

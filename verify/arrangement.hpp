@@ -28,8 +28,12 @@ struct Arrangement {
   };
   std::vector<Force> forces;
 
-  solver::Loop loop;        ///< whose inductance is known
-  double inductance = 0.0;  ///< exact [H/m]; 0 when there is no loop
+  /// A loop whose inductance [H/m] is known.
+  struct Inductance {
+    solver::Loop loop;
+    double exact = 0.0;
+  };
+  std::vector<Inductance> inductances;
 };
 
 /// Errors of the scheme's solution of an arrangement on a grid, relative:
@@ -43,7 +47,7 @@ struct Arrangement {
 /// 3. with forces: r.m.s. over the bars of the vector error of J x B over r.m.s. of the force;
 /// 4. with forces, unless `boundary` is given, whose boundary would cut the bands of air: the same
 ///    over bars and walls of the Maxwell stress in the whole band round each;
-/// 5. with a loop: the inductance.
+/// 5. with loops: r.m.s. of the error of their inductances over r.m.s. of these.
 std::vector<double> errors_of(const Arrangement& arrangement,
                               std::shared_ptr<const mesh::FittedGrid> grid);
 

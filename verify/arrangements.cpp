@@ -47,24 +47,26 @@ std::vector<RoundBar> add_round_bars(Arrangement& arrangement, std::vector<Round
   return bars;
 }
 
-/// Exact field, and force on each bar, of round bars (parts 0, 1, ...) with some steel. The loop
-/// goes out in bar 0 and comes back in bar 1.
+/// Exact field, force on each bar and inductance of the loop of any two bars, of round bars (parts
+/// 0, 1, ...) with some steel.
 template <class Steel>
 void set_exact(Arrangement& arrangement, const Steel& steel, const std::vector<RoundBar>& bars) {
   arrangement.flux_density = [steel, bars](mesh::Point at) { return field_of(steel, bars, at); };
   for (std::size_t k = 0; k < bars.size(); ++k) {
     arrangement.forces.push_back({static_cast<int>(k), force_on_bar(steel, bars, k)});
+    for (std::size_t other = k + 1; other < bars.size(); ++other) {
+      std::vector<RoundBar> loop{bars[k], bars[other]};
+      loop[0].current = 1.0;
+      loop[1].current = -1.0;
+      // Of all that comes from elsewhere the mean of A over a disc is the value at its centre; its
+      // own current's is less than that by a quarter of mu_0 I / 2 pi.
+      const auto mean = [&](const RoundBar& bar) {
+        return potential_of(steel, loop, bar.centre) - 0.25 * mu_0_over_2pi * bar.current;
+      };
+      arrangement.inductances.push_back({{"loop", {static_cast<int>(k)}, {static_cast<int>(other)}},
+                                         mean(loop[0]) - mean(loop[1])});
+    }
   }
-  std::vector<RoundBar> loop{bars[0], bars[1]};
-  loop[0].current = 1.0;
-  loop[1].current = -1.0;
-  // Of all that comes from elsewhere the mean over a disc is the value at its centre; its own
-  // current's is less than that by a quarter of mu_0 I / 2 pi.
-  const auto mean = [&](const RoundBar& bar) {
-    return potential_of(steel, loop, bar.centre) - 0.25 * mu_0_over_2pi * bar.current;
-  };
-  arrangement.loop = {"loop", {0}, {1}};
-  arrangement.inductance = mean(loop[0]) - mean(loop[1]);
 }
 
 /// With nothing else about, the steel bears the opposite of all.
@@ -105,8 +107,8 @@ Arrangement pair_of_flat_bars() {
   };
   const double attraction = force_between_bars(1000.0, -1000.0, 10 * mm, 60 * mm, 30 * mm);
   result.forces = {{0, {attraction, 0.0}}, {1, {-attraction, 0.0}}};
-  result.loop = {"loop", {0}, {1}};
-  result.inductance = inductance_of_bar_pair({10 * mm, 60 * mm}, 30 * mm, 0.0);
+  result.inductances = {
+      {{"loop", {0}, {1}}, inductance_of_bar_pair({10 * mm, 60 * mm}, 30 * mm, 0.0)}};
   return result;
 }
 
@@ -130,14 +132,14 @@ Arrangement bars_before_steel() {
   const HalfSpace steel{{}, {0.0, 1.0}, permeability};
   set_exact(result, steel, bars);
   result.boundary = [steel, bars](mesh::Point at) { return potential_of(steel, bars, at); };
-  result.inductance = 0.0;  // fields of 1 A in a bar would have the open boundary
+  result.inductances.clear();  // fields of 1 A in a bar would have the open boundary
   return result;
 }
 
 Arrangement bars_in_pipe() {
   Arrangement result;
-  const auto bars = add_round_bars(result, {{{-22 * mm, -13 * mm}, 1000.0, 10 * mm},
-                                            {{24 * mm, -9 * mm}, -800.0, 10 * mm},
+  const auto bars = add_round_bars(result, {{{-22 * mm, -13 * mm}, 1000.0, 12 * mm},
+                                            {{24 * mm, -9 * mm}, -800.0, 9 * mm},
                                             {{3 * mm, 27 * mm}, 300.0, 8 * mm}});
   const Pipe pipe{55 * mm, 65 * mm, 200.0};
   add_wall(result, mesh::Tube{{}, 130 * mm, 10 * mm}, pipe.relative_permeability);
@@ -175,10 +177,10 @@ Arrangement coaxial_line() {
   const double between = (outer * outer * std::log(outer) - inner * inner * std::log(inner)) /
                              (outer * outer - inner * inner) -
                          0.5;
-  result.loop = {"loop", {0}, {1}};
-  result.inductance =
+  const double inductance =
       mu_0_over_2pi * (2.0 * between - std::log(own_distance_of_ring(10 * mm, 15 * mm)) -
                        std::log(own_distance_of_ring(inner, outer)));
+  result.inductances = {{{"loop", {0}, {1}}, inductance}};
   return result;
 }
 

@@ -4,6 +4,9 @@
 
 #include <algorithm>
 #include <cmath>
+#include <numbers>
+
+#include "solver/constants.hpp"
 
 namespace barwall::verify {
 namespace {
@@ -62,8 +65,19 @@ std::vector<Check> check_forces(const solver::Solution& solution,
     total = sum_of(total, force, 1.0);
     largest = std::max(largest, size_of(force));
   }
-  const auto relative = [largest](double force) { return largest > 0.0 ? force / largest : force; };
-  const std::string scale = fmt::format("of the largest force, {:.4g} N/m", largest);
+  // Where symmetry leaves no force at all, what the currents could do to each other is the scale.
+  double currents = 0.0;
+  for (const auto& current : solution.problem->excitation.current) currents += std::abs(current);
+  const double floor = 0.01 * solver::mu_0 / (2.0 * std::numbers::pi) * currents * currents /
+                       (2.0 * half_size(section));
+  const double measure = std::max(largest, floor);
+  const auto relative = [measure](double force) { return measure > 0.0 ? force / measure : force; };
+  const std::string scale =
+      largest >= floor
+          ? fmt::format("of the largest force, {:.4g} N/m", largest)
+          : fmt::format("no force to speak of ({:.2g} N/m): of {:.4g} N/m, 1 % of what all the "
+                        "currents would do to each other across the section",
+                        largest, floor);
   return {make_check("force-balance", relative(size_of(total)), 0.005, scale),
           make_check("force-agreement", relative(agreement), 0.005, "worst: " + worst_agreement),
           make_check("stress-bands", relative(two_bands), 0.005, "worst: " + worst_bands)};

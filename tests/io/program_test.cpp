@@ -201,3 +201,26 @@ TEST_CASE("A summary that cannot be printed is an error") {
   CHECK(run.code == 3);
   CHECK(run.err.find("standard output") != std::string::npos);
 }
+
+TEST_CASE("draw writes the section's pictures alone, again and beside results") {
+  const test::ScratchFolder scratch;
+  scratch.write("pair.toml", test::two_bars);
+  const fs::path folder = scratch.path() / "results" / "pair";
+  CHECK(run_barwall(scratch.path(), "draw pair.toml").code == 0);
+  CHECK(test::names_in(folder) == std::vector<std::string>{"section.png", "section.svg"});
+  CHECK(run_barwall(scratch.path(), "solve pair.toml --quiet").code == 0);
+  CHECK(run_barwall(scratch.path(), "draw pair.toml --quiet").code == 0);
+  CHECK(fs::exists(folder / "figures.json"));
+  CHECK(fs::exists(folder / "section.png"));
+}
+
+TEST_CASE("A run writes every file of a results folder") {
+  const test::ScratchFolder scratch;
+  scratch.write("pair.toml", test::two_bars);
+  REQUIRE(run_barwall(scratch.path(), "solve pair.toml --out out --quiet").code == 0);
+  CHECK(test::names_in(scratch.path() / "out") ==
+        std::vector<std::string>{"field.vtu", "field_far.vtu", "figures.csv", "figures.json",
+                                 "flux_lines.vtp", "forces.vtp", "outlines.vtp", "picture.png",
+                                 "picture.svg", "probes.csv", "probes.vtp", "report.html",
+                                 "run.json"});
+}

@@ -114,13 +114,25 @@ TEST_CASE("where a node was moved the couplings are half the cotangents of the o
   CHECK(coupling(stencil, stencil.diagonal, 0) == Approx(1.5 + 7.5 - 1.25));
 }
 
-TEST_CASE("a current spread over two triangles goes to their corners by thirds") {
+TEST_CASE("a current goes to the corners by the areas nearest to each") {
   auto grid = plain_grid({0.0, 2.0}, {0.0, 3.0});
-  const auto current = solver::assemble_current(grid, {7.0});
-  CHECK(current[0] == Approx(14.0));
-  CHECK(current[1] == Approx(7.0));
-  CHECK(current[2] == Approx(7.0));
-  CHECK(current[3] == Approx(14.0));
+  const auto quarters = solver::assemble_current(grid, {7.0});
+  for (Eigen::Index n = 0; n < 4; ++n) CHECK(quarters[n] == Approx(10.5));
+  // An equilateral triangle of side 2: thirds. One of 120 degrees at the first corner: half there.
+  const double height = std::sqrt(3.0);
+  for (double area : solver::control_areas({Point{0.0, 0.0}, {2.0, 0.0}, {1.0, height}})) {
+    CHECK(area == Approx(height / 3.0));
+  }
+  const auto obtuse = solver::control_areas({Point{0.0, 0.0}, {2.0, 0.0}, {-1.0, height}});
+  CHECK(obtuse[0] == Approx(0.5 * height));
+  CHECK(obtuse[1] == Approx(0.25 * height));
+  CHECK(obtuse[2] == Approx(0.25 * height));
+  // 45, 60 and 75 degrees; the shares of a side are its square times the opposite cotangent.
+  const auto acute =
+      solver::control_areas({Point{0.0, 0.0}, {1.0 + height, 0.0}, {height, height}});
+  CHECK(acute[0] + acute[1] + acute[2] == Approx(0.5 * (1.0 + height) * height));
+  CHECK(acute[0] ==
+        Approx((std::pow(1.0 + height, 2) * (height - 1.0) / (height + 1.0) + 6.0 / height) / 8.0));
 }
 
 TEST_CASE("a saddle-shaped potential is exact at the nodes of any graded plain grid") {
@@ -133,21 +145,8 @@ TEST_CASE("a saddle-shaped potential is exact at the nodes of any graded plain g
 
 TEST_CASE("a uniform current's quadratic potential is exact at the nodes of a graded plain grid") {
   const auto bowl = [](Point p) { return 3.0 - 1.5 * p.x * p.x - 0.5 * p.y * p.y; };  // J = 4
-  const auto both = graded_grid();
-  Eigen::MatrixXd current(both.node_count(), 1);
-  const auto width = [](const std::vector<double>& lines, int k) {
-    const auto m = static_cast<std::size_t>(k);
-    return k == 0 || m + 1 == lines.size() ? 0.0 : 0.5 * (lines[m + 1] - lines[m - 1]);
-  };
-  for (int n = 0; n < both.node_count(); ++n) {
-    current(n, 0) =
-        4.0 * width(both.x_lines, n % both.columns) * width(both.y_lines, n / both.columns);
-  }
-  CHECK(worst_error(both, ones(both), current, bowl) < 1e-13);
-  // Thirds of the triangles are the control cells where the lines are graded one way only.
-  const auto one_way = plain_grid({-2.0, -1.2, -0.9, 0.1, 0.35, 0.5, 1.7}, {0.0, 0.5, 1.0, 1.5});
-  CHECK(worst_error(one_way, ones(one_way), solver::assemble_current(one_way, {4.0}), bowl) <
-        1e-13);
+  const auto grid = graded_grid();
+  CHECK(worst_error(grid, ones(grid), solver::assemble_current(grid, {4.0}), bowl) < 1e-13);
 }
 
 TEST_CASE("a uniform field is exact on any fitted grid") {

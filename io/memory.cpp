@@ -1,4 +1,4 @@
-#include "io/blas_memory.hpp"
+#include "io/memory.hpp"
 
 #include <cstdlib>
 #include <new>
@@ -10,13 +10,16 @@ void dpotrf_(const char* triangle, const int* size, double* matrix, const int* l
 
 namespace barwall::io {
 
-void claim_blas_memory() {
-  // OpenBLAS takes 128 MiB and a page; asked for first with some room beside it.
-  constexpr std::size_t enough = std::size_t{160} << 20U;
+void require_memory(std::size_t bytes) {
   // Volatile: an allocation that is never used may be optimized away.
-  void* volatile trial = std::malloc(enough);
+  void* volatile trial = std::malloc(bytes);
   if (trial == nullptr) throw std::bad_alloc();
   std::free(trial);
+}
+
+void claim_blas_memory() {
+  // OpenBLAS takes 128 MiB and a page; asked for first with some room beside it.
+  require_memory(std::size_t{160} << 20U);
   openblas_set_num_threads(1);
   const int size = 1;
   double matrix = 1.0;
