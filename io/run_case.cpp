@@ -29,6 +29,9 @@ double nodes_that_fit() {
   return nodes;
 }
 
+/// Half-sizes out to which a net current's field is checked: 20 section sizes and a little.
+constexpr double net_current_zone = 42.0;
+
 class Stopwatch {
 public:
   Stopwatch(StageTimes& stages, const std::function<void(const std::string&)>& on_stage)
@@ -123,6 +126,7 @@ std::shared_ptr<const solver::Problem> problem_of(const Case& input) {
   mesh::GridOptions options;
   options.cells_across = input.grid.cells_across;
   options.reach = input.grid.reach;
+  if (has_net_current(input.excitation)) options.wide = net_current_zone;
   options.max_nodes = nodes_that_fit();
   for (const solver::Probe& probe : probes_of(input, problem->outline)) {
     for (mesh::Point point : probe.points) options.fine.include(point);

@@ -17,6 +17,17 @@ struct Excitation {
   bool alternating() const { return frequency_hz > 0.0; }
 };
 
+/// True when the currents do not sum to zero, at any instant.
+inline bool has_net_current(const Excitation& excitation) {
+  std::complex<double> sum = 0.0;
+  double magnitude = 0.0;
+  for (const std::complex<double>& value : excitation.current) {
+    sum += value;
+    magnitude += std::abs(value);
+  }
+  return std::abs(sum) > 1e-12 * magnitude;
+}
+
 /// Go and return conductors of a loop, as indices of parts. Each side shares the loop's current
 /// by the areas of its bars.
 struct Loop {

@@ -53,6 +53,17 @@ class Collector {
       const mesh::Part& p = problem_.section.parts[static_cast<std::size_t>(part)];
       (p.kind == mesh::Part::Kind::bar ? figures.bars : figures.walls).push_back(entry_of(part));
     }
+    for (int part : visible_) {
+      const mesh::Part& p = problem_.section.parts[static_cast<std::size_t>(part)];
+      const bool carries = problem_.excitation.current[static_cast<std::size_t>(part)] != 0.0;
+      if (!alternating_ || !carries || p.pieces.size() < 2) continue;
+      figures.notices.push_back(
+          {"equal sharing",
+           "bar \"" + p.name + "\": its " + std::to_string(p.pieces.size()) +
+               " pieces are taken to share the current by area; with alternating current they "
+               "seldom do, which makes forces between them and field nearby indicative",
+           true});
+    }
     for (std::size_t b = 0; b < bands_.bodies().size(); ++b) {
       const auto& members = bands_.bodies()[b];
       if (members.size() < 2) continue;
