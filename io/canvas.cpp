@@ -4,6 +4,9 @@
 #include <cairo-svg.h>
 #include <cairo.h>
 
+#include <algorithm>
+#include <cstdlib>
+#include <new>
 #include <stdexcept>
 
 #include "io/printable_text.hpp"
@@ -18,6 +21,7 @@ cairo_status_t append_bytes(void* to, const unsigned char* data, unsigned int le
 }
 
 void check(cairo_status_t status) {
+  if (status == CAIRO_STATUS_NO_MEMORY) throw std::bad_alloc();
   if (status != CAIRO_STATUS_SUCCESS) {
     throw std::runtime_error(std::string("a picture could not be drawn: ") +
                              cairo_status_to_string(status));
@@ -25,6 +29,14 @@ void check(cairo_status_t status) {
 }
 
 }  // namespace
+
+void require_memory_for_drawing() {
+  // Twice what two pages at once and the fonts take.
+  constexpr std::size_t enough = std::size_t{128} << 20;
+  void* volatile block = std::malloc(enough);  // volatile: or the compiler may leave it out
+  if (block == nullptr) throw std::bad_alloc();
+  std::free(block);
+}
 
 struct Canvas::State {
   std::string bytes;

@@ -40,13 +40,17 @@ struct Bitmap {
   std::vector<std::uint32_t> pixels;
 };
 
+/// Makes sure that there is memory for a drawing: the libraries beneath may crash where it runs
+/// out while they read the system's fonts. \throws std::bad_alloc
+void require_memory_for_drawing();
+
 /// A page to draw on; one drawing code serves bitmaps, SVG and PDF.
 class Canvas {
 public:
   enum class Kind { png, svg, pdf };
 
   /// A white page of width x height pixels.
-  /// \throws std::runtime_error when the page cannot be made
+  /// \throws std::runtime_error when the page cannot be made, std::bad_alloc
   Canvas(Kind kind, int width, int height);
   ~Canvas();
   Canvas(const Canvas&) = delete;
@@ -72,7 +76,7 @@ public:
   void end_clip();
 
   /// Ends the page and gives the file's bytes, the same for the same drawing. \throws
-  /// std::runtime_error when drawing failed
+  /// std::runtime_error when drawing failed, std::bad_alloc
   std::string bytes();
 
 private:

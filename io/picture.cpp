@@ -13,6 +13,7 @@
 #include "io/force_arrows.hpp"
 #include "io/frame.hpp"
 #include "io/page_text.hpp"
+#include "io/picture_key.hpp"
 #include "io/results_folder.hpp"
 #include "io/section_drawing.hpp"
 
@@ -136,80 +137,6 @@ void draw_point_probes(Canvas& canvas, const Results& results, const Frame& fram
   }
 }
 
-/// The prefix in which the middle of the scale reads best.
-PrefixedUnit unit_of(const LogScale& scale) {
-  return prefixed_unit(std::sqrt(scale.low * scale.high) * 5.0, "T");
-}
-
-void draw_colour_bar(Canvas& canvas, const LogScale& scale, const FieldRaster& raster,
-                     const PageBox& box, bool alternating) {
-  const PrefixedUnit unit = unit_of(scale);
-  TextStyle style;
-  style.size = text_size;
-  canvas.text({box.low.x, box.low.y - 12.0},
-              fmt::format("{} in {}", alternating ? "Flux density B, r.m.s.," : "Flux density |B|",
-                          unit.name),
-              style);
-  const int width = static_cast<int>(box.width());
-  const int height = static_cast<int>(box.height());
-  Bitmap bitmap{width, height, {}};
-  for (int row = 0; row < height; ++row) {
-    for (int column = 0; column < width; ++column) {
-      bitmap.pixels.push_back(viridis_rgb(viridis_index((column + 0.5) / width)));
-    }
-  }
-  canvas.image(bitmap, box.low);
-  const Pen pen{ink, 1.5, {}};
-  canvas.box(box, pen);
-  // Values beyond the ends have the ends' colours: triangles say so.
-  const double middle = box.centre().y;
-  const double tip = 16.0;
-  const auto [least, largest] =
-      std::minmax_element(raster.magnitude.begin(), raster.magnitude.end());
-  for (const bool right : {false, true}) {
-    if (right ? *largest <= scale.high : *least >= scale.low) continue;
-    const double x = right ? box.high.x : box.low.x;
-    const std::vector<PagePoint> triangle = {
-        {x, box.low.y}, {right ? x + tip : x - tip, middle}, {x, box.high.y}};
-    canvas.fill({triangle}, colour_of(viridis_rgb(right ? viridis_count - 1 : 0)));
-    canvas.line(triangle, pen, true);
-  }
-  style.align = Align::middle;
-  const std::vector<ScaleMark> marks = scale_marks(scale);
-  const auto place = [&](double value) { return box.low.x + scale.position(value) * box.width(); };
-  const auto label = [&](double value) { return plain_number(value / unit.size); };
-  // All labels where they fit, else the decades alone.
-  bool all_fit = true;
-  double last = -HUGE_VAL;
-  for (const ScaleMark& mark : marks) {
-    const double half = 0.5 * canvas.text_width(label(mark.value), style) + 7.0;
-    all_fit = all_fit && place(mark.value) - half > last;
-    last = place(mark.value) + half;
-  }
-  for (const ScaleMark& mark : marks) {
-    const double x = place(mark.value);
-    const bool labelled = all_fit || mark.decade;
-    canvas.line({{x, box.high.y}, {x, box.high.y + (labelled ? 9.0 : 5.0)}}, pen);
-    if (labelled) canvas.text({x, box.high.y + 31.0}, label(mark.value), style);
-  }
-}
-
-void draw_force_key(Canvas& canvas, const ArrowScale& scale, PagePoint at, bool alternating) {
-  TextStyle style;
-  style.size = text_size;
-  if (!(scale.reference > 0.0)) {
-    canvas.text(at, "No forces", style);
-    return;
-  }
-  canvas.text(at, alternating ? "Peak force per metre of run" : "Force per metre of run", style);
-  const PagePoint from = at + PagePoint{0.0, 26.0};
-  const PagePoint to = from + PagePoint{scale.pixels * scale.reference, 0.0};
-  draw_arrow(canvas, from, to);
-  const PrefixedUnit unit = prefixed_unit(scale.reference, "N/m");
-  canvas.text(to + PagePoint{14.0, 7.0},
-              fmt::format("{} {}", plain_number(scale.reference / unit.size), unit.name), style);
-}
-
 std::string flux_line_note(const Scene& scene, bool alternating) {
   std::string note = "Thin lines: flux lines";
   if (const double step = flux_step(scene.lines); step > 0.0) {
@@ -260,15 +187,20 @@ std::string drawn(Canvas::Kind kind, const Results& results, const Scene& scene,
   const double bar_top = bottom + 112.0;
   const double key_left = page_width - 440.0;
   draw_colour_bar(canvas, scene.scale, scene.raster,
-                  {{left_margin + 16.0, bar_top}, {key_left - 70.0, bar_top + 28.0}}, alternating);
-  draw_force_key(canvas, scene.arrow_scale, {key_left, bar_top - 12.0}, alternating);
+                  {{left_margin + 16.0, bar_top}, {key_left - 70.0, bar_top + 28.0}}, alternating,
+                  text_size);
+  draw_force_key(canvas, scene.arrow_scale, {key_left, bar_top - 12.0}, alternating, text_size);
   TextStyle small;
   small.size = 18.0;
   small.colour = {0.3, 0.3, 0.33, 1.0};
-  canvas.text({left_margin, bar_top + 98.0}, flux_line_note(scene, alternating), small);
-  std::string last = "Model: 2-D static field, no eddy currents, no skin effect.";
-  if (left_out > 0) last += fmt::format("  Names without room: {}.", left_out);
-  canvas.text({left_margin, bar_top + 124.0}, last, small);
+  std::string note = flux_line_note(scene, alternating) +
+                     " Model: 2-D static field, no eddy currents, no skin effect.";
+  if (left_out > 0) note += fmt::format(" Names without room: {}.", left_out);
+  double y = bar_top + 98.0;
+  for (const std::string& line : wrapped(canvas, note, small, frame_width)) {
+    canvas.text({left_margin, y}, line, small);
+    y += 26.0;
+  }
   return canvas.bytes();
 }
 
@@ -280,9 +212,10 @@ Frame picture_frame(const mesh::Section& section) {
 }
 
 Pictures draw_pictures(const Results& results) {
+  require_memory_for_drawing();
   const Scene scene = scene_of(results);
   const Bitmap bitmap = coloured(scene.raster, scene.scale);
-  auto svg = std::async(std::launch::async,
+  auto svg = std::async(std::launch::async | std::launch::deferred,
                         [&] { return drawn(Canvas::Kind::svg, results, scene, bitmap); });
   std::string png = drawn(Canvas::Kind::png, results, scene, bitmap);
   return {std::move(png), svg.get()};

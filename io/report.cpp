@@ -45,6 +45,8 @@ td.number { white-space: nowrap; font-variant-numeric: tabular-nums; }
 dt { font-weight: bold; }
 .wide { overflow-x: auto; }
 @media print {
+  .state { flex-wrap: nowrap; }
+  .state div { flex: 1 1 0; }
   body { font-size: 9.5pt; max-width: none; padding: 0; }
   .wide { overflow: visible; }
   table { font-size: 7.5pt; }

@@ -219,8 +219,9 @@ std::string drawn(Canvas::Kind kind, const Case& input, const solver::Problem& p
 }  // namespace
 
 Pictures draw_section(const Case& input, const solver::Problem& problem) {
-  auto svg =
-      std::async(std::launch::async, [&] { return drawn(Canvas::Kind::svg, input, problem); });
+  require_memory_for_drawing();
+  auto svg = std::async(std::launch::async | std::launch::deferred,
+                        [&] { return drawn(Canvas::Kind::svg, input, problem); });
   std::string png = drawn(Canvas::Kind::png, input, problem);
   return {std::move(png), svg.get()};
 }

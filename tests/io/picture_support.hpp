@@ -110,7 +110,7 @@ inline const io::Results& plate_results() {
 }
 
 /// The same bars as a single-phase circuit at 50 Hz.
-inline const io::Results& alternating_results() {
+inline const io::Results& alternating_plate_results() {
   static const io::Results results =
       io::run_case(read_text("frequency_hz = 50\nrun_length_m = 0.2\n" + plate_case));
   return results;

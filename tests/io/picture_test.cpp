@@ -13,7 +13,7 @@
 namespace barwall {
 namespace {
 
-using test::alternating_results;
+using test::alternating_plate_results;
 using test::plate_results;
 
 const io::Pictures& plate_pictures() {
@@ -70,8 +70,8 @@ TEST_CASE("The picture's colours map back to the field within a step of the scal
   const ColourCount steady = count_colours(plate_results(), plate_pictures().png, 1.0);
   CHECK(steady.coloured > 240);
   CHECK(steady.wrong == 0);
-  const auto pictures = io::draw_pictures(alternating_results());
-  const ColourCount alternating = count_colours(alternating_results(), pictures.png, 1.0);
+  const auto pictures = io::draw_pictures(alternating_plate_results());
+  const ColourCount alternating = count_colours(alternating_plate_results(), pictures.png, 1.0);
   CHECK(alternating.coloured > 240);
   CHECK(alternating.wrong == 0);
   // A field a tenth larger would not pass.
@@ -180,9 +180,10 @@ TEST_CASE("Force arrows start on their parts and carry the figures' forces") {
   CHECK(arrows[2].at.y == Approx(0.026));
   const io::ArrowScale scale = io::arrow_scale(arrows, 1e4);
   for (const io::ForceArrow& arrow : arrows) CHECK(norm(arrow.force) * scale.pixels <= 120.001);
-  const auto peaks = io::force_arrows(alternating_results());
+  const auto peaks = io::force_arrows(alternating_plate_results());
   CHECK(norm(peaks[0].force) ==
-        Approx(find_figure(alternating_results().figures.bars[0].figures, "force_peak")->value));
+        Approx(
+            find_figure(alternating_plate_results().figures.bars[0].figures, "force_peak")->value));
 }
 
 }  // namespace barwall
