@@ -20,7 +20,7 @@ struct Features {
   AxisFeatures y;
 };
 
-/// Spacings and lines for a section: a quarter of every width and gap across it, a sixteenth of
+/// Spacings and lines for a section: a quarter of every width and gap across it, a thirty-second of
 /// a circle's diameter, finer towards the edges of bars, and at the corners of parts with sharp
 /// corners a twenty-fifth of their thickness.
 Features features_of(const Section& section, const Outline& outline);
