@@ -17,7 +17,7 @@ class ScratchFolder {
 public:
   ScratchFolder()
       : path_(std::filesystem::temp_directory_path() /
-              ("barwall-case-test-" + std::to_string(::getpid()))) {
+              ("barwall-case-test-" + std::to_string(::getpid()) + "-" + std::to_string(count()++))) {
     std::filesystem::create_directories(path_);
   }
   ~ScratchFolder() {
@@ -35,6 +35,12 @@ public:
   }
 
 private:
+  /// Folders of one process that live at the same time have names of their own.
+  static int& count() {
+    static int made = 0;
+    return made;
+  }
+
   std::filesystem::path path_;
 };
 

@@ -135,7 +135,7 @@ TEST_CASE("Another case's folder is refused with 2 until it may be replaced") {
   CHECK(figures_in(scratch.path() / "out")["case"]["title"] == "Renamed bars");
 }
 
-TEST_CASE("--set changes the figures, and the case's digest with them") {
+TEST_CASE("The option --set changes the figures, and the case's digest with them") {
   const test::ScratchFolder scratch;
   scratch.write("pair.toml", test::two_bars);
   REQUIRE(run_barwall(scratch.path(), "solve pair.toml --out near --quiet").code == 0);
@@ -161,7 +161,7 @@ TEST_CASE("The number of threads changes no byte of the figures") {
   }
 }
 
-TEST_CASE("--quiet prints nothing on success and one line otherwise") {
+TEST_CASE("The option --quiet prints nothing on success and one line otherwise") {
   const test::ScratchFolder scratch;
   scratch.write("pair.toml", test::two_bars);
   scratch.write("coarse.toml", test::coarse_bars);
