@@ -1,0 +1,75 @@
+#include <algorithm>
+#include <catch2/catch.hpp>
+#include <filesystem>
+#include <fstream>
+
+#include "io/results.hpp"
+#include "tests/io/program_support.hpp"
+
+namespace barwall::io {
+namespace {
+
+namespace fs = std::filesystem;
+
+const fs::path root = BARWALL_SOURCE_DIR;
+
+std::vector<fs::path> shipped_cases() {
+  std::vector<fs::path> cases;
+  for (const auto& entry : fs::directory_iterator(root / "cases")) {
+    if (entry.path().extension() == ".toml") cases.push_back(entry.path());
+  }
+  std::sort(cases.begin(), cases.end());
+  return cases;
+}
+
+void expect_sound(const fs::path& file) {
+  INFO(file.string());
+  const Results results = run_case(read_case(file));
+  for (const verify::Check& check : results.checks) {
+    INFO(check.name << ": " << check.measured << ", limit " << check.limit << "; " << check.detail);
+    CHECK(check.passed);
+  }
+  CHECK(results.verdict() == "sound");
+  CHECK(results.exit_code() == 0);
+  CHECK(results.problem->grid->node_count() < 150000);
+}
+
+}  // namespace
+
+TEST_CASE("every shipped case is sound on fewer than 150,000 nodes and keeps its limits") {
+  const auto cases = shipped_cases();
+  CHECK(cases.size() >= 9);
+  for (const fs::path& file : cases) expect_sound(file);
+}
+
+TEST_CASE("every shipped case has its line in the list of cases and says that it is invented") {
+  const std::string list = test::text_of_file(root / "cases/README.md");
+  for (const fs::path& file : shipped_cases()) {
+    INFO(file.string());
+    CHECK(list.find("| `" + file.filename().string() + "` |") != std::string::npos);
+    const std::string text = test::text_of_file(file);
+    const std::string first_line = text.substr(0, text.find('\n'));
+    CHECK(first_line.starts_with("# An invented "));
+  }
+}
+
+TEST_CASE("the README's example of a case file is sound") {
+  const std::string readme = test::text_of_file(root / "README.md");
+  const std::string fence = "```toml\n";
+  const std::size_t from = readme.find(fence);
+  REQUIRE(from != std::string::npos);
+  const std::size_t start = from + fence.size();
+  const fs::path file = fs::path(BARWALL_BINARY_DIR) / "tests" / "readme_example.toml";
+  std::ofstream(file) << readme.substr(start, readme.find("```", start) - start);
+  expect_sound(file);
+}
+
+TEST_CASE("the README quotes the command that runs the tests") {
+  const std::string script = test::text_of_file(root / ".ci/run");
+  const std::size_t from = script.find("bash .ci/install");
+  REQUIRE(from != std::string::npos);
+  CHECK(test::text_of_file(root / "README.md").find("    " + script.substr(from)) !=
+        std::string::npos);
+}
+
+}  // namespace barwall::io
