@@ -4,7 +4,9 @@
 
 namespace barwall::io {
 
-std::string Results::verdict() const { return verify::sound(checks) ? "sound" : "unsound"; }
+std::string Results::verdict() const {
+  return verify::sound(checks) ? "sound" : "unsound";
+}
 
 std::string Results::validity() const {
   const bool indicative = std::any_of(figures.notices.begin(), figures.notices.end(),
@@ -14,10 +16,14 @@ std::string Results::validity() const {
 
 std::string Results::limits() const {
   switch (limits_of(figures)) {
-    case solver::LimitState::none: return "none";
-    case solver::LimitState::met: return "met";
-    case solver::LimitState::exceeded: return "exceeded";
-    case solver::LimitState::undecided: return "undecided";
+    case solver::LimitState::none:
+      return "none";
+    case solver::LimitState::met:
+      return "met";
+    case solver::LimitState::exceeded:
+      return "exceeded";
+    case solver::LimitState::undecided:
+      return "undecided";
   }
   return "none";
 }

@@ -145,7 +145,9 @@ Point tangent(const Curve& curve, double t) {
   return sign * Point{-std::sin(angle), std::cos(angle)};
 }
 
-Point left_normal(const Curve& curve, double t) { return quarter_turn(tangent(curve, t)); }
+Point left_normal(const Curve& curve, double t) {
+  return quarter_turn(tangent(curve, t));
+}
 
 double length(const Curve& curve) {
   if (const auto* s = std::get_if<Segment>(&curve)) return distance(s->from, s->to);

@@ -13,9 +13,9 @@ namespace {
 
 // Bounds on the spacing's slope; with slope g neighbouring intervals differ by a factor exp(g).
 constexpr double sharp_slope = 0.113;  // away from sharp corners: below ln 1.12
-constexpr double near_slope = 0.1;   // otherwise within the section
-constexpr double open_slope = 0.1;   // in the open: the far field's error goes with its square
-constexpr double wide_slope = 0.15;   // where the net current's field is looked at
+constexpr double near_slope = 0.1;     // otherwise within the section
+constexpr double open_slope = 0.1;     // in the open: the far field's error goes with its square
+constexpr double wide_slope = 0.15;    // where the net current's field is looked at
 constexpr double far_slope = 0.35;     // beyond every place where the field is asked for
 constexpr double merge_fraction = 0.3;
 constexpr int most_attempts = 12;
@@ -32,20 +32,21 @@ struct Extents {
 std::vector<double> lines_along(const AxisFeatures& features, int cells_across,
                                 const Extents& extents) {
   const auto [near_low, near_high, fine_low, fine_high, wide_low, wide_high, low, high] = extents;
-  SpacingFunction spacing(
-      features.smooth,
-      {{{near_low, near_high, near_slope},
-        {fine_low, fine_high, open_slope},
-        {wide_low, wide_high, wide_slope}},
-       far_slope});
+  SpacingFunction spacing(features.smooth, {{{near_low, near_high, near_slope},
+                                             {fine_low, fine_high, open_slope},
+                                             {wide_low, wide_high, wide_slope}},
+                                            far_slope});
   if (!features.sharp.empty()) {
-    spacing = smaller_of(
-        spacing, SpacingFunction(features.sharp, {{{fine_low, fine_high, sharp_slope}, {wide_low, wide_high, wide_slope}}, far_slope}));
+    spacing =
+        smaller_of(spacing, SpacingFunction(features.sharp, {{{fine_low, fine_high, sharp_slope},
+                                                              {wide_low, wide_high, wide_slope}},
+                                                             far_slope}));
   }
   const double wanted = spacing.intervals(low, high) * cells_across / 4.0;
   if (!(wanted < most_lines)) {
-    throw GridError("the grid would have " + std::to_string(static_cast<long long>(wanted)) +
-                    " lines along one axis: the section holds gaps or widths far too small for its size");
+    throw GridError(
+        "the grid would have " + std::to_string(static_cast<long long>(wanted)) +
+        " lines along one axis: the section holds gaps or widths far too small for its size");
   }
   std::vector<double> fixed = thinned_lines(features.lines, spacing, merge_fraction);
   // A section may reach the boundary (at a reach of 1, with its own lines there) or beyond it.
@@ -81,7 +82,8 @@ std::string names_at(const Section& section, const Outline& outline, const FitRe
   for (int cell : result.faulty_cells) {
     const auto corners = result.grid.corners(2 * cell);
     place = corners[0];
-    const double near = 2.0 * distance(corners[0], corners[1]) + 2.0 * distance(corners[1], corners[2]);
+    const double near =
+        2.0 * distance(corners[0], corners[1]) + 2.0 * distance(corners[1], corners[2]);
     for (const OutlinePiece& piece : outline.pieces) {
       if (distance(piece.curve, place) > near) continue;
       for (Occupant side : {piece.left, piece.right}) {
@@ -91,7 +93,8 @@ std::string names_at(const Section& section, const Outline& outline, const FitRe
   }
   std::string names;
   for (int part : parts) {
-    names += (names.empty() ? "\"" : ", \"") + section.parts[static_cast<std::size_t>(part)].name + "\"";
+    names +=
+        (names.empty() ? "\"" : ", \"") + section.parts[static_cast<std::size_t>(part)].name + "\"";
   }
   return names + " near (" + std::to_string(1e3 * place.x) + ", " + std::to_string(1e3 * place.y) +
          ") mm";
@@ -119,10 +122,10 @@ FittedGrid make_grid(const Section& section, const Outline& outline, const GridO
   Box wide = fine;
   wide.include(centre - Point{options.wide * half, options.wide * half});
   wide.include(centre + Point{options.wide * half, options.wide * half});
-  const Extents along_x{box.low.x,   box.high.x,  fine.low.x,       fine.high.x,
-                        wide.low.x,  wide.high.x, centre.x - outer, centre.x + outer};
-  const Extents along_y{box.low.y,   box.high.y,  fine.low.y,       fine.high.y,
-                        wide.low.y,  wide.high.y, centre.y - outer, centre.y + outer};
+  const Extents along_x{box.low.x,  box.high.x,  fine.low.x,       fine.high.x,
+                        wide.low.x, wide.high.x, centre.x - outer, centre.x + outer};
+  const Extents along_y{box.low.y,  box.high.y,  fine.low.y,       fine.high.y,
+                        wide.low.y, wide.high.y, centre.y - outer, centre.y + outer};
   Features features = features_of(section, outline);
   FitResult result;
   for (int attempt = 0; attempt < most_attempts; ++attempt) {

@@ -18,9 +18,9 @@ namespace barwall::mesh {
 struct FittedGrid {
   int columns = 0;
   int rows = 0;
-  std::vector<double> x_lines;  ///< columns positions before fitting [m], ascending
-  std::vector<double> y_lines;  ///< rows positions before fitting [m], ascending
-  std::vector<Point> nodes;     ///< columns * rows positions [m]
+  std::vector<double> x_lines;        ///< columns positions before fitting [m], ascending
+  std::vector<double> y_lines;        ///< rows positions before fitting [m], ascending
+  std::vector<Point> nodes;           ///< columns * rows positions [m]
   std::vector<std::uint8_t> falling;  ///< per cell: 0 split from lower left to upper right,
                                       ///< 1 from upper left to lower right
   std::vector<std::int32_t> region;   ///< per triangle: index into `occupants`
@@ -80,7 +80,7 @@ struct GridOptions {
 /// A section to which no valid grid was found, or one larger than allowed; the message names the
 /// parts or the size.
 class GridError : public std::runtime_error {
- public:
+public:
   using std::runtime_error::runtime_error;
 };
 

@@ -17,14 +17,14 @@ constexpr double cusp = 0.12;
 constexpr double least_area = 0.02;
 
 struct Crossing {
-  int a;       ///< lower or left node
-  int b;       ///< upper or right node
-  double t;    ///< from a to b
+  int a;     ///< lower or left node
+  int b;     ///< upper or right node
+  double t;  ///< from a to b
   int piece;
 };
 
 class Fitter {
- public:
+public:
   Fitter(const Section& section, const Outline& outline, std::vector<double> x,
          std::vector<double> y)
       : section_(section), outline_(outline) {
@@ -49,7 +49,7 @@ class Fitter {
     return {std::move(grid_), std::move(faulty_)};
   }
 
- private:
+private:
   Point& node(int n) { return grid_.nodes[static_cast<std::size_t>(n)]; }
   const Point& node(int n) const { return grid_.nodes[static_cast<std::size_t>(n)]; }
   const Curve& curve(int piece) const {
@@ -288,7 +288,8 @@ class Fitter {
       if ((from || to) && std::holds_alternative<Segment>(curve(piece))) continue;
       for (double t : strict_crossings(p, q, piece)) {
         if (!from && !to) return false;
-        const double depth = distance(curve(piece), between(node(p), node(q), 0.5 * (from ? t : 1.0 + t)));
+        const double depth =
+            distance(curve(piece), between(node(p), node(q), 0.5 * (from ? t : 1.0 + t)));
         if (depth > 0.1 * distance(node(p), node(q))) return false;
       }
     }
@@ -316,8 +317,7 @@ class Fitter {
       known = true;
     }
     if (!known) {
-      const Point centre =
-          (1.0 / 3.0) * (node(corners[0]) + node(corners[1]) + node(corners[2]));
+      const Point centre = (1.0 / 3.0) * (node(corners[0]) + node(corners[1]) + node(corners[2]));
       side.occupant = occupant_at(section_, centre);
     }
     return side;

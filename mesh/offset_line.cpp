@@ -53,7 +53,8 @@ std::vector<std::vector<Point>> offset_lines(const Outline& outline, const std::
     outer.outer() = ring.outer();
     found.emplace_back(bg::area(outer), std::move(line));
   }
-  std::sort(found.begin(), found.end(), [](const auto& a, const auto& b) { return a.first > b.first; });
+  std::sort(found.begin(), found.end(),
+            [](const auto& a, const auto& b) { return a.first > b.first; });
   std::vector<std::vector<Point>> result;
   for (auto& [area, line] : found) result.push_back(std::move(line));
   return result;
@@ -61,14 +62,14 @@ std::vector<std::vector<Point>> offset_lines(const Outline& outline, const std::
 
 std::vector<Point> spread_along(const std::vector<Point>& closed_line, int count) {
   const std::size_t n = closed_line.size();
-  const auto first = static_cast<std::size_t>(
-      std::max_element(closed_line.begin(), closed_line.end(),
-                       [](Point a, Point b) { return a.x < b.x; }) -
-      closed_line.begin());
+  const auto first =
+      static_cast<std::size_t>(std::max_element(closed_line.begin(), closed_line.end(),
+                                                [](Point a, Point b) { return a.x < b.x; }) -
+                               closed_line.begin());
   std::vector<double> along{0.0};
   for (std::size_t k = 0; k < n; ++k) {
-    along.push_back(along.back() + distance(closed_line[(first + k) % n],
-                                            closed_line[(first + k + 1) % n]));
+    along.push_back(along.back() +
+                    distance(closed_line[(first + k) % n], closed_line[(first + k + 1) % n]));
   }
   std::vector<Point> result;
   for (int i = 0; i < count; ++i) {

@@ -25,8 +25,8 @@ Tolerance tolerance_of(const Section& section) {
   };
   for (const Part& part : section.parts) take(part.pieces);
   for (const Opening& opening : section.openings) take(opening.pieces);
-  const double extent = std::max({std::abs(box.low.x), std::abs(box.low.y), std::abs(box.high.x),
-                                  std::abs(box.high.y)});
+  const double extent = std::max(
+      {std::abs(box.low.x), std::abs(box.low.y), std::abs(box.high.x), std::abs(box.high.y)});
   const double aside = std::max(1e-5 * least, 1e-11 * extent);
   return {0.1 * aside, aside};
 }
@@ -94,7 +94,7 @@ std::vector<Curve> cut_at_meetings(const std::vector<Curve>& curves, double tole
 
 /// Points closer than the tolerance get one number.
 class PointNumbers {
- public:
+public:
   explicit PointNumbers(double tolerance) : size_(4.0 * tolerance), tolerance_(tolerance) {}
 
   int operator()(Point p) {
@@ -116,7 +116,7 @@ class PointNumbers {
   }
   const std::vector<Point>& points() const { return points_; }
 
- private:
+private:
   double size_;
   double tolerance_;
   std::vector<Point> points_;
@@ -209,9 +209,8 @@ Outline outline_of(const Section& section) {
     // Coincident curves of two shapes give the same piece twice: same middle, same length.
     const auto size = std::llround(length(curve) / (8.0 * tolerance.contact));
     const int number = middle_number(middle);
-    const bool twice =
-        seen.contains({number, size}) || seen.contains({number, size - 1}) ||
-        seen.contains({number, size + 1});
+    const bool twice = seen.contains({number, size}) || seen.contains({number, size - 1}) ||
+                       seen.contains({number, size + 1});
     if (twice) continue;
     seen.insert({number, size});
     outline.pieces.push_back({curve, left, right});
@@ -247,8 +246,10 @@ Gap gap_between(const Curve& first, const Curve& second) {
   }
   // With a circle the shortest way leads through its centre, or, between two, along the line
   // of their centres; a crossing gives zero.
-  if (const auto* arc = std::get_if<Arc>(&first)) from_second(nearest_parameter(second, arc->centre));
-  if (const auto* arc = std::get_if<Arc>(&second)) from_first(nearest_parameter(first, arc->centre));
+  if (const auto* arc = std::get_if<Arc>(&first))
+    from_second(nearest_parameter(second, arc->centre));
+  if (const auto* arc = std::get_if<Arc>(&second))
+    from_first(nearest_parameter(first, arc->centre));
   if (const auto* a = std::get_if<Arc>(&first)) {
     if (const auto* b = std::get_if<Arc>(&second)) {
       const Point link = b->centre - a->centre;

@@ -12,23 +12,45 @@ struct Point {
   friend bool operator==(const Point&, const Point&) = default;
 };
 
-constexpr Point operator+(Point a, Point b) { return {a.x + b.x, a.y + b.y}; }
-constexpr Point operator-(Point a, Point b) { return {a.x - b.x, a.y - b.y}; }
-constexpr Point operator-(Point a) { return {-a.x, -a.y}; }
-constexpr Point operator*(double s, Point a) { return {s * a.x, s * a.y}; }
-constexpr Point operator*(Point a, double s) { return {s * a.x, s * a.y}; }
-constexpr Point& operator+=(Point& a, Point b) { return a = a + b; }
+constexpr Point operator+(Point a, Point b) {
+  return {a.x + b.x, a.y + b.y};
+}
+constexpr Point operator-(Point a, Point b) {
+  return {a.x - b.x, a.y - b.y};
+}
+constexpr Point operator-(Point a) {
+  return {-a.x, -a.y};
+}
+constexpr Point operator*(double s, Point a) {
+  return {s * a.x, s * a.y};
+}
+constexpr Point operator*(Point a, double s) {
+  return {s * a.x, s * a.y};
+}
+constexpr Point& operator+=(Point& a, Point b) {
+  return a = a + b;
+}
 
-constexpr double dot(Point a, Point b) { return a.x * b.x + a.y * b.y; }
+constexpr double dot(Point a, Point b) {
+  return a.x * b.x + a.y * b.y;
+}
 
 /// The out-of-plane component of a x b; positive when b lies counter-clockwise of a.
-constexpr double cross(Point a, Point b) { return a.x * b.y - a.y * b.x; }
+constexpr double cross(Point a, Point b) {
+  return a.x * b.y - a.y * b.x;
+}
 
-inline double norm(Point a) { return std::hypot(a.x, a.y); }
-inline double distance(Point a, Point b) { return norm(b - a); }
+inline double norm(Point a) {
+  return std::hypot(a.x, a.y);
+}
+inline double distance(Point a, Point b) {
+  return norm(b - a);
+}
 
 /// `a` turned by a quarter counter-clockwise.
-constexpr Point quarter_turn(Point a) { return {-a.y, a.x}; }
+constexpr Point quarter_turn(Point a) {
+  return {-a.y, a.x};
+}
 
 /// `a` turned by `angle` [rad], counter-clockwise, about the origin.
 inline Point turned(Point a, double angle) {
@@ -38,7 +60,9 @@ inline Point turned(Point a, double angle) {
 }
 
 /// Point at fraction t of the way from a to b.
-constexpr Point between(Point a, Point b, double t) { return a + t * (b - a); }
+constexpr Point between(Point a, Point b, double t) {
+  return a + t * (b - a);
+}
 
 /// An axis-parallel box [m]; empty while low > high.
 struct Box {

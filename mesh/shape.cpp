@@ -20,7 +20,8 @@ Overloaded(Ts...) -> Overloaded<Ts...>;
 /// coordinates are exact, so that equal edges of different shapes compare equal.
 std::vector<Point> corners_of(Point centre, double width, double height, double turn) {
   std::vector<Point> corners;
-  for (const Point unit : {Point{-0.5, -0.5}, Point{0.5, -0.5}, Point{0.5, 0.5}, Point{-0.5, 0.5}}) {
+  for (const Point unit :
+       {Point{-0.5, -0.5}, Point{0.5, -0.5}, Point{0.5, 0.5}, Point{-0.5, 0.5}}) {
     const Point corner{unit.x * width, unit.y * height};
     corners.push_back(centre + (turn == 0.0 ? corner : turned(corner, turn)));
   }
@@ -88,33 +89,33 @@ double narrowest(const std::vector<Point>& corners) {
 
 bool contains(const Shape& shape, Point point) {
   return std::visit(
-      Overloaded{
-          [&](const Rectangle& r) {
-            return in_rectangle(local_of(point, r.centre, r.turn), r.width, r.height);
-          },
-          [&](const Round& r) { return distance(point, r.centre) <= 0.5 * r.diameter; },
-          [&](const Tube& t) {
-            const double d = distance(point, t.centre);
-            return d <= 0.5 * t.outer_diameter && d >= 0.5 * t.outer_diameter - t.thickness;
-          },
-          [&](const Frame& f) {
-            const Point p = local_of(point, f.centre, f.turn);
-            return in_rectangle(p, f.width, f.height) &&
-                   !in_rectangle(p, f.width - 2.0 * f.thickness, f.height - 2.0 * f.thickness);
-          },
-          [&](const Polygon& g) {
-            bool inside = false;
-            const std::size_t n = g.corners.size();
-            for (std::size_t k = 0, m = n - 1; k < n; m = k++) {
-              const Point a = g.corners[k];
-              const Point b = g.corners[m];
-              if ((a.y > point.y) != (b.y > point.y)) {
-                const double x = a.x + (b.x - a.x) * ((point.y - a.y) / (b.y - a.y));
-                if (point.x < x) inside = !inside;
-              }
-            }
-            return inside;
-          }},
+      Overloaded{[&](const Rectangle& r) {
+                   return in_rectangle(local_of(point, r.centre, r.turn), r.width, r.height);
+                 },
+                 [&](const Round& r) { return distance(point, r.centre) <= 0.5 * r.diameter; },
+                 [&](const Tube& t) {
+                   const double d = distance(point, t.centre);
+                   return d <= 0.5 * t.outer_diameter && d >= 0.5 * t.outer_diameter - t.thickness;
+                 },
+                 [&](const Frame& f) {
+                   const Point p = local_of(point, f.centre, f.turn);
+                   return in_rectangle(p, f.width, f.height) &&
+                          !in_rectangle(p, f.width - 2.0 * f.thickness,
+                                        f.height - 2.0 * f.thickness);
+                 },
+                 [&](const Polygon& g) {
+                   bool inside = false;
+                   const std::size_t n = g.corners.size();
+                   for (std::size_t k = 0, m = n - 1; k < n; m = k++) {
+                     const Point a = g.corners[k];
+                     const Point b = g.corners[m];
+                     if ((a.y > point.y) != (b.y > point.y)) {
+                       const double x = a.x + (b.x - a.x) * ((point.y - a.y) / (b.y - a.y));
+                       if (point.x < x) inside = !inside;
+                     }
+                   }
+                   return inside;
+                 }},
       shape);
 }
 
@@ -150,14 +151,13 @@ Point centroid(const Shape& shape) {
 }
 
 double thickness(const Shape& shape) {
-  return std::visit(Overloaded{[](const Rectangle& r) { return std::min(r.width, r.height); },
-                               [](const Round& r) { return r.diameter; },
-                               [](const Tube& t) { return t.thickness; },
-                               [](const Frame& f) { return f.thickness; },
-                               [](const Polygon& g) {
-                                 return narrowest(counter_clockwise(g.corners));
-                               }},
-                    shape);
+  return std::visit(
+      Overloaded{[](const Rectangle& r) { return std::min(r.width, r.height); },
+                 [](const Round& r) { return r.diameter; },
+                 [](const Tube& t) { return t.thickness; },
+                 [](const Frame& f) { return f.thickness; },
+                 [](const Polygon& g) { return narrowest(counter_clockwise(g.corners)); }},
+      shape);
 }
 
 std::vector<std::vector<Curve>> boundary(const Shape& shape) {
@@ -167,9 +167,7 @@ std::vector<std::vector<Curve>> boundary(const Shape& shape) {
           [](const Rectangle& r) -> Chains {
             return {chain_of(corners_of(r.centre, r.width, r.height, r.turn))};
           },
-          [](const Round& r) -> Chains {
-            return {circle(r.centre, 0.5 * r.diameter, 2.0 * pi)};
-          },
+          [](const Round& r) -> Chains { return {circle(r.centre, 0.5 * r.diameter, 2.0 * pi)}; },
           [](const Tube& t) -> Chains {
             return {circle(t.centre, 0.5 * t.outer_diameter, 2.0 * pi),
                     circle(t.centre, 0.5 * t.outer_diameter - t.thickness, -2.0 * pi)};

@@ -70,9 +70,8 @@ std::vector<Bound> bounds_of(std::vector<SpacingSource> sources, const SlopeRule
 SpacingFunction::SpacingFunction(std::vector<Knot> knots, double end_slope)
     : knots_(std::move(knots)), end_slope_(end_slope) {
   for (std::size_t k = 1; k < knots_.size(); ++k) {
-    knots_[k].cumulative =
-        knots_[k - 1].cumulative +
-        count_on_ramp(knots_[k - 1].h, knots_[k].h, knots_[k].x - knots_[k - 1].x);
+    knots_[k].cumulative = knots_[k - 1].cumulative + count_on_ramp(knots_[k - 1].h, knots_[k].h,
+                                                                    knots_[k].x - knots_[k - 1].x);
   }
 }
 

@@ -26,7 +26,7 @@ struct SlopeRule {
 /// The wanted spacing along one axis as a function h(x), piecewise linear; neighbouring
 /// intervals differ by a factor below exp(slope).
 class SpacingFunction {
- public:
+public:
   /// The largest function that keeps every source and whose slope is bounded by the rule.
   SpacingFunction(std::vector<SpacingSource> sources, const SlopeRule& rule);
 
@@ -42,7 +42,7 @@ class SpacingFunction {
   /// The x > a with intervals(a, x) = count.
   double advance(double a, double count) const;
 
- private:
+private:
   struct Knot {
     double x;
     double h;                 ///< spacing at x

@@ -5,8 +5,12 @@
 namespace barwall::mesh {
 
 /// Triangles of a cell that own its four sides, whichever way it is split.
-inline int triangle_below(int cell) { return 2 * cell; }
-inline int triangle_above(int cell) { return 2 * cell + 1; }
+inline int triangle_below(int cell) {
+  return 2 * cell;
+}
+inline int triangle_above(int cell) {
+  return 2 * cell + 1;
+}
 inline int triangle_left(const FittedGrid& grid, int cell) {
   return 2 * cell + (grid.falling[static_cast<std::size_t>(cell)] == 0 ? 1 : 0);
 }

@@ -9,9 +9,13 @@ double Pulsation::at(double wt) const {
   return mean + cosine * std::cos(2.0 * wt) + sine * std::sin(2.0 * wt);
 }
 
-double Pulsation::largest() const { return mean + std::hypot(cosine, sine); }
+double Pulsation::largest() const {
+  return mean + std::hypot(cosine, sine);
+}
 
-double Pulsation::smallest() const { return mean - std::hypot(cosine, sine); }
+double Pulsation::smallest() const {
+  return mean - std::hypot(cosine, sine);
+}
 
 Pulsation pulsation_of(double in_phase, double quadrature, double mixed) {
   // 2 (a cos - b sin)^2 = (aa + bb) + (aa - bb) cos 2wt - 2 ab sin 2wt

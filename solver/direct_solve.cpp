@@ -14,7 +14,7 @@ namespace {
 
 /// Columns of the interior block in compressed form, lower triangle, for CHOLMOD.
 class DirectSystem final : public PreparedSystem<double> {
- public:
+public:
   explicit DirectSystem(const Stencil<double>& stencil) : stencil_(stencil) {
     // Two threads gain little on the small fronts of a plane grid, and one thread makes the same
     // bytes from the same case whatever --threads says.
@@ -65,12 +65,12 @@ class DirectSystem final : public PreparedSystem<double> {
                                  report.residuals.back()));
   }
 
- private:
+private:
   int interior_columns() const { return stencil_.columns - 2; }
   int interior_rows() const { return stencil_.rows - 2; }
   int full_node(int interior) const {
-    return (interior / interior_columns() + 1) * stencil_.columns +
-           interior % interior_columns() + 1;
+    return (interior / interior_columns() + 1) * stencil_.columns + interior % interior_columns() +
+           1;
   }
 
   void factor() {
@@ -160,8 +160,8 @@ class DirectSystem final : public PreparedSystem<double> {
   }
 
   void correct(const Matrix& residual, Matrix& x) const {
-    const auto n = static_cast<std::size_t>(interior_columns()) *
-                   static_cast<std::size_t>(interior_rows());
+    const auto n =
+        static_cast<std::size_t>(interior_columns()) * static_cast<std::size_t>(interior_rows());
     const auto columns = static_cast<std::size_t>(x.cols());
     cholmod_dense* b = cholmod_allocate_dense(n, columns, n, CHOLMOD_REAL, &common_);
     check(b != nullptr);

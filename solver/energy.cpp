@@ -21,9 +21,8 @@ Pulsation field_energy(const Solution& solution) {
     double sum = 0.0;
     for (int t = 0; t < grid.triangle_count(); ++t) {
       const mesh::Point b = cell_flux_density(grid, t, solution.potential.col(first));
-      const mesh::Point c = first == second
-                                ? b
-                                : cell_flux_density(grid, t, solution.potential.col(second));
+      const mesh::Point c =
+          first == second ? b : cell_flux_density(grid, t, solution.potential.col(second));
       sum += 0.5 * solution.reluctivity[static_cast<std::size_t>(t)] * dot(b, c) *
              triangle_area(grid.corners(t));
     }
@@ -35,7 +34,8 @@ TerminalEnergy terminal_energy(const Solution& solution) {
   const Problem& problem = *solution.problem;
   const mesh::FittedGrid& grid = solution.grid();
   const int patterns = solution.pattern_count();
-  Eigen::MatrixXd linkage = Eigen::MatrixXd::Zero(static_cast<Eigen::Index>(problem.section.parts.size()), patterns);
+  Eigen::MatrixXd linkage =
+      Eigen::MatrixXd::Zero(static_cast<Eigen::Index>(problem.section.parts.size()), patterns);
   for (const mesh::Occupant occupant : grid.occupants) {
     if (occupant.part < 0 || occupant.piece != 0) continue;
     for (int k = 0; k < patterns; ++k) {

@@ -39,7 +39,7 @@ void append(std::vector<Figure>& to, std::vector<Figure> more) {
 }
 
 class Collector {
- public:
+public:
   Collector(const Solution& solution, const RecoveredField& field, const StressBands& bands)
       : solution_(solution),
         problem_(*solution.problem),
@@ -124,7 +124,7 @@ class Collector {
     }
   }
 
- private:
+private:
   const std::string& name_of(int part) const {
     return problem_.section.parts[static_cast<std::size_t>(part)].name;
   }
@@ -155,8 +155,7 @@ class Collector {
   }
 
   double reactance(int bar) const {
-    const std::complex<double> current =
-        problem_.excitation.current[static_cast<std::size_t>(bar)];
+    const std::complex<double> current = problem_.excitation.current[static_cast<std::size_t>(bar)];
     if (current == 0.0) return not_given;
     const std::complex<double> linkage{mean_potential(solution_, bar, solution_.potential.col(0)),
                                        mean_potential(solution_, bar, solution_.potential.col(1))};
@@ -180,11 +179,12 @@ class Collector {
       }
       append(entry.figures, {{"b_high", level.high, "T"}});
       for (std::size_t k = 0; p.pieces.size() > 1 && k < p.pieces.size(); ++k) {
-        auto force = magnetic(part)
-                         ? without_values(force_figures({}, alternating_))
-                         : force_figures(lorentz_force(solution_, part, static_cast<int>(k)),
-                                         alternating_);
-        entry.pieces.push_back({p.name + "." + std::to_string(k + 1), {}, std::move(force), {}, 0.0});
+        auto force =
+            magnetic(part)
+                ? without_values(force_figures({}, alternating_))
+                : force_figures(lorentz_force(solution_, part, static_cast<int>(k)), alternating_);
+        entry.pieces.push_back(
+            {p.name + "." + std::to_string(k + 1), {}, std::move(force), {}, 0.0});
       }
     } else {
       append(entry.figures, {{"b_mean", level.mean, "T"}, {"b_high", level.high, "T"}});
@@ -290,8 +290,8 @@ std::vector<std::pair<std::string, const Figure*>> addresses(const Figures& figu
     add(prefix, probe.figures);
   }
   for (const Clearance& clearance : figures.clearances) {
-    result.emplace_back(
-        "clearances/" + clearance.between[0] + "-" + clearance.between[1] + "/gap", &clearance.gap);
+    result.emplace_back("clearances/" + clearance.between[0] + "-" + clearance.between[1] + "/gap",
+                        &clearance.gap);
   }
   return result;
 }
@@ -300,10 +300,14 @@ LimitState limits_of(const Figures& figures) {
   LimitState worst = LimitState::none;
   const auto rank = [](LimitState state) {
     switch (state) {
-      case LimitState::none: return 0;
-      case LimitState::met: return 1;
-      case LimitState::undecided: return 2;
-      case LimitState::exceeded: return 3;
+      case LimitState::none:
+        return 0;
+      case LimitState::met:
+        return 1;
+      case LimitState::undecided:
+        return 2;
+      case LimitState::exceeded:
+        return 3;
     }
     return 0;
   };

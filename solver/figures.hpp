@@ -17,19 +17,19 @@ inline constexpr double not_given = std::numeric_limits<double>::quiet_NaN();
 
 /// One number of the results. NaN stands for "not given" in `value` and `plus_minus`.
 struct Figure {
-  std::string key;   ///< last part of its address, such as "force_x"
+  std::string key;  ///< last part of its address, such as "force_x"
   double value = not_given;
-  std::string unit;  ///< SI
+  std::string unit;               ///< SI
   double plus_minus = not_given;  ///< numerical uncertainty, 95 %
 };
 
 /// A named group of figures: a bar, a piece, a wall, a body, a loop, a circuit.
 struct Entry {
-  std::string name;  ///< a body's and a circuit's: its parts' names joined by "+"
+  std::string name;                ///< a body's and a circuit's: its parts' names joined by "+"
   std::vector<std::string> parts;  ///< bodies and circuits: the parts' names
   std::vector<Figure> figures;
-  std::vector<Entry> pieces;          ///< of a bar with several
-  std::complex<double> current = 0.0; ///< of a bar [A]; r.m.s. phasor with a frequency
+  std::vector<Entry> pieces;           ///< of a bar with several
+  std::complex<double> current = 0.0;  ///< of a bar [A]; r.m.s. phasor with a frequency
 };
 
 /// A place where the field is wanted: one point, or the points of a line.
@@ -51,8 +51,8 @@ struct ProbePoint {
 struct ProbeFigures {
   Probe probe;
   std::vector<ProbePoint> points;  ///< as many as the probe has
-  std::vector<Figure> figures;     ///< of a line: the largest values, of_limit; of a point: of_limit
-  mesh::Point largest_at;          ///< of a line: where |B| (r.m.s. with a frequency) is largest
+  std::vector<Figure> figures;  ///< of a line: the largest values, of_limit; of a point: of_limit
+  mesh::Point largest_at;       ///< of a line: where |B| (r.m.s. with a frequency) is largest
   LimitState limit_state = LimitState::none;
 };
 
@@ -91,8 +91,7 @@ std::vector<std::pair<std::string, const Figure*>> addresses(const Figures& figu
 /// The worst of the probes' limit states: exceeded, undecided, met, none.
 LimitState limits_of(const Figures& figures);
 
-Figures figures_of(const Solution& solution, const RecoveredField& field,
-                   const StressBands& bands, const std::vector<Probe>& probes,
-                   const std::vector<Circuit>& circuits);
+Figures figures_of(const Solution& solution, const RecoveredField& field, const StressBands& bands,
+                   const std::vector<Probe>& probes, const std::vector<Circuit>& circuits);
 
 }  // namespace barwall::solver

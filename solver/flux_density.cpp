@@ -222,8 +222,7 @@ mesh::Point RecoveredField::flux_density(const mesh::Location& at, mesh::Point p
   for (std::size_t k = 0; k < 3; ++k) {
     const Local& local =
         field_[static_cast<std::size_t>(pattern)][static_cast<std::size_t>(corner[k])];
-    const mesh::Point d =
-        point - grid.nodes[static_cast<std::size_t>(node_of_place(corner[k]))];
+    const mesh::Point d = point - grid.nodes[static_cast<std::size_t>(node_of_place(corner[k]))];
     b += at.weight[k] * (local.b + 0.5 * (d.x * local.b_dx + d.y * local.b_dy));
   }
   return b;

@@ -21,15 +21,13 @@ mesh::Point cell_flux_density(const mesh::FittedGrid& grid, int triangle,
 /// one that satisfies -div grad A = mu J exactly, as A does where the permeability is constant:
 /// the source's own quadratic and the harmonic polynomials up to the third degree.
 class RecoveredField {
- public:
+public:
   explicit RecoveredField(const Solution& solution);
 
   /// Places: one per node, then one more for each further occupant at a node on an outline.
   int place_count() const { return static_cast<int>(node_of_place_.size()); }
   int node_of_place(int place) const { return node_of_place_[static_cast<std::size_t>(place)]; }
-  int region_of_place(int place) const {
-    return region_of_place_[static_cast<std::size_t>(place)];
-  }
+  int region_of_place(int place) const { return region_of_place_[static_cast<std::size_t>(place)]; }
   /// The place of a node as seen from an occupant.
   int place(int node, int region) const;
   /// Places of a triangle's corners.
@@ -47,11 +45,11 @@ class RecoveredField {
   /// A [Wb/m] of one load pattern at a point of a triangle, exact where A is quadratic.
   double potential(const mesh::Location& at, mesh::Point point, int pattern) const;
 
- private:
+private:
   struct Local {
-    mesh::Point b;       ///< [T]
-    mesh::Point b_dx;    ///< dB/dx [T/m]
-    mesh::Point b_dy;    ///< dB/dy [T/m]
+    mesh::Point b;     ///< [T]
+    mesh::Point b_dx;  ///< dB/dx [T/m]
+    mesh::Point b_dy;  ///< dB/dy [T/m]
   };
   void number_places();
   void fit_place(int place, std::vector<int>& nodes, const std::vector<double>& source);
@@ -61,9 +59,9 @@ class RecoveredField {
   const Solution* solution_;
   std::vector<int> node_of_place_;
   std::vector<std::int32_t> region_of_place_;
-  std::vector<std::int32_t> first_region_;          ///< per node
+  std::vector<std::int32_t> first_region_;             ///< per node
   std::vector<std::pair<std::int64_t, int>> further_;  ///< (node * regions + region) -> place
-  std::vector<std::vector<Local>> field_;           ///< per pattern, per place
+  std::vector<std::vector<Local>> field_;              ///< per pattern, per place
 };
 
 }  // namespace barwall::solver

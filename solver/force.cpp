@@ -66,21 +66,22 @@ StressBands::StressBands(const Solution& solution, std::vector<std::vector<int>>
   const auto window = [](const std::vector<double>& lines, double low, double high) {
     const auto first = std::lower_bound(lines.begin(), lines.end(), low);
     const auto last = std::upper_bound(lines.begin(), lines.end(), high);
-    return std::pair{std::max(0, static_cast<int>(first - lines.begin()) - 2),
-                     std::min(static_cast<int>(lines.size()) - 1,
-                              static_cast<int>(last - lines.begin()) + 2)};
+    return std::pair{
+        std::max(0, static_cast<int>(first - lines.begin()) - 2),
+        std::min(static_cast<int>(lines.size()) - 1, static_cast<int>(last - lines.begin()) + 2)};
   };
   const double margin = 10.0 * cap_;  // weights are 0 from 9 caps on
   std::tie(first_column_, last_column_) =
       window(grid.x_lines, box.low.x - margin, box.high.x + margin);
   std::tie(first_row_, last_row_) = window(grid.y_lines, box.low.y - margin, box.high.y + margin);
-  distance_.assign(bodies_.size(), std::vector<double>(static_cast<std::size_t>(grid.node_count()),
-                                                       HUGE_VAL));
+  distance_.assign(bodies_.size(),
+                   std::vector<double>(static_cast<std::size_t>(grid.node_count()), HUGE_VAL));
   for (std::size_t b = 0; b < bodies_.size(); ++b) {
     std::vector<const mesh::Curve*> curves;
     for (const mesh::OutlinePiece& piece : problem.outline.pieces) {
       for (mesh::Occupant side : {piece.left, piece.right}) {
-        if (side.part >= 0 && body_of_part_[static_cast<std::size_t>(side.part)] == static_cast<int>(b)) {
+        if (side.part >= 0 &&
+            body_of_part_[static_cast<std::size_t>(side.part)] == static_cast<int>(b)) {
           curves.push_back(&piece.curve);
           break;
         }
@@ -136,8 +137,8 @@ PulsatingVector StressBands::force(int body, const Band& band) const {
         if (v[0] == v[1] && v[1] == v[2]) continue;
         const auto p = grid.corners(t);
         // Area times grad w.
-        const mesh::Point slope = 0.5 * quarter_turn(v[0] * (p[2] - p[1]) + v[1] * (p[0] - p[2]) +
-                                                     v[2] * (p[1] - p[0]));
+        const mesh::Point slope =
+            0.5 * quarter_turn(v[0] * (p[2] - p[1]) + v[1] * (p[0] - p[2]) + v[2] * (p[1] - p[0]));
         std::array<mesh::Point, 2> b{};
         for (int k = 0; k < patterns; ++k) {
           b[static_cast<std::size_t>(k)] = cell_flux_density(grid, t, solution_->potential.col(k));
@@ -153,9 +154,8 @@ PulsatingVector StressBands::force(int body, const Band& band) const {
       }
     }
   }
-  return over_cycle(patterns, [&](int f, int g) {
-    return -sum[static_cast<std::size_t>(f == g ? f : 2)];
-  });
+  return over_cycle(patterns,
+                    [&](int f, int g) { return -sum[static_cast<std::size_t>(f == g ? f : 2)]; });
 }
 
 }  // namespace barwall::solver

@@ -28,7 +28,7 @@ inline constexpr Band outer_band{0.5, 0.9};
 
 /// Distances of the grid's nodes from bodies, from which bands are laid.
 class StressBands {
- public:
+public:
   /// \param bodies groups of parts in contact (mesh::bodies)
   StressBands(const Solution& solution, std::vector<std::vector<int>> bodies);
 
@@ -38,7 +38,7 @@ class StressBands {
   /// T grad w, w the band's weight (the "eggshell" form of the closed surface integral).
   PulsatingVector force(int body, const Band& band) const;
 
- private:
+private:
   double weight(int body, int node, const Band& band) const;
 
   const Solution* solution_;

@@ -21,7 +21,7 @@ struct SolveReport {
 
 /// A solve that did not reach its tolerance, ran out of memory or met a singular matrix.
 class SolveError : public std::runtime_error {
- public:
+public:
   using std::runtime_error::runtime_error;
 };
 
@@ -29,7 +29,7 @@ class SolveError : public std::runtime_error {
 /// The outermost ring of nodes carries given values.
 template <class Scalar>
 class PreparedSystem {
- public:
+public:
   using Matrix = Eigen::Matrix<Scalar, Eigen::Dynamic, Eigen::Dynamic>;
 
   virtual ~PreparedSystem() = default;

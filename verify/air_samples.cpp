@@ -51,9 +51,8 @@ double local_spacing(const mesh::FittedGrid& grid, int triangle) {
 }
 
 bool clear_of_outlines(const mesh::Outline& outline, mesh::Point point, double clearance) {
-  return std::none_of(outline.pieces.begin(), outline.pieces.end(), [&](const auto& piece) {
-    return distance(piece.curve, point) < clearance;
-  });
+  return std::none_of(outline.pieces.begin(), outline.pieces.end(),
+                      [&](const auto& piece) { return distance(piece.curve, point) < clearance; });
 }
 
 constexpr int most_tries = 20000;
@@ -88,7 +87,8 @@ AirSamples air_samples(const solver::Problem& problem) {
   const mesh::Point centre = bounds(problem.section).centre();
   const double half = half_size(problem.section);
   // Shells in half-sizes; the outermost ends three section sizes out.
-  const std::vector<std::pair<double, double>> shells{{0.0, 1.0}, {1.0, 2.0}, {2.0, 4.0}, {4.0, 6.0}};
+  const std::vector<std::pair<double, double>> shells{
+      {0.0, 1.0}, {1.0, 2.0}, {2.0, 4.0}, {4.0, 6.0}};
   const std::size_t count =
       std::max<std::size_t>(60, 200 / (shells.size() + static_cast<std::size_t>(pockets)) + 1);
 
@@ -102,9 +102,9 @@ AirSamples air_samples(const solver::Problem& problem) {
   };
   for (int pocket = 1; pocket <= pockets; ++pocket) {
     const mesh::Box& b = box[static_cast<std::size_t>(pocket)];
-    AirGroup group{fmt::format("pocket round ({:.4g}, {:.4g}) mm", 1e3 * b.centre().x,
-                               1e3 * b.centre().y),
-                   {}};
+    AirGroup group{
+        fmt::format("pocket round ({:.4g}, {:.4g}) mm", 1e3 * b.centre().x, 1e3 * b.centre().y),
+        {}};
     fill(group, count, problem, stretch, pocket, [&b](mesh::Point unit) {
       return b.low + mesh::Point{unit.x * b.width(), unit.y * b.height()};
     });

@@ -16,7 +16,7 @@ namespace {
 using Complex = std::complex<double>;
 
 class AmpereLoops {
- public:
+public:
   AmpereLoops(const solver::Solution& solution, const solver::RecoveredField& field)
       : solution_(solution), problem_(*solution.problem), field_(field) {
     for (Complex current : problem_.excitation.current) {
@@ -67,16 +67,17 @@ class AmpereLoops {
       }
       for (const auto& line : offset_lines(problem_.outline, bodies[b], 0.5 * gap)) {
         ++count;
-        worst.take(error_of(along(line), enclosed_by(line)),
-                   fmt::format("{:.4g} mm round {}", 500.0 * gap,
-                               problem_.section.parts[static_cast<std::size_t>(bodies[b].front())].name));
+        worst.take(
+            error_of(along(line), enclosed_by(line)),
+            fmt::format("{:.4g} mm round {}", 500.0 * gap,
+                        problem_.section.parts[static_cast<std::size_t>(bodies[b].front())].name));
       }
     }
     return make_check("ampere-loops", worst.error, 0.005,
                       fmt::format("{} loops; worst: {}", count, worst.place));
   }
 
- private:
+private:
   struct Worst {
     double error = 0.0;
     std::string place = "none";

@@ -76,7 +76,8 @@ std::vector<Check> check_biot_savart(const solver::Solution& solution,
   for (const AirGroup& group : samples.groups) {
     const std::size_t count = group.samples.size();
     const auto b_at = [&](std::size_t i) {
-      return magnitude(patterns, [&](int k) { return direct.b[static_cast<std::size_t>(k)][first + i]; });
+      return magnitude(patterns,
+                       [&](int k) { return direct.b[static_cast<std::size_t>(k)][first + i]; });
     };
     double level = 0.0;
     for (std::size_t i = 0; i < count; ++i) level += b_at(i) * b_at(i);
@@ -88,8 +89,7 @@ std::vector<Check> check_biot_savart(const solver::Solution& solution,
         return field.flux_density(sample.location, sample.at, k) -
                direct.b[static_cast<std::size_t>(k)][first + i];
       });
-      const double scale =
-          std::max({b_at(i), 0.1 * level, 0.02 * direct.bars_alone[first + i]});
+      const double scale = std::max({b_at(i), 0.1 * level, 0.02 * direct.bars_alone[first + i]});
       const double relative = scale > 0.0 ? error / scale : error;
       squares += relative * relative;
       if (!(relative <= worst)) {  // a NaN becomes the worst

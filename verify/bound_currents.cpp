@@ -23,8 +23,7 @@ std::vector<CurrentSheet> bound_currents(const solver::Solution& solution,
     const mesh::Point q = grid.nodes[static_cast<std::size_t>(to)];
     const double length = distance(p, q);
     // Stokes round the edge: along its right side forward, along its left side back.
-    const double density =
-        dot(magnetisation(right) - magnetisation(left), q - p) / length;
+    const double density = dot(magnetisation(right) - magnetisation(left), q - p) / length;
     if (density != 0.0) sheets.push_back({p, q, density});
   });
   return sheets;

@@ -7,12 +7,12 @@ namespace barwall::verify {
 
 /// One self-check of a run: one measured value against one limit.
 struct Check {
-  std::string name;      ///< such as "biot-savart-rms"
+  std::string name;  ///< such as "biot-savart-rms"
   double measured = 0.0;
   double limit = 0.0;
   std::string unit = "1";
-  bool passed = false;   ///< measured <= limit; false for NaN
-  std::string detail;    ///< where the worst place is, and of what
+  bool passed = false;  ///< measured <= limit; false for NaN
+  std::string detail;   ///< where the worst place is, and of what
 };
 
 /// Builds a check; a measured value that is not a number fails.

@@ -48,14 +48,14 @@ std::vector<solver::Notice> end_effect(const solver::Problem& problem,
   }
   if (worst.share < 0.0) return {};
   const bool indicative = worst.share > 0.05;
-  return {{"end effect",
-           fmt::format("a straight run of {:g} m gives the free currents' field at mid-span within "
-                       "{:.2g} % of the endless one at every probe; worst at \"{}\", ({:.4g}, {:.4g}) "
-                       "mm{}",
-                       run_length, 100.0 * worst.share, worst.probe, 1e3 * worst.at.x,
-                       1e3 * worst.at.y,
-                       indicative ? ": more than 5 %, the plane model is only indicative there" : ""),
-           indicative}};
+  return {
+      {"end effect",
+       fmt::format("a straight run of {:g} m gives the free currents' field at mid-span within "
+                   "{:.2g} % of the endless one at every probe; worst at \"{}\", ({:.4g}, {:.4g}) "
+                   "mm{}",
+                   run_length, 100.0 * worst.share, worst.probe, 1e3 * worst.at.x, 1e3 * worst.at.y,
+                   indicative ? ": more than 5 %, the plane model is only indicative there" : ""),
+       indicative}};
 }
 
 }  // namespace barwall::verify

@@ -75,9 +75,10 @@ std::vector<Check> check_forces(const solver::Solution& solution,
   const std::string scale =
       largest >= floor
           ? fmt::format("of the largest force, {:.4g} N/m", largest)
-          : fmt::format("no force to speak of ({:.2g} N/m): of {:.4g} N/m, 1 % of what all the "
-                        "currents would do to each other across the section",
-                        largest, floor);
+          : fmt::format(
+                "no force to speak of ({:.2g} N/m): of {:.4g} N/m, 1 % of what all the "
+                "currents would do to each other across the section",
+                largest, floor);
   return {make_check("force-balance", relative(size_of(total)), 0.005, scale),
           make_check("force-agreement", relative(agreement), 0.005, "worst: " + worst_agreement),
           make_check("stress-bands", relative(two_bands), 0.005, "worst: " + worst_bands)};

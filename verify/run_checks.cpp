@@ -7,8 +7,7 @@
 
 namespace barwall::verify {
 
-std::vector<Check> run_checks(const solver::Solution& solution,
-                              const solver::RecoveredField& field,
+std::vector<Check> run_checks(const solver::Solution& solution, const solver::RecoveredField& field,
                               const solver::StressBands& bands) {
   std::vector<Check> checks = check_biot_savart(solution, field);
   const auto add = [&checks](const std::vector<Check>& more) {

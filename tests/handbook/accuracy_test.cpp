@@ -138,9 +138,9 @@ TEST_CASE("One rectangular bar in open air: B within 0.2 % and linkage within 0.
   mesh::Section section;
   section.parts.push_back(support::bar("bar", {Rectangle{{0, 0}, 10 * mm, 100 * mm, 0.0}}));
   const Solved run = solved(support::problem_of(section, {1}, {1000.0}, grid_to(1.0)));
-  const std::vector<Point> points{{20 * mm, 0}, {20 * mm, 30 * mm}, {50 * mm, 0}, {0, 100 * mm},
-                                  {100 * mm, 100 * mm}, {500 * mm, 0}, {1000 * mm, 0},
-                                  {0, 1000 * mm}, {2.5 * mm, 25 * mm}, {5 * mm, 0}};
+  const std::vector<Point> points{
+      {20 * mm, 0},  {20 * mm, 30 * mm}, {50 * mm, 0},   {0, 100 * mm},       {100 * mm, 100 * mm},
+      {500 * mm, 0}, {1000 * mm, 0},     {0, 1000 * mm}, {2.5 * mm, 25 * mm}, {5 * mm, 0}};
   CHECK(worst_b(run, points, [&](Point p) {
           return verify::field_of(section.parts[0].pieces[0], 1000.0, p);
         }) < 2e-3);
@@ -217,8 +217,8 @@ TEST_CASE("Three bars in a steel trunking against a grid four times finer", "[lo
   CHECK(run.value(a, "walls/trunking/b_mean") ==
         Approx(run.value(b, "walls/trunking/b_mean")).epsilon(3e-3));
   const double largest = std::abs(run.value(b, "bars/L1/force_x"));
-  CHECK(std::abs(run.value(a, "walls/trunking/force_x") -
-                 run.value(b, "walls/trunking/force_x")) < 5e-3 * largest);
+  CHECK(std::abs(run.value(a, "walls/trunking/force_x") - run.value(b, "walls/trunking/force_x")) <
+        5e-3 * largest);
 
   mesh::Box box;
   box.include(Point{-157 * mm, -107 * mm});
@@ -268,7 +268,8 @@ TEST_CASE("Doubling reach changes every figure by less than 0.02 %") {
   const mesh::Section trunking = support::three_bars_in_trunking();
   mesh::Section plate;
   plate.parts.push_back(support::bar("bar", {Rectangle{{0, 0}, 10 * mm, 100 * mm, 0.0}}));
-  plate.parts.push_back(support::bar("other", {Rectangle{{-60 * mm, 10 * mm}, 10 * mm, 80 * mm, 0.2}}));
+  plate.parts.push_back(
+      support::bar("other", {Rectangle{{-60 * mm, 10 * mm}, 10 * mm, 80 * mm, 0.2}}));
   plate.parts.push_back(
       support::steel_wall("plate", {Rectangle{{50 * mm, 5 * mm}, 6 * mm, 200 * mm, 0.0}}));
   struct Item {

@@ -16,8 +16,9 @@ namespace barwall::test {
 class ScratchFolder {
 public:
   ScratchFolder()
-      : path_(std::filesystem::temp_directory_path() /
-              ("barwall-case-test-" + std::to_string(::getpid()) + "-" + std::to_string(count()++))) {
+      : path_(
+            std::filesystem::temp_directory_path() /
+            ("barwall-case-test-" + std::to_string(::getpid()) + "-" + std::to_string(count()++))) {
     std::filesystem::create_directories(path_);
   }
   ~ScratchFolder() {

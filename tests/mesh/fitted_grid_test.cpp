@@ -61,12 +61,13 @@ int mixed_triangles(const Section& section, const Outline& outline, const Fitted
   int count = 0;
   for (int t = 0; t < grid.triangle_count(); ++t) {
     const auto p = grid.corners(t);
-    const double edge = std::max({distance(p[0], p[1]), distance(p[1], p[2]), distance(p[2], p[0])});
+    const double edge =
+        std::max({distance(p[0], p[1]), distance(p[1], p[2]), distance(p[2], p[0])});
     if (grid.occupant(t).part < 0 && !near_any(boxes, p[0], edge)) continue;
     for (int k = 0; k < 4; ++k) {
       const double w[3] = {k == 0 ? 0.8 : 0.1, k == 1 ? 0.8 : 0.1, k == 2 ? 0.8 : 0.1};
-      const Point q = k == 3 ? (1.0 / 3.0) * (p[0] + p[1] + p[2])
-                             : w[0] * p[0] + w[1] * p[1] + w[2] * p[2];
+      const Point q =
+          k == 3 ? (1.0 / 3.0) * (p[0] + p[1] + p[2]) : w[0] * p[0] + w[1] * p[1] + w[2] * p[2];
       if (occupant_at(section, q) == grid.occupant(t)) continue;
       bool excused = false;
       for (const OutlinePiece& piece : outline.pieces) {
@@ -97,7 +98,8 @@ TEST_CASE("Inclined outlines are met exactly: turned bars and polygons keep thei
   Section section;
   section.parts.push_back(support::bar("turned", {Rectangle{{0, 0}, 10 * mm, 100 * mm, 0.3}}));
   section.parts.push_back(support::steel_wall(
-      "angle", {Polygon{{{0.1, 0}, {0.2, 0.02}, {0.198, 0.03}, {0.108, 0.012}, {0.09, 0.1}, {0.08, 0.1}}}}));
+      "angle",
+      {Polygon{{{0.1, 0}, {0.2, 0.02}, {0.198, 0.03}, {0.108, 0.012}, {0.09, 0.1}, {0.08, 0.1}}}}));
   const Outline outline = outline_of(section);
   const FittedGrid grid = make_grid(section, outline, plain_options());
   const auto area = gridded_area(grid);
@@ -126,9 +128,9 @@ TEST_CASE("Every bar, wall and gap has at least cells_across cells across it") {
     const FittedGrid grid = make_grid(section, outline, plain_options(cells));
     const auto count = [](const std::vector<double>& lines, double from, double to) {
       const double slack = 1e-9;
-      return std::count_if(lines.begin(), lines.end(), [&](double v) {
-               return v >= from - slack && v <= to + slack;
-             }) - 1;
+      return std::count_if(lines.begin(), lines.end(),
+                           [&](double v) { return v >= from - slack && v <= to + slack; }) -
+             1;
     };
     CHECK(count(grid.x_lines, -64 * mm, -56 * mm) >= cells);    // a bar
     CHECK(count(grid.x_lines, -56 * mm, -4 * mm) >= cells);     // a gap
@@ -155,7 +157,8 @@ TEST_CASE("Doubling cells_across halves every interval of the grid") {
   }
 }
 
-TEST_CASE("The outer boundary lies at the larger of reach half-sizes and 100 times the farthest probe") {
+TEST_CASE(
+    "The outer boundary lies at the larger of reach half-sizes and 100 times the farthest probe") {
   const Section section = support::three_bars_in_trunking();
   const Outline outline = outline_of(section);
   GridOptions options;

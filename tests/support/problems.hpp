@@ -28,8 +28,8 @@ inline std::shared_ptr<solver::Problem> problem_of(mesh::Section section,
   options.reach = grid.reach;
   options.fine = grid.probes;
   if (solver::has_net_current({frequency_hz, current})) options.wide = 42.0;
-  problem->grid = std::make_shared<mesh::FittedGrid>(
-      make_grid(problem->section, problem->outline, options));
+  problem->grid =
+      std::make_shared<mesh::FittedGrid>(make_grid(problem->section, problem->outline, options));
   for (double mu : permeability) problem->materials.push_back({"test", mu});
   problem->excitation.current = current;
   problem->excitation.frequency_hz = frequency_hz;

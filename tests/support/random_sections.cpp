@@ -12,7 +12,7 @@ namespace {
 using namespace mesh;
 
 class Generator {
- public:
+public:
   explicit Generator(unsigned seed) : random_(seed) {}
 
   Section run() {
@@ -32,7 +32,7 @@ class Generator {
     return section_;
   }
 
- private:
+private:
   int pick(int n) { return static_cast<int>(random_() % static_cast<unsigned>(n)); }
   double uniform(double a, double b) {
     return a + (b - a) * static_cast<double>(random_()) / 4294967296.0;
@@ -48,25 +48,47 @@ class Generator {
   /// Something within a circle of the tile's size.
   void tile(Point c, double size) {
     switch (pick(9)) {
-      case 0: add(bar(name(), {solid(c, size)})); break;
-      case 1: add(steel_wall(name(), {solid(c, size)})); break;
-      case 2: nested_frame(c, size); break;
-      case 3: nested_tube(c, size); break;
-      case 4: touching(c, size); break;
-      case 5: overlapping_walls(c, size); break;
-      case 6: pieces(c, size); break;
-      case 7: slotted(c, size); break;
-      default: angle(c, size); break;
+      case 0:
+        add(bar(name(), {solid(c, size)}));
+        break;
+      case 1:
+        add(steel_wall(name(), {solid(c, size)}));
+        break;
+      case 2:
+        nested_frame(c, size);
+        break;
+      case 3:
+        nested_tube(c, size);
+        break;
+      case 4:
+        touching(c, size);
+        break;
+      case 5:
+        overlapping_walls(c, size);
+        break;
+      case 6:
+        pieces(c, size);
+        break;
+      case 7:
+        slotted(c, size);
+        break;
+      default:
+        angle(c, size);
+        break;
     }
   }
 
   Shape solid(Point c, double size) {
     const double thin = log_uniform(0.03, 0.7) * size;
     switch (pick(4)) {
-      case 0: return Rectangle{c, thin, 0.7 * size, turn()};
-      case 1: return Round{c, uniform(0.3, 0.9) * size};
-      case 2: return Tube{c, 0.9 * size, uniform(0.05, 0.4) * size};
-      default: return polygon(c, 0.45 * size);
+      case 0:
+        return Rectangle{c, thin, 0.7 * size, turn()};
+      case 1:
+        return Round{c, uniform(0.3, 0.9) * size};
+      case 2:
+        return Tube{c, 0.9 * size, uniform(0.05, 0.4) * size};
+      default:
+        return polygon(c, 0.45 * size);
     }
   }
 
@@ -106,7 +128,8 @@ class Generator {
     } else {
       add(bar(name(), {Round{c + Point{0.4 * w, 0.0}, 0.8 * w}}));
     }
-    add(steel_wall(name(), {Rectangle{c - Point{0.5 * w, 0.5 * h + 0.03 * size}, 2.5 * w, 0.06 * size, 0.0}}));
+    add(steel_wall(
+        name(), {Rectangle{c - Point{0.5 * w, 0.5 * h + 0.03 * size}, 2.5 * w, 0.06 * size, 0.0}}));
   }
 
   void overlapping_walls(Point c, double size) {
@@ -131,7 +154,8 @@ class Generator {
     const int wall = add(steel_wall(name(), {Frame{c, 0.68 * size, 0.6 * size, t, 0.0}}));
     const double gap = log_uniform(0.02, 0.2) * size;
     section_.openings.push_back(
-        {"slot " + std::to_string(wall), {wall},
+        {"slot " + std::to_string(wall),
+         {wall},
          {Rectangle{c + Point{uniform(-0.1, 0.1) * size, 0.3 * size}, gap, 0.3 * size, 0.0}}});
   }
 
@@ -151,7 +175,8 @@ class Generator {
     const double margin = log_uniform(3.0, 60.0) * mm;
     const double t = log_uniform(1.0, 6.0) * mm;
     const Point c{0.5 * width, 0.5 * (low + high)};
-    add(steel_wall(name(), {Frame{c, width + 2.0 * (margin + t), high - low + 2.0 * (margin + t), t, 0.0}}));
+    add(steel_wall(
+        name(), {Frame{c, width + 2.0 * (margin + t), high - low + 2.0 * (margin + t), t, 0.0}}));
   }
 
   std::mt19937 random_;
@@ -160,7 +185,9 @@ class Generator {
 
 }  // namespace
 
-mesh::Section random_section(unsigned seed) { return Generator(seed).run(); }
+mesh::Section random_section(unsigned seed) {
+  return Generator(seed).run();
+}
 
 bool straight(const mesh::Section& section) {
   for (const mesh::Part& part : section.parts) {

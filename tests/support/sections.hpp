@@ -38,8 +38,7 @@ inline mesh::Section trefoil_in_pipe() {
     const mesh::Point centre{25 * mm * std::cos(angle), 25 * mm * std::sin(angle)};
     section.parts.push_back(bar(names[k], {mesh::Round{centre, 20 * mm}}));
   }
-  section.parts.push_back(
-      steel_wall("pipe", {mesh::Tube{{0.0, 0.0}, 130 * mm, 5 * mm}}));
+  section.parts.push_back(steel_wall("pipe", {mesh::Tube{{0.0, 0.0}, 130 * mm, 5 * mm}}));
   return section;
 }
 

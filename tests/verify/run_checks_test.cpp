@@ -15,8 +15,7 @@ using support::mm;
 /// Two bars, one of them round, beside a steel plate.
 mesh::Section pair_beside_plate() {
   mesh::Section section;
-  section.parts.push_back(
-      support::bar("go", {mesh::Rectangle{{0.0, 0.0}, 10 * mm, 60 * mm, 0.0}}));
+  section.parts.push_back(support::bar("go", {mesh::Rectangle{{0.0, 0.0}, 10 * mm, 60 * mm, 0.0}}));
   section.parts.push_back(support::bar("return", {mesh::Round{{50 * mm, 0.0}, 24 * mm}}));
   section.parts.push_back(
       support::steel_wall("plate", {mesh::Rectangle{{25 * mm, -50 * mm}, 120 * mm, 6 * mm, 0.0}}));
@@ -86,7 +85,8 @@ TEST_CASE("A wall's permeability changed after the solve fails the energy check"
   Spoiled spoiled;
   const auto& grid = spoiled.solution.grid();
   for (int t = 0; t < grid.triangle_count(); ++t) {
-    if (grid.occupant(t).part == 2) spoiled.solution.reluctivity[static_cast<std::size_t>(t)] *= 1.25;
+    if (grid.occupant(t).part == 2)
+      spoiled.solution.reluctivity[static_cast<std::size_t>(t)] *= 1.25;
   }
   CHECK_FALSE(passed(checks_of(spoiled.solution), "energy"));
 }
@@ -95,7 +95,8 @@ TEST_CASE("A wall taken for far less permeable after the solve fails the Biot-Sa
   Spoiled spoiled;
   const auto& grid = spoiled.solution.grid();
   for (int t = 0; t < grid.triangle_count(); ++t) {
-    if (grid.occupant(t).part == 2) spoiled.solution.reluctivity[static_cast<std::size_t>(t)] *= 20.0;
+    if (grid.occupant(t).part == 2)
+      spoiled.solution.reluctivity[static_cast<std::size_t>(t)] *= 20.0;
   }
   const auto checks = checks_of(spoiled.solution);
   CHECK_FALSE(passed(checks, "biot-savart-rms"));
@@ -119,8 +120,10 @@ TEST_CASE("A node shifted after the solve fails the energy check") {
   auto grid = std::make_shared<mesh::FittedGrid>(*spoiled.problem->grid);
   const mesh::Location at = locate(*grid, spoiled.problem->section, {25 * mm, 0.0});
   auto& node = grid->nodes[static_cast<std::size_t>(grid->triangle(at.triangle)[0])];
-  node.x += 0.3 * (grid->nodes[static_cast<std::size_t>(grid->triangle(at.triangle)[1])].x - node.x);
-  node.y += 0.2 * (grid->nodes[static_cast<std::size_t>(grid->triangle(at.triangle)[2])].y - node.y);
+  node.x +=
+      0.3 * (grid->nodes[static_cast<std::size_t>(grid->triangle(at.triangle)[1])].x - node.x);
+  node.y +=
+      0.2 * (grid->nodes[static_cast<std::size_t>(grid->triangle(at.triangle)[2])].y - node.y);
   spoiled.problem->grid = grid;
   CHECK_FALSE(passed(checks_of(spoiled.solution), "energy"));
 }
