@@ -9,6 +9,7 @@
 #include "verify/mean_distance.hpp"
 #include "verify/pipe_series.hpp"
 #include "verify/round_conductor.hpp"
+#include "verify/short_circuit.hpp"
 #include "verify/steel_rod.hpp"
 #include "verify/steel_wires.hpp"
 #include "verify/three_phase_line.hpp"
