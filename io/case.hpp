@@ -8,6 +8,7 @@
 
 #include "mesh/section.hpp"
 #include "solver/excitation.hpp"
+#include "solver/fault_current.hpp"
 #include "solver/material.hpp"
 
 namespace barwall::io {
@@ -24,6 +25,23 @@ struct ProbeRequest {
   int points = 0;                 ///< line and around: number of points
   std::optional<double> limit_t;  ///< limit on |B| [T]; r.m.s. with a frequency
   std::string limit_from;         ///< the limit's own source
+};
+
+/// A short circuit. Its currents are its own: they owe nothing to the case's.
+struct FaultRequest {
+  solver::FaultCurrent current;  ///< its bars as parts of the section
+  std::string given_key;         ///< what said how it decays or rises: "r_over_x", "peak_ka", ...
+  double given_value = 0.0;      ///< its value, in the file's own unit
+  /// [A] where kappa, peak_over_rms or peak_ka was given. With a frequency the waveform's own
+  /// crest (solver::crest_of) differs from it a little.
+  std::optional<double> given_peak;
+};
+
+/// What holds the bars in a short circuit.
+struct SupportRequest {
+  double span = 0.0;               ///< from support to support [m]
+  std::optional<double> strength;  ///< of one support [N]
+  std::string strength_from;       ///< the strength's own source
 };
 
 /// Grid settings of a case.
@@ -50,6 +68,8 @@ struct Case {
   std::vector<solver::Circuit> circuits;    ///< one per [[three_phase]]
   std::vector<ProbeRequest> probes;         ///< the two default lines where the file has none
   std::vector<solver::Loop> loops;          ///< every pair of up to 10 bars where the file has none
+  std::optional<FaultRequest> fault;
+  std::optional<SupportRequest> supports;  ///< only with a fault
   GridRequest grid;
 };
 

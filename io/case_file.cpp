@@ -9,6 +9,7 @@
 
 #include "io/case.hpp"
 #include "io/case_currents.hpp"
+#include "io/case_fault.hpp"
 #include "io/case_overlaps.hpp"
 #include "io/case_parts.hpp"
 #include "io/case_requests.hpp"
@@ -123,9 +124,10 @@ Case read_case(const std::filesystem::path& file, const std::vector<Setting>& se
   CaseText text{file.string(), {}};
   std::string hashed = bytes_of(file);
   const TomlValue toml = parse_toml(text.file, hashed);
-  const CaseTable root(text, toml, "the case",
-                       {"title", "frequency_hz", "run_length_m", "given", "material", "bar",
-                        "three_phase", "wall", "opening", "probe", "loop", "grid"});
+  const CaseTable root(
+      text, toml, "the case",
+      {"title", "frequency_hz", "run_length_m", "given", "material", "bar", "three_phase", "wall",
+       "opening", "probe", "loop", "fault", "supports", "grid"});
   Case result;
   result.file = text.file;
   result.name = file.stem().string();
@@ -146,6 +148,8 @@ Case read_case(const std::filesystem::path& file, const std::vector<Setting>& se
   CaseCurrents currents = read_currents(root, parts);
   result.probes = read_probes(root);
   result.loops = read_loops(root, parts);
+  result.fault = read_fault(root, parts, currents.excitation.frequency_hz);
+  result.supports = read_supports(root);
   result.grid = read_grid(root);
   const TomlEntry* grid = root.find("grid");
   const Place grid_place = grid == nullptr ? Place{} : grid->value.place;

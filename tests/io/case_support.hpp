@@ -152,6 +152,17 @@ return = ["L2", "L3"]
 [grid]
 cells_across = 6
 reach = 300
+
+[fault]
+between = ["L1", "L2", "L3"]
+symmetrical_ka = 25
+r_over_x = 0.1
+closing_deg = "worst"
+
+[supports]
+span_mm = 300
+strength_n = 6000
+strength_from = "the support's own data sheet"
 )";
 
 /// One steady bar of 8 mm by 80 mm at the origin, for cases that add to it.
