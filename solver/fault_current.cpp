@@ -18,6 +18,8 @@ template <class... Cases>
 struct Overloaded : Cases... {
   using Cases::operator()...;
 };
+template <class... Cases>
+Overloaded(Cases...) -> Overloaded<Cases...>;
 
 /// The circuit's angle phi, tan phi = X/R [rad].
 double circuit_angle(double r_over_x) {

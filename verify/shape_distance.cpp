@@ -2,6 +2,7 @@
 
 #include <cmath>
 #include <numbers>
+#include <utility>
 
 #include "verify/complex_field.hpp"
 #include "verify/filled_bar.hpp"
