@@ -140,10 +140,32 @@ TEST_CASE("the crest is the largest current over time and closing angle") {
     CHECK(crest.current == Approx(largest).epsilon(1e-5));
     CHECK(crest.current == Approx(rms * equivalents_of(r_over_x).crest_over_rms));
     REQUIRE(crest.closing.has_value());
-    CHECK(*crest.closing >= 0.0);
-    CHECK(*crest.closing < pi);
+    // Known of this circuit (from memory): the worst is to close as the voltage passes through 0.
+    CHECK(*crest.closing == Approx(0.5 * pi).epsilon(1e-7));
     const auto then = fault_currents(fault, crest.seconds.value(), *crest.closing);
     CHECK(std::abs(then[0]) == Approx(crest.current).epsilon(1e-13));
+  }
+}
+
+TEST_CASE("a closing angle is found for every angle of the currents at every time") {
+  for (const double r_over_x : {0.0, 0.3}) {
+    const FaultCurrent fault = three_bars(r_over_x);
+    const auto& course = std::get<AlternatingFault>(fault.course);
+    for (const double wt : {0.2, 2.0, 7.0}) {
+      for (const double angle : {0.0, 1.0, 2.5, -9.0}) {
+        const double closing = closing_for(course, wt, angle);
+        CHECK(closing >= 0.0);
+        CHECK(closing < pi);
+        const double scale = fault_instant(course, wt, closing).scale;
+        const auto wanted = fault_currents(fault, FaultInstant{scale, angle});
+        const auto found = fault_currents(fault, wt / (100.0 * pi), closing);
+        // All of them as wanted, or all reversed.
+        const double sign = wanted[0] * found[0] > 0.0 ? 1.0 : -1.0;
+        for (std::size_t k = 0; k < 3; ++k) {
+          CHECK(found[k] == Approx(sign * wanted[k]).margin(1e-9 * rms));
+        }
+      }
+    }
   }
 }
 
