@@ -151,12 +151,13 @@ Results run_case(Case input, const std::function<void(const std::string&)>& on_s
   results.solution = solution;
   watch.begin("figures");
   results.field = std::make_shared<solver::RecoveredField>(*solution);
-  const solver::StressBands bands(*solution, bodies(results.problem->outline));
+  const solver::PartIntegrals integrals(*solution);
+  const solver::StressBands bands(*results.problem, bodies(results.problem->outline));
   results.figures =
-      figures_of(*solution, *results.field, bands,
+      figures_of(integrals, *results.field, bands,
                  probes_of(results.input, results.problem->outline), results.input.circuits);
   watch.begin("checks");
-  results.checks = verify::run_checks(*solution, *results.field, bands);
+  results.checks = verify::run_checks(integrals, *results.field, bands);
   if (results.input.run_length_m) {
     const auto notices =
         verify::end_effect(*results.problem, results.figures, *results.input.run_length_m);

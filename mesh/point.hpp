@@ -86,4 +86,14 @@ struct Box {
   Point centre() const { return between(low, high, 0.5); }
 };
 
+/// Shortest way between two boxes [m], 0 where they meet.
+inline double distance(const Box& a, const Box& b) {
+  const double dx = std::fmax(std::fmax(a.low.x - b.high.x, b.low.x - a.high.x), 0.0);
+  const double dy = std::fmax(std::fmax(a.low.y - b.high.y, b.low.y - a.high.y), 0.0);
+  return std::hypot(dx, dy);
+}
+inline double distance(const Box& box, Point p) {
+  return distance(box, Box{p, p});
+}
+
 }  // namespace barwall::mesh

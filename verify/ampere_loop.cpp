@@ -55,16 +55,19 @@ public:
   Check loops(const std::vector<std::vector<int>>& bodies) const {
     Worst worst;
     int count = 0;
+    std::vector<std::size_t> body_of(problem_.section.parts.size());
     for (std::size_t b = 0; b < bodies.size(); ++b) {
-      double gap = half_size(problem_.section);
-      for (std::size_t c = 0; c < bodies.size(); ++c) {
-        if (c == b) continue;
-        for (int p : bodies[b]) {
-          for (int q : bodies[c]) {
-            gap = std::min(gap, gap_between(problem_.outline, p, q).width);
-          }
-        }
-      }
+      for (int part : bodies[b]) body_of[static_cast<std::size_t>(part)] = b;
+    }
+    std::vector<double> gap_round(bodies.size(), half_size(problem_.section));
+    for (const mesh::PartGap& pair : gaps(problem_.outline)) {
+      const std::size_t first = body_of[static_cast<std::size_t>(pair.first)];
+      const std::size_t second = body_of[static_cast<std::size_t>(pair.second)];
+      if (first == second) continue;
+      for (std::size_t b : {first, second}) gap_round[b] = std::min(gap_round[b], pair.gap.width);
+    }
+    for (std::size_t b = 0; b < bodies.size(); ++b) {
+      const double gap = gap_round[b];
       for (const auto& line : offset_lines(problem_.outline, bodies[b], 0.5 * gap)) {
         ++count;
         worst.take(
