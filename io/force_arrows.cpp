@@ -107,8 +107,7 @@ void draw_arrow(Canvas& canvas, PagePoint from, PagePoint to) {
       from + half_shaft * aside, neck + half_shaft * aside, neck + half_head * aside, to,
       neck - half_head * aside,  neck - half_shaft * aside, from - half_shaft * aside};
   canvas.line(shape, {{1.0, 1.0, 1.0, 0.95}, 3.5, {}}, true);
-  // Vermilion of M. Okabe and K. Ito's palette for every kind of colour vision, 2008.
-  canvas.fill({shape}, colour_of(0xd55e00));
+  canvas.fill({shape}, marking_ink);
 }
 
 void draw_forces(Canvas& canvas, const std::vector<ForceArrow>& arrows, const ArrowScale& scale,
