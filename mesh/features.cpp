@@ -8,7 +8,7 @@ namespace {
 
 // Spacings as fractions of a size, at cells_across = 4.
 constexpr double across = 1.0 / 4.0;            // of a width or gap
-constexpr double on_diameter = 1.0 / 32.0;      // of a circle's diameter
+constexpr double on_diameter = 1.0 / 40.0;      // of a circle's diameter
 constexpr double at_bar_edge = 1.0 / 16;        // of a bar's thickness
 constexpr double at_sharp_corner = 1.0 / 25.0;  // of a sharp part's thickness
 
@@ -179,16 +179,33 @@ Features features_of(const Section& section, const Outline& outline) {
   Features features;
   const double extent = 2.0 * half_size(section);
   const auto& pieces = outline.pieces;
+  std::vector<Box> boxes;
+  std::vector<double> edge;  // radius, or thickness of the bar that the piece bounds [m]
+  for (const OutlinePiece& piece : pieces) {
+    boxes.push_back(bounds(piece.curve));
+    edge.push_back(HUGE_VAL);
+    for (Occupant side : {piece.left, piece.right}) {
+      const Part* part = part_of(section, side);
+      if (part == nullptr || part->kind != Part::Kind::bar) continue;
+      const auto* arc = std::get_if<Arc>(&piece.curve);
+      edge.back() = arc != nullptr ? arc->radius : thickness(*shape_of(section, side));
+    }
+  }
   for (std::size_t a = 0; a < pieces.size(); ++a) {
     add_edges(features, section, pieces[a]);
     add_lines(features, pieces[a], extent);
     for (std::size_t b = a + 1; b < pieces.size(); ++b) {
+      // A bar's edge asks for a sixteenth of its thickness there, an arc's for one of its radius:
+      // growing from it, the spacing is below a quarter of any gap that is wider than that.
+      if (distance(boxes[a], boxes[b]) > std::min(edge[a], edge[b])) continue;
       add_pair(features, pieces[a].curve, pieces[b].curve, outline.contact);
     }
   }
   for (Point vertex : outline.vertices) {
     std::vector<VertexEnd> ends;
-    for (const OutlinePiece& piece : pieces) {
+    for (std::size_t k = 0; k < pieces.size(); ++k) {
+      const OutlinePiece& piece = pieces[k];
+      if (distance(boxes[k], vertex) > outline.contact) continue;
       for (double end : {0.0, 1.0}) {
         if (distance(at(piece.curve, end), vertex) > outline.contact) continue;
         const Point forward = tangent(piece.curve, end);

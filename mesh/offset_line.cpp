@@ -7,51 +7,75 @@
 #include <boost/geometry/geometries/multi_polygon.hpp>
 #include <boost/geometry/geometries/point_xy.hpp>
 #include <boost/geometry/geometries/polygon.hpp>
-#include <numbers>
+#include <set>
 
 namespace barwall::mesh {
+namespace {
+
+namespace bg = boost::geometry;
+using Vertex = bg::model::d2::point_xy<double>;
+using Line = bg::model::linestring<Vertex>;
+using Ring = bg::model::polygon<Vertex, false>;  // counter-clockwise
+using Rings = bg::model::multi_polygon<Ring>;
+
+constexpr int points_per_circle = 144;  // chords within 1/4000 of the radius
+
+/// Holes filled: what runs round a part in the hollow of another is not outermost.
+void keep_outer(Rings& rings) {
+  for (Ring& ring : rings) ring.inners().clear();
+}
+
+/// Everything within 1 of lines first to last. The edges of that many lines meet each other
+/// everywhere: beyond a few dozen they are grown by halves, whose few outer edges are then joined.
+Rings grown_by_one(const std::vector<Line>& lines, std::size_t first, std::size_t last) {
+  constexpr std::size_t few = 48;
+  Rings grown;
+  if (last - first <= few) {
+    bg::model::multi_linestring<Line> some;
+    for (std::size_t k = first; k < last; ++k) some.push_back(lines[k]);
+    bg::buffer(some, grown, bg::strategy::buffer::distance_symmetric<double>(1.0),
+               bg::strategy::buffer::side_straight(),
+               bg::strategy::buffer::join_round(points_per_circle),
+               bg::strategy::buffer::end_round(points_per_circle),
+               bg::strategy::buffer::point_circle(points_per_circle));
+  } else {
+    const std::size_t middle = first + (last - first) / 2;
+    bg::union_(grown_by_one(lines, first, middle), grown_by_one(lines, middle, last), grown);
+  }
+  keep_outer(grown);
+  return grown;
+}
+
+}  // namespace
 
 std::vector<std::vector<Point>> offset_lines(const Outline& outline, const std::vector<int>& parts,
                                              double clearance) {
-  namespace bg = boost::geometry;
-  using Vertex = bg::model::d2::point_xy<double>;
-  using Ring = bg::model::polygon<Vertex, false>;  // counter-clockwise
-  const auto ours = [&](Occupant side) {
-    return std::find(parts.begin(), parts.end(), side.part) != parts.end();
-  };
+  const std::set<int> wanted(parts.begin(), parts.end());
+  const auto ours = [&](Occupant side) { return wanted.contains(side.part); };
   // In units of the clearance about the outline's own place, for the library's tolerances.
   Box box;
   for (const OutlinePiece& piece : outline.pieces) {
     if (ours(piece.left) != ours(piece.right)) box.include(bounds(piece.curve));
   }
   const Point origin = box.centre();
-  bg::model::multi_linestring<bg::model::linestring<Vertex>> lines;
+  std::vector<Line> lines;
   for (const OutlinePiece& piece : outline.pieces) {
     if (ours(piece.left) == ours(piece.right)) continue;
-    bg::model::linestring<Vertex> line;
+    Line line;
     for (Point p : polyline(piece.curve, clearance / 4000.0)) {
       const Point q = (1.0 / clearance) * (p - origin);
       line.emplace_back(q.x, q.y);
     }
     lines.push_back(std::move(line));
   }
-  constexpr int points_per_circle = 144;  // chords within 1/4000 of the radius
-  bg::model::multi_polygon<Ring> grown;
-  bg::buffer(lines, grown, bg::strategy::buffer::distance_symmetric<double>(1.0),
-             bg::strategy::buffer::side_straight(),
-             bg::strategy::buffer::join_round(points_per_circle),
-             bg::strategy::buffer::end_round(points_per_circle),
-             bg::strategy::buffer::point_circle(points_per_circle));
   std::vector<std::pair<double, std::vector<Point>>> found;
-  for (const Ring& ring : grown) {
+  for (const Ring& ring : grown_by_one(lines, 0, lines.size())) {
     std::vector<Point> line;
     for (const Vertex& v : ring.outer()) {
       line.push_back(origin + clearance * Point{v.x(), v.y()});
     }
     line.pop_back();  // the library repeats the first point
-    bg::model::polygon<Vertex, false> outer;
-    outer.outer() = ring.outer();
-    found.emplace_back(bg::area(outer), std::move(line));
+    found.emplace_back(bg::area(ring), std::move(line));
   }
   std::sort(found.begin(), found.end(),
             [](const auto& a, const auto& b) { return a.first > b.first; });

@@ -266,21 +266,30 @@ Gap gap_between(const Curve& first, const Curve& second) {
   return best;
 }
 
-Gap gap_between(const Outline& outline, int first_part, int second_part) {
-  const auto touches = [](const OutlinePiece& piece, int part) {
-    return piece.left.part == part || piece.right.part == part;
-  };
-  Gap best;
-  for (const OutlinePiece& a : outline.pieces) {
-    if (!touches(a, first_part)) continue;
-    for (const OutlinePiece& b : outline.pieces) {
-      if (!touches(b, second_part)) continue;
-      const Gap gap = gap_between(a.curve, b.curve);
-      if (gap.width < best.width) best = gap;
+std::vector<PartGap> gaps(const Outline& outline) {
+  std::map<int, std::vector<std::pair<Box, const Curve*>>> curves;
+  for (const OutlinePiece& piece : outline.pieces) {
+    for (int part : std::set{piece.left.part, piece.right.part}) {
+      if (part < 0) continue;
+      curves[part].emplace_back(bounds(piece.curve), &piece.curve);
     }
   }
-  if (best.width <= outline.contact) best.width = 0.0;
-  return best;
+  std::vector<PartGap> result;
+  for (auto a = curves.begin(); a != curves.end(); ++a) {
+    for (auto b = std::next(a); b != curves.end(); ++b) {
+      Gap best;
+      for (const auto& [first_box, first] : a->second) {
+        for (const auto& [second_box, second] : b->second) {
+          if (distance(first_box, second_box) >= best.width) continue;
+          const Gap gap = gap_between(*first, *second);
+          if (gap.width < best.width) best = gap;
+        }
+      }
+      if (best.width <= outline.contact) best.width = 0.0;
+      result.push_back({a->first, b->first, best});
+    }
+  }
+  return result;
 }
 
 std::vector<int> visible_parts(const Outline& outline) {
@@ -301,14 +310,28 @@ std::vector<std::vector<int>> bodies(const Outline& outline) {
     while (root[part] != part) part = root[part];
     return part;
   };
-  for (std::size_t a = 0; a < parts.size(); ++a) {
-    for (std::size_t b = a + 1; b < parts.size(); ++b) {
-      const int first = find(parts[a]);
-      const int second = find(parts[b]);
-      if (first == second) continue;
-      if (gap_between(outline, parts[a], parts[b]).width == 0.0) {
-        root[std::max(first, second)] = std::min(first, second);
-      }
+  // Pieces from left to right: one can only touch those that begin before it ends.
+  std::vector<std::pair<Box, const OutlinePiece*>> pieces;
+  for (const OutlinePiece& piece : outline.pieces) pieces.emplace_back(bounds(piece.curve), &piece);
+  std::stable_sort(pieces.begin(), pieces.end(),
+                   [](const auto& a, const auto& b) { return a.first.low.x < b.first.low.x; });
+  const auto join = [&](int first, int second) {
+    if (first < 0 || second < 0) return;
+    const int a = find(first);
+    const int b = find(second);
+    root[std::max(a, b)] = std::min(a, b);
+  };
+  for (std::size_t a = 0; a < pieces.size(); ++a) {
+    const OutlinePiece& piece = *pieces[a].second;
+    join(piece.left.part, piece.right.part);
+    for (std::size_t b = a + 1; b < pieces.size(); ++b) {
+      if (pieces[b].first.low.x > pieces[a].first.high.x + outline.contact) break;
+      if (distance(pieces[a].first, pieces[b].first) > outline.contact) continue;
+      const OutlinePiece& other = *pieces[b].second;
+      if (gap_between(piece.curve, other.curve).width > outline.contact) continue;
+      const int part = std::max(piece.left.part, piece.right.part);
+      join(part, other.left.part);
+      join(part, other.right.part);
     }
   }
   std::map<int, std::vector<int>> groups;

@@ -34,8 +34,15 @@ struct Gap {
 
 Gap gap_between(const Curve& first, const Curve& second);
 
-/// Shortest distance between the visible outlines of two parts, 0 in contact.
-Gap gap_between(const Outline& outline, int first_part, int second_part);
+/// Two visible parts, by index, and the shortest distance between their outlines, 0 in contact.
+struct PartGap {
+  int first = 0;
+  int second = 0;
+  Gap gap;
+};
+
+/// The gaps between all pairs of visible parts, first < second, in that order.
+std::vector<PartGap> gaps(const Outline& outline);
 
 /// The parts of a section that show anywhere, by index, ascending.
 std::vector<int> visible_parts(const Outline& outline);

@@ -1,5 +1,7 @@
 #pragma once
 
+#include <type_traits>
+
 #include "mesh/point.hpp"
 
 namespace barwall::solver {
@@ -28,6 +30,23 @@ struct PulsatingVector {
 
   mesh::Point at(double wt) const { return {x.at(wt), y.at(wt)}; }
 };
+
+/// A figure over the cycle from its products q(j, k), bilinear in load patterns j and k, a number
+/// or a vector. Steady currents, with one pattern, have a mean alone.
+template <class Bilinear>
+auto over_cycle(int patterns, Bilinear product) {
+  if constexpr (std::is_same_v<decltype(product(0, 0)), mesh::Point>) {
+    const mesh::Point first = product(0, 0);
+    if (patterns == 1) return PulsatingVector{{first.x}, {first.y}};
+    const mesh::Point second = product(1, 1);
+    const mesh::Point mixed = 0.5 * (product(0, 1) + product(1, 0));
+    return PulsatingVector{pulsation_of(first.x, second.x, mixed.x),
+                           pulsation_of(first.y, second.y, mixed.y)};
+  } else {
+    if (patterns == 1) return Pulsation{product(0, 0)};
+    return pulsation_of(product(0, 0), product(1, 1), 0.5 * (product(0, 1) + product(1, 0)));
+  }
+}
 
 /// Where in the cycle a vector is largest.
 struct Peak {

@@ -2,18 +2,8 @@
 
 #include "solver/assembly.hpp"
 #include "solver/flux_density.hpp"
-#include "solver/flux_linkage.hpp"
 
 namespace barwall::solver {
-namespace {
-
-template <class Bilinear>
-Pulsation over_cycle(int patterns, Bilinear product) {
-  if (patterns == 1) return {product(0, 0), 0.0, 0.0};
-  return pulsation_of(product(0, 0), product(1, 1), 0.5 * (product(0, 1) + product(1, 0)));
-}
-
-}  // namespace
 
 Pulsation field_energy(const Solution& solution) {
   const mesh::FittedGrid& grid = solution.grid();
@@ -30,26 +20,17 @@ Pulsation field_energy(const Solution& solution) {
   });
 }
 
-TerminalEnergy terminal_energy(const Solution& solution) {
-  const Problem& problem = *solution.problem;
+TerminalEnergy terminal_energy(const PartIntegrals& integrals) {
+  const Solution& solution = integrals.solution();
   const mesh::FittedGrid& grid = solution.grid();
   const int patterns = solution.pattern_count();
-  Eigen::MatrixXd linkage =
-      Eigen::MatrixXd::Zero(static_cast<Eigen::Index>(problem.section.parts.size()), patterns);
-  for (const mesh::Occupant occupant : grid.occupants) {
-    if (occupant.part < 0 || occupant.piece != 0) continue;
-    for (int k = 0; k < patterns; ++k) {
-      linkage(occupant.part, k) =
-          mean_potential(solution, occupant.part, solution.potential.col(k));
-    }
-  }
   TerminalEnergy energy;
   energy.linkage = over_cycle(patterns, [&](int current, int field) {
     double sum = 0.0;
     const auto& part_current = solution.patterns[static_cast<std::size_t>(current)].part_current;
     for (std::size_t k = 0; k < part_current.size(); ++k) {
       if (part_current[k] == 0.0) continue;
-      sum += 0.5 * part_current[k] * linkage(static_cast<Eigen::Index>(k), field);
+      sum += 0.5 * part_current[k] * integrals.mean_potential(static_cast<int>(k), field);
     }
     return sum;
   });

@@ -1,7 +1,7 @@
 #pragma once
 
 #include "solver/cycle.hpp"
-#include "solver/magnetostatics.hpp"
+#include "solver/part_integrals.hpp"
 
 namespace barwall::solver {
 
@@ -15,6 +15,6 @@ struct TerminalEnergy {
   Pulsation linkage;
   Pulsation boundary;
 };
-TerminalEnergy terminal_energy(const Solution& solution);
+TerminalEnergy terminal_energy(const PartIntegrals& integrals);
 
 }  // namespace barwall::solver

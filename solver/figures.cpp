@@ -2,6 +2,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <map>
 #include <numbers>
 
 #include "solver/energy.hpp"
@@ -10,6 +11,9 @@
 
 namespace barwall::solver {
 namespace {
+
+/// With more parts than this, only the gaps to each part's nearest neighbours are listed.
+constexpr std::size_t most_parts_with_all_gaps = 40;
 
 constexpr double degree = std::numbers::pi / 180.0;
 
@@ -40,13 +44,15 @@ void append(std::vector<Figure>& to, std::vector<Figure> more) {
 
 class Collector {
 public:
-  Collector(const Solution& solution, const RecoveredField& field, const StressBands& bands)
-      : solution_(solution),
-        problem_(*solution.problem),
+  Collector(const PartIntegrals& integrals, const RecoveredField& field, const StressBands& bands)
+      : integrals_(integrals),
+        solution_(integrals.solution()),
+        problem_(*solution_.problem),
         field_(field),
         bands_(bands),
         alternating_(problem_.excitation.alternating()),
-        visible_(visible_parts(problem_.outline)) {}
+        visible_(visible_parts(problem_.outline)),
+        levels_(field_levels(solution_)) {}
 
   void parts(Figures& figures) const {
     for (int part : visible_) {
@@ -70,7 +76,8 @@ public:
       Entry entry;
       for (int part : members) entry.parts.push_back(name_of(part));
       entry.name = joined(entry.parts);
-      entry.figures = force_figures(bands_.force(static_cast<int>(b), whole_band), alternating_);
+      entry.figures =
+          force_figures(bands_.force(solution_, static_cast<int>(b), whole_band), alternating_);
       figures.bodies.push_back(std::move(entry));
     }
   }
@@ -78,7 +85,7 @@ public:
   void loops(Figures& figures) const {
     for (const Loop& loop : problem_.loops) {
       figures.loops.push_back(
-          {loop.name, {}, {{"inductance", loop_inductance(solution_, loop), "H/m"}}, {}, 0.0});
+          {loop.name, {}, {{"inductance", loop_inductance(integrals_, loop), "H/m"}}, {}, 0.0});
     }
   }
 
@@ -114,13 +121,24 @@ public:
   }
 
   void clearances(Figures& figures) const {
-    for (std::size_t a = 0; a < visible_.size(); ++a) {
-      for (std::size_t b = a + 1; b < visible_.size(); ++b) {
-        if (!is_bar(visible_[a]) && !is_bar(visible_[b])) continue;
-        const mesh::Gap gap = gap_between(problem_.outline, visible_[a], visible_[b]);
-        figures.clearances.push_back(
-            {{name_of(visible_[a]), name_of(visible_[b])}, {"gap", gap.width, "m"}});
+    auto pairs = gaps(problem_.outline);
+    std::erase_if(pairs,
+                  [&](const auto& pair) { return !is_bar(pair.first) && !is_bar(pair.second); });
+    if (visible_.size() > most_parts_with_all_gaps) {
+      std::map<int, double> least;
+      for (const auto& pair : pairs) {
+        for (int part : {pair.first, pair.second}) {
+          const auto known = least.try_emplace(part, HUGE_VAL).first;
+          known->second = std::min(known->second, pair.gap.width);
+        }
       }
+      std::erase_if(pairs, [&](const auto& pair) {
+        return pair.gap.width > std::max(least[pair.first], least[pair.second]);
+      });
+    }
+    for (const auto& pair : pairs) {
+      figures.clearances.push_back(
+          {{name_of(pair.first), name_of(pair.second)}, {"gap", pair.gap.width, "m"}});
     }
   }
 
@@ -143,13 +161,13 @@ private:
   /// J x B where that is exact, else the stress round the part, unless it touches another.
   std::vector<Figure> part_force(int part) const {
     if (is_bar(part) && !magnetic(part)) {
-      return force_figures(lorentz_force(solution_, part), alternating_);
+      return force_figures(lorentz_force(integrals_, part), alternating_);
     }
     const auto& bodies = bands_.bodies();
     for (std::size_t b = 0; b < bodies.size(); ++b) {
       if (std::find(bodies[b].begin(), bodies[b].end(), part) == bodies[b].end()) continue;
       if (bodies[b].size() > 1) break;
-      return force_figures(bands_.force(static_cast<int>(b), whole_band), alternating_);
+      return force_figures(bands_.force(solution_, static_cast<int>(b), whole_band), alternating_);
     }
     return without_values(force_figures({}, alternating_));
   }
@@ -157,20 +175,20 @@ private:
   double reactance(int bar) const {
     const std::complex<double> current = problem_.excitation.current[static_cast<std::size_t>(bar)];
     if (current == 0.0) return not_given;
-    const std::complex<double> linkage{mean_potential(solution_, bar, solution_.potential.col(0)),
-                                       mean_potential(solution_, bar, solution_.potential.col(1))};
+    const std::complex<double> linkage{integrals_.mean_potential(bar, 0),
+                                       integrals_.mean_potential(bar, 1)};
     return 2.0 * std::numbers::pi * problem_.excitation.frequency_hz * (linkage / current).real();
   }
 
   Entry entry_of(int part) const {
     const mesh::Part& p = problem_.section.parts[static_cast<std::size_t>(part)];
     Entry entry{p.name, {}, part_force(part), {}, 0.0};
-    const FieldLevel level = field_level(solution_, part);
+    const FieldLevel& level = levels_[static_cast<std::size_t>(part)];
     if (is_bar(part)) {
       entry.current = problem_.excitation.current[static_cast<std::size_t>(part)];
-      const double in_phase = mean_potential(solution_, part, solution_.potential.col(0));
+      const double in_phase = integrals_.mean_potential(part, 0);
       if (alternating_) {
-        const double quadrature = mean_potential(solution_, part, solution_.potential.col(1));
+        const double quadrature = integrals_.mean_potential(part, 1);
         append(entry.figures, {{"flux_linkage_in_phase", in_phase, "Wb/m"},
                                {"flux_linkage_quadrature", quadrature, "Wb/m"},
                                {"reactance", reactance(part), "ohm/m"}});
@@ -182,7 +200,7 @@ private:
         auto force =
             magnetic(part)
                 ? without_values(force_figures({}, alternating_))
-                : force_figures(lorentz_force(solution_, part, static_cast<int>(k)), alternating_);
+                : force_figures(lorentz_force(integrals_, part, static_cast<int>(k)), alternating_);
         entry.pieces.push_back(
             {p.name + "." + std::to_string(k + 1), {}, std::move(force), {}, 0.0});
       }
@@ -249,12 +267,14 @@ private:
                        });
   }
 
+  const PartIntegrals& integrals_;
   const Solution& solution_;
   const Problem& problem_;
   const RecoveredField& field_;
   const StressBands& bands_;
   bool alternating_;
   std::vector<int> visible_;
+  std::vector<FieldLevel> levels_;  ///< per part
 };
 
 }  // namespace
@@ -317,9 +337,10 @@ LimitState limits_of(const Figures& figures) {
   return worst;
 }
 
-Figures figures_of(const Solution& solution, const RecoveredField& field, const StressBands& bands,
-                   const std::vector<Probe>& probes, const std::vector<Circuit>& circuits) {
-  const Collector collector(solution, field, bands);
+Figures figures_of(const PartIntegrals& integrals, const RecoveredField& field,
+                   const StressBands& bands, const std::vector<Probe>& probes,
+                   const std::vector<Circuit>& circuits) {
+  const Collector collector(integrals, field, bands);
   Figures figures;
   collector.parts(figures);
   collector.loops(figures);

@@ -91,7 +91,8 @@ std::vector<std::pair<std::string, const Figure*>> addresses(const Figures& figu
 /// The worst of the probes' limit states: exceeded, undecided, met, none.
 LimitState limits_of(const Figures& figures);
 
-Figures figures_of(const Solution& solution, const RecoveredField& field, const StressBands& bands,
-                   const std::vector<Probe>& probes, const std::vector<Circuit>& circuits);
+Figures figures_of(const PartIntegrals& integrals, const RecoveredField& field,
+                   const StressBands& bands, const std::vector<Probe>& probes,
+                   const std::vector<Circuit>& circuits);
 
 }  // namespace barwall::solver

@@ -1,7 +1,9 @@
 #include "solver/force.hpp"
 
 #include <algorithm>
+#include <array>
 #include <cmath>
+#include <numeric>
 
 #include "solver/constants.hpp"
 #include "solver/flux_density.hpp"
@@ -9,139 +11,211 @@
 namespace barwall::solver {
 namespace {
 
-template <class Bilinear>
-PulsatingVector over_cycle(int patterns, Bilinear force) {
-  PulsatingVector result;
-  const mesh::Point first = force(0, 0);
-  if (patterns == 1) {
-    result.x.mean = first.x;
-    result.y.mean = first.y;
-    return result;
+/// Beyond this share of the way to the next body no band has any weight.
+constexpr double farthest_share = 0.9;
+/// The distance from a body there, over the distance to the next.
+constexpr double farthest_ratio = farthest_share / (1.0 - farthest_share);
+
+/// A body's outlines, the box round them, and what stands for the next body in open air.
+struct Body {
+  std::vector<const mesh::Curve*> curves;
+  mesh::Box box;
+  double cap = 0.0;  ///< the next body is never taken to be farther than this [m]
+};
+
+double distance_to(const Body& body, mesh::Point p, double contact) {
+  double nearest = HUGE_VAL;
+  for (const mesh::Curve* curve : body.curves) nearest = std::min(nearest, distance(*curve, p));
+  return nearest < contact ? 0.0 : nearest;  // nodes put on a curve lie on it to rounding
+}
+
+std::vector<Body> outlined(const Problem& problem, const std::vector<std::vector<int>>& groups) {
+  std::vector<Body> bodies(groups.size());
+  std::vector<std::size_t> body_of_part(problem.section.parts.size(), groups.size());
+  for (std::size_t b = 0; b < groups.size(); ++b) {
+    for (int part : groups[b]) body_of_part[static_cast<std::size_t>(part)] = b;
   }
-  const mesh::Point second = force(1, 1);
-  const mesh::Point mixed = 0.5 * (force(0, 1) + force(1, 0));
-  result.x = pulsation_of(first.x, second.x, mixed.x);
-  result.y = pulsation_of(first.y, second.y, mixed.y);
-  return result;
+  for (const mesh::OutlinePiece& piece : problem.outline.pieces) {
+    std::size_t added = groups.size();
+    for (mesh::Occupant side : {piece.left, piece.right}) {
+      if (side.part < 0) continue;
+      const std::size_t b = body_of_part[static_cast<std::size_t>(side.part)];
+      if (b == groups.size() || b == added) continue;
+      bodies[b].curves.push_back(&piece.curve);
+      bodies[b].box.include(bounds(piece.curve));
+      added = b;
+    }
+  }
+  // In open air the next body is taken to be at most the body's own size away, half a section
+  // size, or what keeps the band off the boundary.
+  const double half = half_size(problem.section);
+  const auto& x = problem.grid->x_lines;
+  const double room = 0.5 * (x.back() - x.front()) - half;
+  for (Body& body : bodies) {
+    const mesh::Point size = body.box.high - body.box.low;
+    body.cap = std::min({std::max(size.x, size.y), half, room / (farthest_ratio + 1.0)});
+  }
+  return bodies;
+}
+
+/// The two bodies nearest to a node.
+struct Nearest {
+  double first = HUGE_VAL;   ///< [m]
+  double second = HUGE_VAL;  ///< [m]
+  int body = -1;             ///< the first one
+
+  void add(int b, double d) {
+    if (d < first) {
+      second = first;
+      first = d;
+      body = b;
+    } else {
+      second = std::min(second, d);
+    }
+  }
+  /// Distance to the nearest body but one.
+  double other_than(int b) const { return b == body ? second : first; }
+};
+
+std::vector<Nearest> nearest_bodies(const Problem& problem, const std::vector<Body>& bodies) {
+  const mesh::FittedGrid& grid = *problem.grid;
+  double farthest = 0.0;  // beyond the largest cap it makes no difference
+  for (const Body& body : bodies) farthest = std::max(farthest, body.cap);
+  std::vector<Nearest> nearest(grid.nodes.size(), {farthest, farthest, -1});
+#pragma omp parallel
+  {
+    std::vector<int> order(bodies.size());
+    std::vector<double> below(bodies.size());
+#pragma omp for schedule(dynamic)
+    for (int j = 0; j < grid.rows; ++j) {
+      // Bodies in the order of their least distance from any node of the row: most need no look.
+      double low = HUGE_VAL;
+      double high = -HUGE_VAL;
+      for (int i = 0; i < grid.columns; ++i) {
+        const double y = grid.nodes[static_cast<std::size_t>(grid.node(i, j))].y;
+        low = std::min(low, y);
+        high = std::max(high, y);
+      }
+      for (std::size_t b = 0; b < bodies.size(); ++b) {
+        const mesh::Box& box = bodies[b].box;
+        below[b] = std::max({box.low.y - high, 0.0, low - box.high.y});
+      }
+      std::iota(order.begin(), order.end(), 0);
+      std::stable_sort(order.begin(), order.end(), [&](int a, int b) {
+        return below[static_cast<std::size_t>(a)] < below[static_cast<std::size_t>(b)];
+      });
+      for (int i = 0; i < grid.columns; ++i) {
+        const auto n = static_cast<std::size_t>(grid.node(i, j));
+        for (int b : order) {
+          const auto k = static_cast<std::size_t>(b);
+          if (below[k] >= nearest[n].second) break;
+          if (distance(bodies[k].box, grid.nodes[n]) >= nearest[n].second) continue;
+          nearest[n].add(b, distance_to(bodies[k], grid.nodes[n], problem.outline.contact));
+        }
+      }
+    }
+  }
+  return nearest;
+}
+
+/// First and last line of the grid that a stretch can reach.
+std::pair<int, int> window(const std::vector<double>& lines, double low, double high) {
+  const auto first = std::lower_bound(lines.begin(), lines.end(), low) - lines.begin();
+  const auto last = std::upper_bound(lines.begin(), lines.end(), high) - lines.begin();
+  return {std::max(0, static_cast<int>(first) - 2),
+          std::min(static_cast<int>(lines.size()) - 1, static_cast<int>(last) + 2)};
 }
 
 }  // namespace
 
-mesh::Point lorentz_force(const Solution& solution, int part, int piece, int current, int field) {
-  const mesh::FittedGrid& grid = solution.grid();
-  const auto density = density_by_region(
-      *solution.problem, solution.patterns[static_cast<std::size_t>(current)].part_current);
-  mesh::Point force;
-  for (int t = 0; t < grid.triangle_count(); ++t) {
-    const auto region = static_cast<std::size_t>(grid.region[static_cast<std::size_t>(t)]);
-    if (region == 0 || grid.occupants[region].part != part) continue;
-    if (piece >= 0 && grid.occupants[region].piece != piece) continue;
-    const mesh::Point b = cell_flux_density(grid, t, solution.potential.col(field));
-    const double through = density[region] * triangle_area(grid.corners(t));
-    force += through * quarter_turn(b);  // J z x B = J (-By, Bx)
-  }
-  return force;
-}
-
-PulsatingVector lorentz_force(const Solution& solution, int part, int piece) {
-  return over_cycle(solution.pattern_count(), [&](int current, int field) {
-    return lorentz_force(solution, part, piece, current, field);
+PulsatingVector lorentz_force(const PartIntegrals& integrals, int part, int piece) {
+  return over_cycle(integrals.solution().pattern_count(), [&](int current, int field) {
+    return integrals.lorentz_force(part, piece, current, field);
   });
 }
 
-StressBands::StressBands(const Solution& solution, std::vector<std::vector<int>> bodies)
-    : solution_(&solution), bodies_(std::move(bodies)) {
-  const Problem& problem = *solution.problem;
-  const mesh::FittedGrid& grid = solution.grid();
-  body_of_part_.assign(problem.section.parts.size(), -1);
-  for (std::size_t b = 0; b < bodies_.size(); ++b) {
-    for (int part : bodies_[b]) body_of_part_[static_cast<std::size_t>(part)] = static_cast<int>(b);
-  }
-  // Outside, the next body is taken to be half a section size away, less where the boundary is
-  // so near that the band would reach it.
-  const double half = half_size(problem.section);
-  const double room = 0.5 * (grid.x_lines.back() - grid.x_lines.front()) - half;
-  cap_ = std::min(half, room / 10.0);
-  const mesh::Box box = bounds(problem.section);
-  const auto window = [](const std::vector<double>& lines, double low, double high) {
-    const auto first = std::lower_bound(lines.begin(), lines.end(), low);
-    const auto last = std::upper_bound(lines.begin(), lines.end(), high);
-    return std::pair{
-        std::max(0, static_cast<int>(first - lines.begin()) - 2),
-        std::min(static_cast<int>(lines.size()) - 1, static_cast<int>(last - lines.begin()) + 2)};
-  };
-  const double margin = 10.0 * cap_;  // weights are 0 from 9 caps on
-  std::tie(first_column_, last_column_) =
-      window(grid.x_lines, box.low.x - margin, box.high.x + margin);
-  std::tie(first_row_, last_row_) = window(grid.y_lines, box.low.y - margin, box.high.y + margin);
-  distance_.assign(bodies_.size(),
-                   std::vector<double>(static_cast<std::size_t>(grid.node_count()), HUGE_VAL));
-  for (std::size_t b = 0; b < bodies_.size(); ++b) {
-    std::vector<const mesh::Curve*> curves;
-    for (const mesh::OutlinePiece& piece : problem.outline.pieces) {
-      for (mesh::Occupant side : {piece.left, piece.right}) {
-        if (side.part >= 0 &&
-            body_of_part_[static_cast<std::size_t>(side.part)] == static_cast<int>(b)) {
-          curves.push_back(&piece.curve);
-          break;
-        }
-      }
-    }
-    auto& nearest = distance_[b];
-#pragma omp parallel for schedule(static)
-    for (int j = first_row_; j <= last_row_; ++j) {
-      for (int i = first_column_; i <= last_column_; ++i) {
+StressBands::StressBands(const Problem& problem, std::vector<std::vector<int>> groups)
+    : bodies_(std::move(groups)), around_(bodies_.size()) {
+  const mesh::FittedGrid& grid = *problem.grid;
+  const std::vector<Body> outlines = outlined(problem, bodies_);
+  const std::vector<Nearest> nearest = nearest_bodies(problem, outlines);
+#pragma omp parallel for schedule(dynamic)
+  for (std::size_t b = 0; b < outlines.size(); ++b) {
+    const Body& body = outlines[b];
+    const double margin = farthest_ratio * body.cap;
+    const auto [left, right] =
+        window(grid.x_lines, body.box.low.x - margin, body.box.high.x + margin);
+    const auto [bottom, top] =
+        window(grid.y_lines, body.box.low.y - margin, body.box.high.y + margin);
+    // First the nodes that any band reaches, then the smallest window that holds them and the
+    // ring of triangles about them.
+    struct Reached {
+      int i, j;
+      double share;
+    };
+    std::vector<Reached> reached;
+    Surroundings& around = around_[b];
+    around = {right, left, top, bottom, {}};
+    for (int j = bottom; j <= top; ++j) {
+      for (int i = left; i <= right; ++i) {
         const auto n = static_cast<std::size_t>(grid.node(i, j));
-        for (const mesh::Curve* curve : curves) {
-          nearest[n] = std::min(nearest[n], distance(*curve, grid.nodes[n]));
-        }
-        // Nodes put on a curve lie on it to rounding.
-        if (nearest[n] < problem.outline.contact) nearest[n] = 0.0;
+        const double other = std::min(body.cap, nearest[n].other_than(static_cast<int>(b)));
+        const double limit = farthest_ratio * other;
+        if (distance(body.box, grid.nodes[n]) > limit) continue;
+        const double own = distance_to(body, grid.nodes[n], problem.outline.contact);
+        if (own > limit) continue;
+        reached.push_back({i, j, own == 0.0 ? 0.0 : own / (own + other)});
+        around.first_column = std::min(around.first_column, i);
+        around.last_column = std::max(around.last_column, i);
+        around.first_row = std::min(around.first_row, j);
+        around.last_row = std::max(around.last_row, j);
       }
     }
-  }
-}
-
-double StressBands::weight(int body, int node, const Band& band) const {
-  const auto n = static_cast<std::size_t>(node);
-  const double own = distance_[static_cast<std::size_t>(body)][n];
-  if (own == 0.0) return 1.0;
-  double other = cap_;
-  for (std::size_t b = 0; b < distance_.size(); ++b) {
-    if (static_cast<int>(b) != body) other = std::min(other, distance_[b][n]);
-  }
-  const double share = own / (own + other);
-  return std::clamp((band.to - share) / (band.to - band.from), 0.0, 1.0);
-}
-
-PulsatingVector StressBands::force(int body, const Band& band) const {
-  const mesh::FittedGrid& grid = solution_->grid();
-  const int patterns = solution_->pattern_count();
-  std::vector<double> w(static_cast<std::size_t>(grid.node_count()), 0.0);
-  for (int j = first_row_; j <= last_row_; ++j) {
-    for (int i = first_column_; i <= last_column_; ++i) {
-      w[static_cast<std::size_t>(grid.node(i, j))] = weight(body, grid.node(i, j), band);
+    around.first_column = std::max(0, around.first_column - 1);
+    around.first_row = std::max(0, around.first_row - 1);
+    around.last_column = std::min(grid.columns - 1, around.last_column + 1);
+    around.last_row = std::min(grid.rows - 1, around.last_row + 1);
+    const int columns = around.last_column - around.first_column + 1;
+    const int rows = around.last_row - around.first_row + 1;
+    around.share.assign(static_cast<std::size_t>(columns * rows), 1.0);
+    for (const Reached& node : reached) {
+      around.share[static_cast<std::size_t>((node.j - around.first_row) * columns + node.i -
+                                            around.first_column)] = node.share;
     }
   }
+}
+
+PulsatingVector StressBands::force(const Solution& solution, int body, const Band& band) const {
+  const mesh::FittedGrid& grid = solution.grid();
+  const int patterns = solution.pattern_count();
+  const Surroundings& around = around_[static_cast<std::size_t>(body)];
+  const auto weight = [&](int node) {
+    const double share = around.at(node % grid.columns, node / grid.columns);
+    return std::clamp((band.to - share) / (band.to - band.from), 0.0, 1.0);
+  };
+  const auto outside_band = [&](int i, int j) {
+    const auto [least, most] = std::minmax({around.at(i, j), around.at(i + 1, j),
+                                            around.at(i, j + 1), around.at(i + 1, j + 1)});
+    return least >= band.to || most <= band.from;
+  };
   // Sums of T grad w for the pattern pairs (0,0), (1,1), (0,1); T is symmetric in the pair.
   std::array<mesh::Point, 3> sum{};
-  for (int j = first_row_; j < last_row_; ++j) {
-    for (int i = first_column_; i < last_column_; ++i) {
+  for (int j = around.first_row; j < around.last_row; ++j) {
+    for (int i = around.first_column; i < around.last_column; ++i) {
+      if (outside_band(i, j)) continue;
       const int cell = j * (grid.columns - 1) + i;
       for (int t = 2 * cell; t <= 2 * cell + 1; ++t) {
         if (grid.region[static_cast<std::size_t>(t)] != 0) continue;
         const auto n = grid.triangle(t);
-        const std::array<double, 3> v{w[static_cast<std::size_t>(n[0])],
-                                      w[static_cast<std::size_t>(n[1])],
-                                      w[static_cast<std::size_t>(n[2])]};
-        if (v[0] == v[1] && v[1] == v[2]) continue;
+        const std::array<double, 3> w{weight(n[0]), weight(n[1]), weight(n[2])};
+        if (w[0] == w[1] && w[1] == w[2]) continue;
         const auto p = grid.corners(t);
         // Area times grad w.
         const mesh::Point slope =
-            0.5 * quarter_turn(v[0] * (p[2] - p[1]) + v[1] * (p[0] - p[2]) + v[2] * (p[1] - p[0]));
+            0.5 * quarter_turn(w[0] * (p[2] - p[1]) + w[1] * (p[0] - p[2]) + w[2] * (p[1] - p[0]));
         std::array<mesh::Point, 2> b{};
         for (int k = 0; k < patterns; ++k) {
-          b[static_cast<std::size_t>(k)] = cell_flux_density(grid, t, solution_->potential.col(k));
+          b[static_cast<std::size_t>(k)] = cell_flux_density(grid, t, solution.potential.col(k));
         }
         const auto add = [&](mesh::Point& total, mesh::Point f, mesh::Point g) {
           total += (0.5 * nu_0) * (dot(g, slope) * f + dot(f, slope) * g - dot(f, g) * slope);

@@ -1,18 +1,16 @@
 #pragma once
 
+#include <cstdint>
 #include <vector>
 
 #include "solver/cycle.hpp"
-#include "solver/magnetostatics.hpp"
+#include "solver/part_integrals.hpp"
 
 namespace barwall::solver {
 
-/// J x B over a part, or over one of its pieces (piece >= 0), per metre of run [N/m]: the force
-/// on the currents of load pattern `current` in the field of pattern `field`.
-mesh::Point lorentz_force(const Solution& solution, int part, int piece, int current, int field);
-
-/// Lorentz force over the cycle; steady currents have a mean alone.
-PulsatingVector lorentz_force(const Solution& solution, int part, int piece = -1);
+/// J x B over a part, or over one of its pieces (piece >= 0), over the cycle, per metre of run
+/// [N/m]; steady currents have a mean alone.
+PulsatingVector lorentz_force(const PartIntegrals& integrals, int part, int piece = -1);
 
 /// Where the stress round a body is taken: the band of air in which the weight falls from 1 at
 /// share `from` of the way to the next body to 0 at share `to`. Shares are of the distances,
@@ -26,27 +24,34 @@ inline constexpr Band whole_band{0.1, 0.9};
 inline constexpr Band inner_band{0.1, 0.5};
 inline constexpr Band outer_band{0.5, 0.9};
 
-/// Distances of the grid's nodes from bodies, from which bands are laid.
+/// The air round every body of a problem, from which bands are laid: at the nodes the share of
+/// the way to the next body.
 class StressBands {
 public:
   /// \param bodies groups of parts in contact (mesh::bodies)
-  StressBands(const Solution& solution, std::vector<std::vector<int>> bodies);
+  StressBands(const Problem& problem, std::vector<std::vector<int>> bodies);
 
   const std::vector<std::vector<int>>& bodies() const { return bodies_; }
 
   /// Maxwell stress in a band of air round a body, per metre of run [N/m]: minus the integral of
   /// T grad w, w the band's weight (the "eggshell" form of the closed surface integral).
-  PulsatingVector force(int body, const Band& band) const;
+  /// \param solution of the problem that the bands were made for
+  PulsatingVector force(const Solution& solution, int body, const Band& band) const;
 
 private:
-  double weight(int body, int node, const Band& band) const;
+  /// The nodes round one body: a window of the grid, row by row.
+  struct Surroundings {
+    int first_column = 0, last_column = -1, first_row = 0, last_row = -1;
+    std::vector<double> share;  ///< of the way to the next body [1]; 1 where no band reaches
 
-  const Solution* solution_;
+    double at(int i, int j) const {
+      const int columns = last_column - first_column + 1;
+      return share[static_cast<std::size_t>((j - first_row) * columns + i - first_column)];
+    }
+  };
+
   std::vector<std::vector<int>> bodies_;
-  std::vector<int> body_of_part_;
-  int first_column_ = 0, last_column_ = 0, first_row_ = 0, last_row_ = 0;
-  std::vector<std::vector<double>> distance_;  ///< per body, per node [m]
-  double cap_ = 0.0;
+  std::vector<Surroundings> around_;  ///< per body
 };
 
 }  // namespace barwall::solver

@@ -6,33 +6,51 @@
 #include "solver/flux_density.hpp"
 
 namespace barwall::solver {
+namespace {
 
-FieldLevel field_level(const Solution& solution, int part) {
-  const mesh::FittedGrid& grid = solution.grid();
-  std::vector<std::pair<double, double>> levels;  // |B|, area
+/// |B| on one triangle of a part, and the triangle's area.
+struct Sample {
+  double level = 0.0;
   double area = 0.0;
-  double sum = 0.0;
+};
+
+FieldLevel level_of(std::vector<Sample> samples) {
+  FieldLevel result;
+  double area = 0.0;
+  for (const Sample& sample : samples) {
+    area += sample.area;
+    result.mean += sample.level * sample.area;
+  }
+  if (area > 0.0) result.mean /= area;
+  std::sort(samples.begin(), samples.end(),
+            [](const Sample& a, const Sample& b) { return a.level > b.level; });
+  double above = 0.0;
+  for (const Sample& sample : samples) {
+    above += sample.area;
+    result.high = sample.level;
+    if (above >= 0.01 * area) break;
+  }
+  return result;
+}
+
+}  // namespace
+
+std::vector<FieldLevel> field_levels(const Solution& solution) {
+  const mesh::FittedGrid& grid = solution.grid();
+  std::vector<std::vector<Sample>> samples(solution.problem->section.parts.size());
   for (int t = 0; t < grid.triangle_count(); ++t) {
-    if (grid.occupant(t).part != part) continue;
+    const int part = grid.occupant(t).part;
+    if (part < 0) continue;
     const mesh::Point b = cell_flux_density(grid, t, solution.potential.col(0));
     const double level =
         solution.pattern_count() == 1
             ? norm(b)
             : peak_magnitude(b, cell_flux_density(grid, t, solution.potential.col(1)));
-    const double a = triangle_area(grid.corners(t));
-    levels.emplace_back(level, a);
-    area += a;
-    sum += level * a;
+    samples[static_cast<std::size_t>(part)].push_back({level, triangle_area(grid.corners(t))});
   }
-  std::sort(levels.begin(), levels.end(), std::greater<>());
-  FieldLevel result{sum / area, 0.0};
-  double above = 0.0;
-  for (const auto& [level, a] : levels) {
-    above += a;
-    result.high = level;
-    if (above >= 0.01 * area) break;
-  }
-  return result;
+  std::vector<FieldLevel> levels;
+  for (auto& of_part : samples) levels.push_back(level_of(std::move(of_part)));
+  return levels;
 }
 
 }  // namespace barwall::solver

@@ -1,5 +1,7 @@
 #pragma once
 
+#include <vector>
+
 #include "solver/magnetostatics.hpp"
 
 namespace barwall::solver {
@@ -10,6 +12,7 @@ struct FieldLevel {
   double high = 0.0;  ///< exceeded on 1 % of the part's area [T]
 };
 
-FieldLevel field_level(const Solution& solution, int part);
+/// The level in every part of the section, by index; zeros for one that does not show.
+std::vector<FieldLevel> field_levels(const Solution& solution);
 
 }  // namespace barwall::solver

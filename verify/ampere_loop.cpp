@@ -55,16 +55,19 @@ public:
   Check loops(const std::vector<std::vector<int>>& bodies) const {
     Worst worst;
     int count = 0;
+    std::vector<std::size_t> body_of(problem_.section.parts.size());
     for (std::size_t b = 0; b < bodies.size(); ++b) {
-      double gap = half_size(problem_.section);
-      for (std::size_t c = 0; c < bodies.size(); ++c) {
-        if (c == b) continue;
-        for (int p : bodies[b]) {
-          for (int q : bodies[c]) {
-            gap = std::min(gap, gap_between(problem_.outline, p, q).width);
-          }
-        }
-      }
+      for (int part : bodies[b]) body_of[static_cast<std::size_t>(part)] = b;
+    }
+    std::vector<double> gap_round(bodies.size(), half_size(problem_.section));
+    for (const mesh::PartGap& pair : gaps(problem_.outline)) {
+      const std::size_t first = body_of[static_cast<std::size_t>(pair.first)];
+      const std::size_t second = body_of[static_cast<std::size_t>(pair.second)];
+      if (first == second) continue;
+      for (std::size_t b : {first, second}) gap_round[b] = std::min(gap_round[b], pair.gap.width);
+    }
+    for (std::size_t b = 0; b < bodies.size(); ++b) {
+      const double gap = gap_round[b];
       for (const auto& line : offset_lines(problem_.outline, bodies[b], 0.5 * gap)) {
         ++count;
         worst.take(
@@ -139,10 +142,9 @@ private:
     const mesh::Polygon inside{line};
     Complex sum = 0.0;
     for (std::size_t k = 0; k < problem_.section.parts.size(); ++k) {
-      const auto& pieces = problem_.section.parts[k].pieces;
-      double whole = 0.0;
-      for (const mesh::Shape& piece : pieces) whole += area(piece);
-      for (const mesh::Shape& piece : pieces) {
+      const mesh::Part& part = problem_.section.parts[k];
+      const double whole = area(part);
+      for (const mesh::Shape& piece : part.pieces) {
         // The line crosses no part: one point of a piece's outline stands for the piece.
         const auto chains = boundary(piece);
         if (contains(inside, at(chains.front().front(), 0.5))) {

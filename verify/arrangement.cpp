@@ -81,15 +81,17 @@ std::vector<double> errors_of(const Arrangement& arrangement,
 
   const auto [off, near] = field_errors(arrangement, solution);
   std::vector<double> errors{off, near};
+  const solver::PartIntegrals integrals(solution);
   if (!arrangement.forces.empty()) {
-    const solver::StressBands bands(solution, bodies(problem->outline));
+    const solver::StressBands bands(*problem, bodies(problem->outline));
     RelativeError lorentz;
     RelativeError stress;
     for (const Arrangement::Force& force : arrangement.forces) {
-      const auto on_body = bands.force(body_of(bands.bodies(), force.part), solver::whole_band);
+      const auto on_body =
+          bands.force(solution, body_of(bands.bodies(), force.part), solver::whole_band);
       stress.add({on_body.x.mean, on_body.y.mean}, force.exact);
       if (arrangement.currents[static_cast<std::size_t>(force.part)] == 0.0) continue;
-      const auto on_current = solver::lorentz_force(solution, force.part);
+      const auto on_current = solver::lorentz_force(integrals, force.part);
       lorentz.add({on_current.x.mean, on_current.y.mean}, force.exact);
     }
     errors.push_back(lorentz.value());
@@ -98,7 +100,7 @@ std::vector<double> errors_of(const Arrangement& arrangement,
   if (!arrangement.inductances.empty()) {
     RelativeError inductance;
     for (const Arrangement::Inductance& known : arrangement.inductances) {
-      inductance.add({loop_inductance(solution, known.loop), 0.0}, {known.exact, 0.0});
+      inductance.add({loop_inductance(integrals, known.loop), 0.0}, {known.exact, 0.0});
     }
     errors.push_back(inductance.value());
   }

@@ -8,9 +8,9 @@
 
 namespace barwall::verify {
 
-Check check_energy(const solver::Solution& solution) {
-  const solver::Pulsation field = field_energy(solution);
-  const solver::TerminalEnergy terminal = terminal_energy(solution);
+Check check_energy(const solver::PartIntegrals& integrals) {
+  const solver::Pulsation field = field_energy(integrals.solution());
+  const solver::TerminalEnergy terminal = terminal_energy(integrals);
   const auto gap = [&](auto part) {
     return std::abs(part(terminal.linkage) + part(terminal.boundary) - part(field));
   };

@@ -1,6 +1,6 @@
 #pragma once
 
-#include "solver/magnetostatics.hpp"
+#include "solver/part_integrals.hpp"
 #include "verify/check.hpp"
 
 namespace barwall::verify {
@@ -8,6 +8,6 @@ namespace barwall::verify {
 /// "energy": half the sum of current times flux linkage, with a net current plus the boundary's
 /// own term from the reactions, against the integral of B.H / 2, relative to it, limit 1e-6. It
 /// tests assembly, solver and figures, not the grid.
-Check check_energy(const solver::Solution& solution);
+Check check_energy(const solver::PartIntegrals& integrals);
 
 }  // namespace barwall::verify

@@ -29,8 +29,9 @@ double size_of(const PulsatingVector& v) {
 
 }  // namespace
 
-std::vector<Check> check_forces(const solver::Solution& solution,
+std::vector<Check> check_forces(const solver::PartIntegrals& integrals,
                                 const solver::StressBands& bands) {
+  const solver::Solution& solution = integrals.solution();
   const auto& section = solution.problem->section;
   const auto& bodies = bands.bodies();
   double largest = 0.0;
@@ -43,12 +44,12 @@ std::vector<Check> check_forces(const solver::Solution& solution,
   for (std::size_t b = 0; b < bodies.size(); ++b) {
     const int first = bodies[b].front();
     const auto k = static_cast<std::size_t>(first);
-    const PulsatingVector stress = bands.force(static_cast<int>(b), solver::whole_band);
+    const PulsatingVector stress = bands.force(solution, static_cast<int>(b), solver::whole_band);
     PulsatingVector force = stress;
     const bool lorentz = bodies[b].size() == 1 && section.parts[k].kind == mesh::Part::Kind::bar &&
                          !solution.problem->materials[k].magnetic();
     if (lorentz) {
-      force = lorentz_force(solution, first);
+      force = lorentz_force(integrals, first);
       const double difference = size_of(sum_of(force, stress, -1.0));
       if (worse(difference, agreement) || worst_agreement == "no bar alone") {
         agreement = difference;
@@ -56,8 +57,8 @@ std::vector<Check> check_forces(const solver::Solution& solution,
       }
     }
     const double difference =
-        size_of(sum_of(bands.force(static_cast<int>(b), solver::inner_band),
-                       bands.force(static_cast<int>(b), solver::outer_band), -1.0));
+        size_of(sum_of(bands.force(solution, static_cast<int>(b), solver::inner_band),
+                       bands.force(solution, static_cast<int>(b), solver::outer_band), -1.0));
     if (worse(difference, two_bands) || worst_bands == "none") {
       two_bands = difference;
       worst_bands = section.parts[k].name;

@@ -13,6 +13,7 @@ namespace barwall::verify {
 /// Maxwell stress for every bar of mu_r = 1 that touches nothing; "stress-bands": the stress in
 /// the inner against the outer half of the air round each body. With a frequency the mean and
 /// both parts of the pulsation count.
-std::vector<Check> check_forces(const solver::Solution& solution, const solver::StressBands& bands);
+std::vector<Check> check_forces(const solver::PartIntegrals& integrals,
+                                const solver::StressBands& bands);
 
 }  // namespace barwall::verify

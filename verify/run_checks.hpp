@@ -9,7 +9,8 @@
 namespace barwall::verify {
 
 /// All self-checks of a solved section, in the order they are printed.
-std::vector<Check> run_checks(const solver::Solution& solution, const solver::RecoveredField& field,
+std::vector<Check> run_checks(const solver::PartIntegrals& integrals,
+                              const solver::RecoveredField& field,
                               const solver::StressBands& bands);
 
 }  // namespace barwall::verify

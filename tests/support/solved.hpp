@@ -12,12 +12,13 @@ struct Solved {
   std::shared_ptr<const solver::Problem> problem;
   std::shared_ptr<const solver::Solution> solution;
   std::shared_ptr<const solver::RecoveredField> field;
+  std::shared_ptr<const solver::PartIntegrals> integrals;
   std::shared_ptr<const solver::StressBands> bands;
 
   mesh::Point b(mesh::Point at, int pattern = 0) const {
     return field->flux_density(locate(*problem->grid, problem->section, at), at, pattern);
   }
-  solver::Figures figures() const { return figures_of(*solution, *field, *bands, {}, {}); }
+  solver::Figures figures() const { return figures_of(*integrals, *field, *bands, {}, {}); }
   /// The value at an address; NaN when there is none.
   double value(const solver::Figures& from, const std::string& address) const {
     for (const auto& [name, figure] : addresses(from)) {
@@ -32,7 +33,8 @@ inline Solved solved(std::shared_ptr<solver::Problem> problem) {
   result.problem = problem;
   auto solution = std::make_shared<solver::Solution>(solve(problem));
   result.field = std::make_shared<solver::RecoveredField>(*solution);
-  result.bands = std::make_shared<solver::StressBands>(*solution, bodies(problem->outline));
+  result.integrals = std::make_shared<solver::PartIntegrals>(*solution);
+  result.bands = std::make_shared<solver::StressBands>(*problem, bodies(problem->outline));
   result.solution = std::move(solution);
   return result;
 }

@@ -33,8 +33,8 @@ const solver::Solution& solved_once() {
 
 std::vector<Check> checks_of(const solver::Solution& solution) {
   const solver::RecoveredField field(solution);
-  const solver::StressBands bands(solution, bodies(solution.problem->outline));
-  return run_checks(solution, field, bands);
+  const solver::StressBands bands(*solution.problem, bodies(solution.problem->outline));
+  return run_checks(solver::PartIntegrals(solution), field, bands);
 }
 
 bool passed(const std::vector<Check>& checks, const std::string& name) {
