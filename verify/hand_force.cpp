@@ -15,12 +15,6 @@ using mesh::Shape;
 
 namespace {
 
-double area_of(const Part& bar) {
-  double sum = 0.0;
-  for (const Shape& piece : bar.pieces) sum += area(piece);
-  return sum;
-}
-
 /// Which of the two formulas a sum is made of.
 struct Used {
   bool flat_bars = false;
@@ -52,7 +46,7 @@ std::optional<Point> force_per_square(const Part& on, const Part& by, Used& used
     for (const Shape& other : by.pieces) {
       const auto force = force_per_square(piece, other, used);
       if (!force) return {};
-      sum += (area(piece) / area_of(on)) * (area(other) / area_of(by)) * *force;
+      sum += (area(piece) / area(on)) * (area(other) / area(by)) * *force;
     }
   }
   return sum;
