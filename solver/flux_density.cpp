@@ -47,6 +47,7 @@ RecoveredField::RecoveredField(const Solution& solution) : solution_(&solution) 
   number_places();
   field_.assign(static_cast<std::size_t>(solution.pattern_count()),
                 std::vector<Local>(node_of_place_.size()));
+  const mesh::FittedGrid& grid = solution.grid();
   // mu J of each occupant, a row of load patterns: minus div grad A there.
   const auto permeability = permeability_by_region(*solution.problem);
   std::vector<std::vector<double>> source(permeability.size());
@@ -61,7 +62,10 @@ RecoveredField::RecoveredField(const Solution& solution) : solution_(&solution) 
     std::vector<int> nodes;
 #pragma omp for schedule(static)
     for (int place = 0; place < place_count(); ++place) {
-      fit_place(place, nodes, source[static_cast<std::size_t>(region_of_place(place))]);
+      const int part = grid.occupants[static_cast<std::size_t>(region_of_place(place))].part;
+      const bool curved =
+          part >= 0 && solution.problem->materials[static_cast<std::size_t>(part)].saturable();
+      fit_place(place, nodes, source[static_cast<std::size_t>(region_of_place(place))], curved);
     }
   }
 }
@@ -143,7 +147,7 @@ void RecoveredField::gather_layers(int node, int region, int layers,
 }
 
 void RecoveredField::fit_place(int place, std::vector<int>& nodes,
-                               const std::vector<double>& source) {
+                               const std::vector<double>& source, bool saturable) {
   constexpr int terms = 7;
   constexpr std::size_t enough = 20;  // well more nodes than terms
   using Row = Eigen::Matrix<double, terms, 1>;
@@ -169,7 +173,8 @@ void RecoveredField::fit_place(int place, std::vector<int>& nodes,
   }
   const double s = std::max(sx, sy);
   // A = a0 + gx x + gy y + p (x2 - y2)/2 + q xy + c Re z3 + d Im z3 - mu J (x2 + y2)/4, each term
-  // scaled to the patch, which may be long and narrow.
+  // scaled to the patch, which may be long and narrow. In saturable steel the plain quadratic
+  // a0 + gx x + gy y + p x2/2 + q xy + c y2/2, the last term left out.
   const double narrow = std::min(sx, sy) / s;
   const double re_scale = sx > sy ? 1.0 : narrow;
   const double im_scale = sx > sy ? narrow : 1.0;
@@ -185,17 +190,22 @@ void RecoveredField::fit_place(int place, std::vector<int>& nodes,
     const double near = 1.0 / (0.1 + u * u + v * v);
     const double weight = moved ? near : near * near;
     Row row;
-    row << 1.0, u, v, 0.5 * (x * x - y * y), u * v, (x * x * x - 3.0 * x * y * y) / re_scale,
-        (3.0 * x * x * y - y * y * y) / im_scale;
+    if (saturable) {
+      row << 1.0, u, v, 0.5 * u * u, u * v, 0.5 * v * v, 0.0;
+    } else {
+      row << 1.0, u, v, 0.5 * (x * x - y * y), u * v, (x * x * x - 3.0 * x * y * y) / re_scale,
+          (3.0 * x * x * y - y * y * y) / im_scale;
+    }
     const Row weighted = weight * row;
     normal.noalias() += weighted * row.transpose();
     for (std::size_t c = 0; c < patterns; ++c) {
       const auto column = static_cast<Eigen::Index>(c);
       const double value = solution_->potential(n, column) - solution_->potential(node, column) +
-                           0.25 * source[c] * dot(d, d);
+                           (saturable ? 0.0 : 0.25 * source[c] * dot(d, d));
       right[c] += value * weighted;
     }
   }
+  if (saturable) normal(terms - 1, terms - 1) = 1.0;
   // In the narrow ends of a part a patch may not tell all terms apart: least-norm then.
   const Eigen::LDLT<Eigen::Matrix<double, terms, terms>> direct(normal);
   const auto pivots = direct.vectorD().cwiseAbs();
@@ -204,8 +214,8 @@ void RecoveredField::fit_place(int place, std::vector<int>& nodes,
     const Row a = regular ? Row(direct.solve(right[c]))
                           : Row(normal.completeOrthogonalDecomposition().solve(right[c]));
     const double half_source = 0.5 * source[c];
-    const double a_xx = a[3] / (s * s) - half_source;
-    const double a_yy = -a[3] / (s * s) - half_source;
+    const double a_xx = saturable ? a[3] / (sx * sx) : a[3] / (s * s) - half_source;
+    const double a_yy = saturable ? a[5] / (sy * sy) : -a[3] / (s * s) - half_source;
     const double a_xy = a[4] / (sx * sy);
     Local& local = field_[c][static_cast<std::size_t>(place)];
     local.b = {a[2] / sy, -a[1] / sx};

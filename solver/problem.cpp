@@ -1,8 +1,15 @@
 #include "solver/problem.hpp"
 
+#include <algorithm>
+
 #include "solver/constants.hpp"
 
 namespace barwall::solver {
+
+bool saturable(const Problem& problem) {
+  return std::any_of(problem.materials.begin(), problem.materials.end(),
+                     [](const Material& material) { return material.saturable(); });
+}
 
 std::vector<double> permeability_by_region(const Problem& problem) {
   std::vector<double> result;

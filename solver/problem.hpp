@@ -14,12 +14,19 @@ struct Problem {
   mesh::Section section;
   mesh::Outline outline;
   std::shared_ptr<const mesh::FittedGrid> grid;
+  /// A coarser grid of the section, on which a nonlinear solve finds its start; may be null.
+  std::shared_ptr<const mesh::FittedGrid> coarse_grid;
   std::vector<Material> materials;  ///< one per part
   Excitation excitation;            ///< one current per part
   std::vector<Loop> loops;          ///< whose inductance is wanted
 };
 
-/// Relative permeability of each of the grid's occupants; air is 1.
+/// True when a part's material has a magnetising curve: the field is then not a sum of fields of
+/// single currents.
+bool saturable(const Problem& problem);
+
+/// Relative permeability of each of the grid's occupants; air is 1, saturable steel has its initial
+/// one.
 std::vector<double> permeability_by_region(const Problem& problem);
 
 /// Reluctivity [m/H] of each of the grid's occupants.
