@@ -131,9 +131,20 @@ std::shared_ptr<const solver::Problem> problem_of(const Case& input) {
   for (const solver::Probe& probe : probes_of(input, problem->outline)) {
     for (mesh::Point point : probe.points) options.fine.include(point);
   }
+  if (saturable(*problem) && input.excitation.alternating()) {
+    throw InputError(fmt::format(
+        "{}: saturable steel is solved for steady currents only; leave out frequency_hz, or give "
+        "relative_permeability in place of the B-H table",
+        input.grid_place));
+  }
   try {
     problem->grid =
         std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem->outline, options));
+    if (saturable(*problem)) {
+      options.cells_across = std::max(1, options.cells_across / 2);
+      problem->coarse_grid =
+          std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem->outline, options));
+    }
   } catch (const mesh::GridError& error) {
     throw InputError(fmt::format("{}: {}", input.grid_place, error.what()));
   }

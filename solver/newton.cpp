@@ -88,8 +88,9 @@ NewtonReport newton_solve(const NonlinearOperator& equations, const mesh::Fitted
   const auto fail = [&](const std::string& why) {
     throw NewtonError(
         fmt::format("the nonlinear solve stopped at a relative residual of {:.2e} after {} "
-                    "iterations: {}",
-                    report.residuals.back(), report.iterations, why),
+                    "iterations: {}; relative residuals: {:.2e}",
+                    report.residuals.back(), report.iterations, why,
+                    fmt::join(report.residuals, ", ")),
         report);
   };
   while (!(report.residuals.back() <= tolerance)) {

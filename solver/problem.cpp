@@ -28,6 +28,15 @@ std::vector<double> reluctivity_by_region(const Problem& problem) {
   return result;
 }
 
+mesh::Point field_strength(const Problem& problem, int region, mesh::Point flux_density) {
+  const int part = problem.grid->occupants[static_cast<std::size_t>(region)].part;
+  if (part < 0) return nu_0 * flux_density;
+  const Material& material = problem.materials[static_cast<std::size_t>(part)];
+  const double nu = material.saturable() ? material.curve->reluctivity(norm(flux_density))
+                                         : nu_0 / material.relative_permeability;
+  return nu * flux_density;
+}
+
 std::vector<double> area_by_region(const mesh::FittedGrid& grid) {
   std::vector<double> area(grid.occupants.size(), 0.0);
   for (int t = 0; t < grid.triangle_count(); ++t) {

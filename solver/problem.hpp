@@ -32,6 +32,9 @@ std::vector<double> permeability_by_region(const Problem& problem);
 /// Reluctivity [m/H] of each of the grid's occupants.
 std::vector<double> reluctivity_by_region(const Problem& problem);
 
+/// H [A/m] that goes with a flux density B [T] in one of the grid's occupants.
+mesh::Point field_strength(const Problem& problem, int region, mesh::Point flux_density);
+
 /// Area of each of the grid's occupants as the triangles make it up [m2].
 std::vector<double> area_by_region(const mesh::FittedGrid& grid);
 
