@@ -39,7 +39,6 @@ std::string in_words(const std::string& key) {
       {"inductance_secant", "Inductance, secant"},
       {"inductance_differential", "Inductance, differential"},
       {"saturated_share", "share of the area with dB/dH below 10 µ0"},
-      {"coenergy", "Coenergy"},
       {"reactance", "Reactance"},
       {"reactance_mean", "Reactance, mean"},
       {"b_mean", "|B|, mean over the area"},
