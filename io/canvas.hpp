@@ -5,7 +5,7 @@
 #include <string>
 #include <vector>
 
-#include "io/colour_map.hpp"
+#include "io/page.hpp"
 #include "mesh/point.hpp"
 
 namespace barwall::io {
@@ -28,7 +28,7 @@ struct TextStyle {
   double size = 20.0;
   Align align = Align::start;
   bool bold = false;
-  Colour colour{0.1, 0.1, 0.12, 1.0};
+  Colour colour = ink;
   double backing = 0.0;  ///< a white box behind the text, so far beyond it
   bool upwards = false;  ///< turned by a quarter, to be read from the right
 };

@@ -50,10 +50,6 @@ std::uint32_t viridis_rgb(int index) {
   return table[static_cast<std::size_t>(index)];
 }
 
-Colour colour_of(std::uint32_t rgb) {
-  return {((rgb >> 16) & 255u) / 255.0, ((rgb >> 8) & 255u) / 255.0, (rgb & 255u) / 255.0, 1.0};
-}
-
 Colour with_alpha(Colour colour, double alpha) {
   colour.alpha = alpha;
   return colour;

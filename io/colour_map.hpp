@@ -13,7 +13,9 @@ struct Colour {
 };
 
 /// Colour of 0xRRGGBB.
-Colour colour_of(std::uint32_t rgb);
+constexpr Colour colour_of(std::uint32_t rgb) {
+  return {((rgb >> 16) & 255u) / 255.0, ((rgb >> 8) & 255u) / 255.0, (rgb & 255u) / 255.0, 1.0};
+}
 Colour with_alpha(Colour colour, double alpha);
 
 inline constexpr int viridis_count = 256;

@@ -1,7 +1,6 @@
 #include "io/command_line.hpp"
 
 #include <fmt/format.h>
-#include <omp.h>
 #include <unistd.h>
 
 #include <CLI/CLI.hpp>
@@ -20,6 +19,7 @@
 #include "io/results_files.hpp"
 #include "io/results_folder.hpp"
 #include "io/summary.hpp"
+#include "io/threads.hpp"
 #include "io/version.hpp"
 
 namespace barwall::io {
@@ -202,10 +202,8 @@ int run_program(int argc, char** argv) {
                error.what());
     return 2;
   }
-  if (request.threads > 0) omp_set_num_threads(request.threads);
-  // Serial even where a library asks for a number of its own.
-  if (request.threads == 1) omp_set_max_active_levels(0);
   return guarded([&] {
+    start_threads(request.threads);
     if (solve->parsed()) return solve_case(request);
     if (draw->parsed()) return draw_case(request);
     if (!verify_file->empty()) return verify_case(request);

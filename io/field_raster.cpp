@@ -1,20 +1,12 @@
 #include "io/field_raster.hpp"
 
 #include <algorithm>
-#include <array>
 #include <cmath>
+
+#include "io/grid_window.hpp"
 
 namespace barwall::io {
 namespace {
-
-/// First and last cell of an axis that may show between two places: a fitted node leaves its line
-/// by half an interval at most.
-std::array<int, 2> cells_between(const std::vector<double>& lines, double low, double high) {
-  const auto first = std::upper_bound(lines.begin(), lines.end(), low) - lines.begin();
-  const auto last = std::lower_bound(lines.begin(), lines.end(), high) - lines.begin();
-  return {std::max(0, static_cast<int>(first) - 2),
-          std::min(static_cast<int>(lines.size()) - 2, static_cast<int>(last))};
-}
 
 class Painter {
 public:
@@ -28,11 +20,10 @@ public:
   /// Rows `from` to `to` (excluded); bands of rows may be painted in parallel.
   void paint(int from, int to) const {
     const mesh::Box& w = raster_.window;
-    const auto columns = cells_between(grid_.x_lines, w.low.x, w.high.x);
-    const auto rows =
-        cells_between(grid_.y_lines, w.high.y - to * pixel_.y, w.high.y - from * pixel_.y);
-    for (int j = rows[0]; j <= rows[1]; ++j) {
-      for (int i = columns[0]; i <= columns[1]; ++i) {
+    const GridWindow cells = window_covering(
+        grid_, {{w.low.x, w.high.y - to * pixel_.y}, {w.high.x, w.high.y - from * pixel_.y}});
+    for (int j = cells.first_row; j < cells.last_row; ++j) {
+      for (int i = cells.first_column; i < cells.last_column; ++i) {
         const int cell = j * (grid_.columns - 1) + i;
         triangle(2 * cell, from, to);
         triangle(2 * cell + 1, from, to);

@@ -22,16 +22,6 @@ mesh::Point force_of(const solver::Entry& entry) {
   return {value("force_x"), value("force_y")};
 }
 
-mesh::Point centroid_of(const mesh::Part& part) {
-  mesh::Point sum;
-  double whole = 0.0;
-  for (const mesh::Shape& piece : part.pieces) {
-    sum += area(piece) * centroid(piece);
-    whole += area(piece);
-  }
-  return (1.0 / whole) * sum;
-}
-
 /// The farthest point of some parts' outlines along a ray from the middle of the box round them.
 mesh::Point pushed_point(const mesh::Outline& outline, const std::vector<int>& parts,
                          mesh::Point direction) {
@@ -70,7 +60,7 @@ std::vector<ForceArrow> force_arrows(const Results& results) {
   };
   for (const solver::Entry& bar : results.figures.bars) {
     const auto k = static_cast<std::size_t>(index_of(bar.name));
-    arrows.push_back({bar.name, centroid_of(parts[k]), force_of(bar)});
+    arrows.push_back({bar.name, centroid(parts[k]), force_of(bar)});
   }
   std::erase_if(arrows, [](const ForceArrow& arrow) { return !(norm(arrow.force) > 0.0); });
   const auto add_pushed = [&](const solver::Entry& entry, const std::vector<std::string>& names) {
@@ -117,8 +107,7 @@ void draw_arrow(Canvas& canvas, PagePoint from, PagePoint to) {
       from + half_shaft * aside, neck + half_shaft * aside, neck + half_head * aside, to,
       neck - half_head * aside,  neck - half_shaft * aside, from - half_shaft * aside};
   canvas.line(shape, {{1.0, 1.0, 1.0, 0.95}, 3.5, {}}, true);
-  // Vermilion of M. Okabe and K. Ito's palette for every kind of colour vision, 2008.
-  canvas.fill({shape}, colour_of(0xd55e00));
+  canvas.fill({shape}, marking_ink);
 }
 
 void draw_forces(Canvas& canvas, const std::vector<ForceArrow>& arrows, const ArrowScale& scale,

@@ -10,7 +10,6 @@ namespace {
 
 /// Margin round the section, as a share of the longer side of its box.
 constexpr double margin_share = 0.12;
-constexpr Colour ink{0.1, 0.1, 0.12, 1.0};
 
 }  // namespace
 

@@ -1,8 +1,10 @@
 #include "io/grid_drawing.hpp"
 
 #include <algorithm>
-#include <array>
 #include <cmath>
+
+#include "io/grid_window.hpp"
+#include "mesh/spacing.hpp"
 
 namespace barwall::io {
 namespace {
@@ -22,15 +24,6 @@ std::vector<int> drawn_lines(const std::vector<double>& lines, double low, doubl
     result.push_back(static_cast<int>(k));
   }
   return result;
-}
-
-/// First and last line that a window needs.
-std::array<int, 2> range_of(const std::vector<double>& lines, double low, double high) {
-  const auto first = std::upper_bound(lines.begin(), lines.end(), low) - lines.begin();
-  const auto last = std::lower_bound(lines.begin(), lines.end(), high) - lines.begin();
-  const int end = static_cast<int>(lines.size()) - 1;
-  return {std::clamp(static_cast<int>(first) - 2, 0, end),
-          std::clamp(static_cast<int>(last) + 1, 0, end)};
 }
 
 /// Points of a polyline without those on the straight way between their neighbours.
@@ -54,25 +47,24 @@ void draw_grid(Canvas& canvas, const mesh::FittedGrid& grid, const Frame& frame,
   const Pen pen{grid_ink, 0.6, {}};
   const double gap = least_gap / frame.scale();
   const mesh::Box& w = frame.window;
-  const auto columns = range_of(grid.x_lines, w.low.x, w.high.x);
-  const auto rows = range_of(grid.y_lines, w.low.y, w.high.y);
+  const GridWindow cells = window_covering(grid, w);
   const auto node = [&](int i, int j) {
     return frame.page(grid.nodes[static_cast<std::size_t>(grid.node(i, j))]);
   };
   canvas.begin_clip(frame.box);
   for (int i : drawn_lines(grid.x_lines, w.low.x, w.high.x, gap)) {
     std::vector<PagePoint> line;
-    for (int j = rows[0]; j <= rows[1]; ++j) line.push_back(node(i, j));
+    for (int j = cells.first_row; j <= cells.last_row; ++j) line.push_back(node(i, j));
     canvas.line(without_straight_points(line), pen);
   }
   for (int j : drawn_lines(grid.y_lines, w.low.y, w.high.y, gap)) {
     std::vector<PagePoint> line;
-    for (int i = columns[0]; i <= columns[1]; ++i) line.push_back(node(i, j));
+    for (int i = cells.first_column; i <= cells.last_column; ++i) line.push_back(node(i, j));
     canvas.line(without_straight_points(line), pen);
   }
   const Pen thin{with_alpha(grid_ink, 0.35), 0.5, {}};
-  for (int j = rows[0]; diagonals && j < rows[1]; ++j) {
-    for (int i = columns[0]; i < columns[1]; ++i) {
+  for (int j = cells.first_row; diagonals && j < cells.last_row; ++j) {
+    for (int i = cells.first_column; i < cells.last_column; ++i) {
       const auto cell = static_cast<std::size_t>(j * (grid.columns - 1) + i);
       const bool falling = grid.falling[cell] != 0;
       const PagePoint from = falling ? node(i, j + 1) : node(i, j);
@@ -91,10 +83,8 @@ void draw_grid(Canvas& canvas, const mesh::FittedGrid& grid, const Frame& frame,
 Frame finest_detail(const solver::Problem& problem, const PageBox& box) {
   const mesh::FittedGrid& grid = *problem.grid;
   const auto spacing_at = [](const std::vector<double>& lines, double v) {
-    const auto k =
-        std::clamp<std::ptrdiff_t>(std::upper_bound(lines.begin(), lines.end(), v) - lines.begin(),
-                                   1, static_cast<std::ptrdiff_t>(lines.size()) - 1);
-    return lines[static_cast<std::size_t>(k)] - lines[static_cast<std::size_t>(k) - 1];
+    const auto k = static_cast<std::size_t>(mesh::interval_of(lines, v));
+    return lines[k + 1] - lines[k];
   };
   std::vector<mesh::Point> places = problem.outline.vertices;
   for (const mesh::OutlinePiece& piece : problem.outline.pieces) {

@@ -5,6 +5,7 @@
 
 extern "C" {
 void openblas_set_num_threads(int);
+int blas_thread_shutdown_() __attribute__((weak));  // not in OpenBLAS without threads
 void dpotrf_(const char* triangle, const int* size, double* matrix, const int* leading, int* info);
 }
 
@@ -21,6 +22,8 @@ void claim_blas_memory() {
   // OpenBLAS takes 128 MiB and a page; asked for first with some room beside it.
   require_memory(std::size_t{160} << 20U);
   openblas_set_num_threads(1);
+  // Its threads take as much each, and one that comes late would take what is claimed here.
+  if (blas_thread_shutdown_ != nullptr) blas_thread_shutdown_();
   const int size = 1;
   double matrix = 1.0;
   int info = 0;

@@ -10,7 +10,7 @@ namespace barwall::io {
 void require_memory(std::size_t bytes);
 
 /// Makes OpenBLAS take its working memory now, once and for all. Left to itself it does so in the
-/// midst of a factorization, and tries again for ever when there is none left.
+/// midst of a factorization, and tries again for ever when there is none left. Ends its threads.
 /// \throws std::bad_alloc when there is not enough memory
 void claim_blas_memory();
 

@@ -19,7 +19,4 @@ std::vector<std::string> wrapped(const Canvas& canvas, const std::string& text,
 void draw_heading(Canvas& canvas, const std::string& title, const std::string& below,
                   const Colour& below_colour, double left, double width);
 
-/// The page's height that a heading takes.
-inline constexpr double heading_height = 100.0;
-
 }  // namespace barwall::io

@@ -12,6 +12,7 @@
 #include "io/flux_lines.hpp"
 #include "io/force_arrows.hpp"
 #include "io/frame.hpp"
+#include "io/page.hpp"
 #include "io/page_text.hpp"
 #include "io/picture_key.hpp"
 #include "io/results_folder.hpp"
@@ -20,14 +21,10 @@
 namespace barwall::io {
 namespace {
 
-constexpr int page_width = 1600;
-constexpr int left_margin = 122;
-constexpr int frame_width = 1442;
 constexpr int least_height = 460;
 constexpr int largest_height = 1080;
 constexpr int flux_line_count = 40;
 constexpr double text_size = 21.0;
-constexpr Colour ink{0.1, 0.1, 0.12, 1.0};
 
 /// What the picture shows, found once and drawn in every format.
 struct Scene {
@@ -169,7 +166,7 @@ std::string drawn(Canvas::Kind kind, const Results& results, const Scene& scene,
   Canvas canvas(kind, page_width, static_cast<int>(bottom) + 256);
   const bool sound = results.verdict() == "sound";
   draw_heading(canvas, results.input.title, state_line(results),
-               sound ? Colour{0.3, 0.3, 0.33, 1.0} : colour_of(0xb03a00), left_margin, frame_width);
+               sound ? pale_ink : colour_of(0xb03a00), left_margin, frame_width);
 
   canvas.image(bitmap, frame.box.low);
   draw_flux_lines(canvas, scene);
@@ -192,7 +189,7 @@ std::string drawn(Canvas::Kind kind, const Results& results, const Scene& scene,
   draw_force_key(canvas, scene.arrow_scale, {key_left, bar_top - 12.0}, alternating, text_size);
   TextStyle small;
   small.size = 18.0;
-  small.colour = {0.3, 0.3, 0.33, 1.0};
+  small.colour = pale_ink;
   std::string note = flux_line_note(scene, alternating) +
                      " Model: 2-D static field, no eddy currents, no skin effect.";
   if (left_out > 0) note += fmt::format(" Names without room: {}.", left_out);

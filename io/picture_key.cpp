@@ -8,8 +8,6 @@
 namespace barwall::io {
 namespace {
 
-constexpr Colour ink{0.1, 0.1, 0.12, 1.0};
-
 /// The prefix in which the middle of the scale reads best.
 PrefixedUnit unit_of(const LogScale& scale) {
   return prefixed_unit(std::sqrt(scale.low * scale.high) * 5.0, "T");

@@ -87,6 +87,50 @@ std::vector<mesh::Point> points_around(const mesh::Outline& outline, double clea
   return points;
 }
 
+/// The case's problem, all but its grid.
+std::shared_ptr<solver::Problem> problem_without_grid(const Case& input) {
+  auto problem = std::make_shared<solver::Problem>();
+  problem->section = input.section;
+  problem->outline = outline_of(input.section);
+  problem->materials = input.materials;
+  problem->excitation = input.excitation;
+  problem->loops = input.loops;
+  return problem;
+}
+
+/// Gives a problem its grid, fine out to every probe, and with saturable steel the coarser one on
+/// which the solve begins.
+void set_grids(solver::Problem& problem, const Case& input,
+               const std::vector<solver::Probe>& probes) {
+  if (saturable(problem) && input.excitation.alternating()) {
+    throw InputError(
+        fmt::format("{}: saturable steel is solved for steady currents only; leave out "
+                    "frequency_hz, or give relative_permeability in place of the B-H table",
+                    input.grid_place));
+  }
+  mesh::GridOptions options;
+  options.cells_across = input.grid.cells_across;
+  options.reach = input.grid.reach;
+  if (has_net_current(input.excitation)) options.wide = net_current_zone;
+  options.max_nodes = nodes_that_fit();
+  for (const solver::Probe& probe : probes) {
+    for (mesh::Point point : probe.points) options.fine.include(point);
+  }
+  try {
+    problem.grid =
+        std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem.outline, options));
+  } catch (const mesh::GridError& error) {
+    throw InputError(fmt::format("{}: {}", input.grid_place, error.what()));
+  }
+  if (!saturable(problem)) return;
+  try {
+    options.cells_across = std::max(1, options.cells_across / 2);
+    problem.coarse_grid =
+        std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem.outline, options));
+  } catch (const mesh::GridError&) {  // then the solve begins from zero
+  }
+}
+
 }  // namespace
 
 std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& outline) {
@@ -117,37 +161,8 @@ std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& out
 }
 
 std::shared_ptr<const solver::Problem> problem_of(const Case& input) {
-  auto problem = std::make_shared<solver::Problem>();
-  problem->section = input.section;
-  problem->outline = outline_of(input.section);
-  problem->materials = input.materials;
-  problem->excitation = input.excitation;
-  problem->loops = input.loops;
-  mesh::GridOptions options;
-  options.cells_across = input.grid.cells_across;
-  options.reach = input.grid.reach;
-  if (has_net_current(input.excitation)) options.wide = net_current_zone;
-  options.max_nodes = nodes_that_fit();
-  for (const solver::Probe& probe : probes_of(input, problem->outline)) {
-    for (mesh::Point point : probe.points) options.fine.include(point);
-  }
-  if (saturable(*problem) && input.excitation.alternating()) {
-    throw InputError(fmt::format(
-        "{}: saturable steel is solved for steady currents only; leave out frequency_hz, or give "
-        "relative_permeability in place of the B-H table",
-        input.grid_place));
-  }
-  try {
-    problem->grid =
-        std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem->outline, options));
-    if (saturable(*problem)) {
-      options.cells_across = std::max(1, options.cells_across / 2);
-      problem->coarse_grid =
-          std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem->outline, options));
-    }
-  } catch (const mesh::GridError& error) {
-    throw InputError(fmt::format("{}: {}", input.grid_place, error.what()));
-  }
+  auto problem = problem_without_grid(input);
+  set_grids(*problem, input, probes_of(input, problem->outline));
   return problem;
 }
 
@@ -156,7 +171,10 @@ Results run_case(Case input, const std::function<void(const std::string&)>& on_s
   results.input = std::move(input);
   Stopwatch watch(results.stages, on_stage);
   watch.begin("grid");
-  results.problem = problem_of(results.input);
+  auto problem = problem_without_grid(results.input);
+  const auto probes = probes_of(results.input, problem->outline);
+  set_grids(*problem, results.input, probes);
+  results.problem = problem;
   watch.begin("solve");
   auto solution = std::make_shared<solver::Solution>(solve(results.problem));
   results.solution = solution;
@@ -164,9 +182,7 @@ Results run_case(Case input, const std::function<void(const std::string&)>& on_s
   results.field = std::make_shared<solver::RecoveredField>(*solution);
   const solver::PartIntegrals integrals(*solution);
   const solver::StressBands bands(*results.problem, bodies(results.problem->outline));
-  results.figures =
-      figures_of(integrals, *results.field, bands,
-                 probes_of(results.input, results.problem->outline), results.input.circuits);
+  results.figures = figures_of(integrals, *results.field, bands, probes, results.input.circuits);
   watch.begin("checks");
   results.checks = verify::run_checks(integrals, *results.field, bands);
   if (results.input.run_length_m) {

@@ -7,7 +7,7 @@
 namespace barwall::io {
 namespace {
 
-constexpr Colour ink{0.08, 0.08, 0.1, 1.0};
+constexpr Colour section_ink{0.08, 0.08, 0.1, 1.0};
 constexpr Colour paper{1.0, 1.0, 1.0, 1.0};
 
 std::vector<PagePoint> on_page(const mesh::Curve& curve, const Frame& frame) {
@@ -126,7 +126,7 @@ void draw_outlines(Canvas& canvas, const solver::Problem& problem, const Frame& 
   for (const mesh::OutlinePiece& piece : problem.outline.pieces) {
     const double thin = std::min(thickness_of(piece.left), thickness_of(piece.right));
     const double width = std::clamp(0.2 * thin * frame.scale(), 0.4, 1.8);
-    canvas.line(on_page(piece.curve, frame), {ink, width, {}});
+    canvas.line(on_page(piece.curve, frame), {section_ink, width, {}});
   }
   canvas.end_clip();
 }
@@ -146,10 +146,10 @@ std::vector<double> currents_at(const solver::Excitation& excitation, double wt)
 }
 
 void draw_current_sign(Canvas& canvas, PagePoint centre, double radius, double current) {
-  const Pen pen{ink, std::max(1.0, 0.14 * radius), {}};
+  const Pen pen{section_ink, std::max(1.0, 0.14 * radius), {}};
   canvas.circle(centre, radius, paper, pen);
   if (current > 0.0) {
-    canvas.circle(centre, 0.26 * radius, ink, {ink, 0.5, {}});
+    canvas.circle(centre, 0.26 * radius, section_ink, {section_ink, 0.5, {}});
   } else if (current < 0.0) {
     const double d = 0.62 * radius;
     canvas.line({centre + PagePoint{-d, -d}, centre + PagePoint{d, d}}, pen);
@@ -164,7 +164,7 @@ int draw_names(Canvas& canvas, const solver::Problem& problem, const Frame& fram
   const std::vector<Named> all = named_pieces(problem, frame);
   if (all.size() > many) text_size *= 0.75;
   constexpr double backing = 2.0;
-  const TextStyle style{text_size, Align::start, false, ink, 0.0, false};
+  const TextStyle style{text_size, Align::start, false, section_ink, 0.0, false};
   for (const Named& named : all) labels.avoid_line(named.edge);
 
   // Signs first: their places are given.
@@ -203,7 +203,7 @@ int draw_names(Canvas& canvas, const solver::Problem& problem, const Frame& fram
     }
     if (label->leader) {
       canvas.line({(*label->leader)[0], (*label->leader)[1]}, {{1.0, 1.0, 1.0, 0.8}, 3.0, {}});
-      canvas.line({(*label->leader)[0], (*label->leader)[1]}, {ink, 1.2, {}});
+      canvas.line({(*label->leader)[0], (*label->leader)[1]}, {section_ink, 1.2, {}});
     }
     canvas.box(label->box, Colour{1.0, 1.0, 1.0, 0.85});
     const PagePoint low = label->box.low + PagePoint{backing, backing};

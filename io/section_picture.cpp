@@ -8,6 +8,7 @@
 
 #include "io/frame.hpp"
 #include "io/grid_drawing.hpp"
+#include "io/page.hpp"
 #include "io/page_text.hpp"
 #include "io/picture.hpp"
 #include "io/results_folder.hpp"
@@ -17,14 +18,9 @@
 namespace barwall::io {
 namespace {
 
-constexpr int page_width = 1600;
-constexpr int left_margin = 122;
-constexpr int frame_width = 1442;
 constexpr int detail_width = 640;
 constexpr int detail_height = 480;
 constexpr double text_size = 20.0;
-constexpr Colour ink{0.1, 0.1, 0.12, 1.0};
-constexpr Colour grey{0.35, 0.35, 0.38, 1.0};
 
 /// Tints by material, in the order in which the case's parts name them: M. Okabe and K. Ito's
 /// palette for every kind of colour vision, 2008, lightened.
@@ -185,7 +181,7 @@ std::string drawn(Canvas::Kind kind, const Case& input, const solver::Problem& p
       finest_detail(problem, {{1.0 * left_margin, detail_top},
                               {1.0 * left_margin + detail_width, detail_top + detail_height}});
   Canvas canvas(kind, page_width, static_cast<int>(detail.box.high.y) + 84);
-  draw_heading(canvas, input.title, input.name + ":  section and grid, not solved", grey,
+  draw_heading(canvas, input.title, input.name + ":  section and grid, not solved", pale_ink,
                left_margin, frame_width);
 
   fill_parts(canvas, problem.outline, whole, colours);
@@ -196,8 +192,7 @@ std::string drawn(Canvas::Kind kind, const Case& input, const solver::Problem& p
   draw_overall_size(canvas, box, whole, labels);
   const PageBox marked{whole.page({detail.window.low.x, detail.window.high.y}),
                        whole.page({detail.window.high.x, detail.window.low.y})};
-  const Colour mark = colour_of(0xd55e00);
-  canvas.box(marked, Pen{mark, 2.5, {}});
+  canvas.box(marked, Pen{marking_ink, 2.5, {}});
   const PagePoint corners[] = {
       marked.low, {marked.high.x, marked.low.y}, marked.high, {marked.low.x, marked.high.y}};
   for (std::size_t k = 0; k < 4; ++k) labels.block_line(corners[k], corners[(k + 1) % 4], 2.0);
@@ -209,7 +204,7 @@ std::string drawn(Canvas::Kind kind, const Case& input, const solver::Problem& p
   draw_grid(canvas, *problem.grid, detail, true);
   draw_outlines(canvas, problem, detail);
   draw_axes(canvas, detail, text_size);
-  canvas.box(detail.box, Pen{mark, 2.5, {}});
+  canvas.box(detail.box, Pen{marking_ink, 2.5, {}});
   TextStyle style;
   style.size = text_size;
   canvas.text({detail.box.low.x, detail.box.low.y - 12.0}, "The marked detail", style);

@@ -273,7 +273,9 @@ std::string summary(const Results& results, const std::filesystem::path& folder,
   const Summary parts(results, colour);
   return parts.head() + parts.forces() + parts.probes() + parts.inductances() + parts.walls() +
          "\nChecks\n" + checks_table(results, colour) + parts.notices() + "\n" +
-         verdict_line(results, colour) + fmt::format("Results: {}\n", folder.string()) +
+         verdict_line(results, colour) +
+         fmt::format("Results: {}\nReport:  {}\n", folder.string(),
+                     (folder / "report.html").string()) +
          wrapped(
              "A computed figure supports but does not replace a licensed engineer, the local "
              "code and type tests.",

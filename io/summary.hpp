@@ -11,7 +11,7 @@ namespace barwall::io {
 inline constexpr int summary_width = 100;
 
 /// The results in brief for the terminal: forces, field at the probes, inductances, walls, then
-/// checks and notices, the verdict and where the files lie.
+/// checks and notices, the verdict and where the files and the report lie.
 /// \param colour marks failures in colour
 std::string summary(const Results& results, const std::filesystem::path& folder, bool colour);
 

@@ -8,7 +8,7 @@ namespace {
 
 // Spacings as fractions of a size, at cells_across = 4.
 constexpr double across = 1.0 / 4.0;            // of a width or gap
-constexpr double on_diameter = 1.0 / 32.0;      // of a circle's diameter
+constexpr double on_diameter = 1.0 / 40.0;      // of a circle's diameter
 constexpr double at_bar_edge = 1.0 / 16;        // of a bar's thickness
 constexpr double at_sharp_corner = 1.0 / 25.0;  // of a sharp part's thickness
 

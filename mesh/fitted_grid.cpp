@@ -13,7 +13,8 @@ namespace {
 
 // Bounds on the spacing's slope; with slope g neighbouring intervals differ by a factor exp(g).
 constexpr double sharp_slope = 0.113;  // away from sharp corners: below ln 1.12
-constexpr double near_slope = 0.1;     // otherwise within the section
+constexpr double near_slope = 0.1;     // otherwise within the section, and without such corners
+constexpr double smooth_slope = 0.05;  // this: no corner limits what a finer grid is good for
 constexpr double open_slope = 0.1;     // in the open: the far field's error goes with its square
 constexpr double wide_slope = 0.15;    // where the net current's field is looked at
 constexpr double far_slope = 0.35;     // beyond every place where the field is asked for
@@ -32,7 +33,8 @@ struct Extents {
 std::vector<double> lines_along(const AxisFeatures& features, int cells_across,
                                 const Extents& extents) {
   const auto [near_low, near_high, fine_low, fine_high, wide_low, wide_high, low, high] = extents;
-  SpacingFunction spacing(features.smooth, {{{near_low, near_high, near_slope},
+  const double slope = features.sharp.empty() ? smooth_slope : near_slope;
+  SpacingFunction spacing(features.smooth, {{{near_low, near_high, slope},
                                              {fine_low, fine_high, open_slope},
                                              {wide_low, wide_high, wide_slope}},
                                             far_slope});

@@ -5,6 +5,8 @@
 #include <map>
 #include <unordered_map>
 
+#include "mesh/spacing.hpp"
+
 namespace barwall::mesh {
 namespace {
 
@@ -69,12 +71,6 @@ private:
   void put_on(int n, int piece) {
     auto& pieces = on_[n];
     if (std::find(pieces.begin(), pieces.end(), piece) == pieces.end()) pieces.push_back(piece);
-  }
-
-  static int interval_of(const std::vector<double>& lines, double v) {
-    const auto above = std::upper_bound(lines.begin(), lines.end(), v);
-    const auto k = static_cast<int>(above - lines.begin()) - 1;
-    return std::clamp(k, 0, static_cast<int>(lines.size()) - 2);
   }
 
   /// Cells round a node, as (i, j) of their lower left corners.

@@ -1,5 +1,6 @@
 #pragma once
 
+#include <algorithm>
 #include <cmath>
 
 namespace barwall::mesh {
@@ -41,7 +42,7 @@ constexpr double cross(Point a, Point b) {
 }
 
 inline double norm(Point a) {
-  return std::hypot(a.x, a.y);
+  return std::sqrt(dot(a, a));  // not hypot: it is slow, and guards magnitudes that none has here
 }
 inline double distance(Point a, Point b) {
   return norm(b - a);
@@ -88,9 +89,9 @@ struct Box {
 
 /// Shortest way between two boxes [m], 0 where they meet.
 inline double distance(const Box& a, const Box& b) {
-  const double dx = std::fmax(std::fmax(a.low.x - b.high.x, b.low.x - a.high.x), 0.0);
-  const double dy = std::fmax(std::fmax(a.low.y - b.high.y, b.low.y - a.high.y), 0.0);
-  return std::hypot(dx, dy);
+  const double dx = std::max({a.low.x - b.high.x, b.low.x - a.high.x, 0.0});
+  const double dy = std::max({a.low.y - b.high.y, b.low.y - a.high.y, 0.0});
+  return std::sqrt(dx * dx + dy * dy);
 }
 inline double distance(const Box& box, Point p) {
   return distance(box, Box{p, p});

@@ -3,14 +3,10 @@
 #include <algorithm>
 #include <cmath>
 
+#include "mesh/spacing.hpp"
+
 namespace barwall::mesh {
 namespace {
-
-int interval_of(const std::vector<double>& lines, double v) {
-  const auto above = std::upper_bound(lines.begin(), lines.end(), v);
-  return std::clamp(static_cast<int>(above - lines.begin()) - 1, 0,
-                    static_cast<int>(lines.size()) - 2);
-}
 
 /// Painting order as a number: air below walls below bars.
 int paint_rank(const Section& section, Occupant occupant) {

@@ -21,6 +21,18 @@ bool cut_away(const Section& section, int part, Point point) {
 
 }  // namespace
 
+double area(const Part& part) {
+  double sum = 0.0;
+  for (const Shape& piece : part.pieces) sum += area(piece);
+  return sum;
+}
+
+Point centroid(const Part& part) {
+  Point moment;
+  for (const Shape& piece : part.pieces) moment += area(piece) * centroid(piece);
+  return (1.0 / area(part)) * moment;
+}
+
 Occupant occupant_at(const Section& section, Point point) {
   for (const auto kind : {Part::Kind::bar, Part::Kind::wall}) {
     for (std::size_t k = section.parts.size(); k-- > 0;) {

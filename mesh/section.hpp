@@ -21,6 +21,12 @@ struct Part {
   bool sharp_corners = false;
 };
 
+/// Area of all pieces together [m2], also where something covers or cuts them.
+double area(const Part& part);
+
+/// Centroid of all pieces together [m].
+Point centroid(const Part& part);
+
 /// A slot or hole cut from the walls it names.
 struct Opening {
   std::string name;

@@ -207,4 +207,10 @@ std::vector<double> graded_lines(const std::vector<double>& fixed, const Spacing
   return lines;
 }
 
+int interval_of(const std::vector<double>& lines, double x) {
+  const auto above = std::upper_bound(lines.begin(), lines.end(), x);
+  return std::clamp(static_cast<int>(above - lines.begin()) - 1, 0,
+                    static_cast<int>(lines.size()) - 2);
+}
+
 }  // namespace barwall::mesh

@@ -76,4 +76,8 @@ std::vector<double> thinned_lines(std::vector<WantedLine> wanted, const SpacingF
 std::vector<double> graded_lines(const std::vector<double>& fixed, const SpacingFunction& spacing,
                                  int cells_across);
 
+/// The interval of ascending lines that holds x, by its lower line; the first or the last one
+/// where x lies beyond them all.
+int interval_of(const std::vector<double>& lines, double x);
+
 }  // namespace barwall::mesh

@@ -193,10 +193,16 @@ PulsatingVector StressBands::force(const Solution& solution, int body, const Ban
     const double share = around.at(node % grid.columns, node / grid.columns);
     return std::clamp((band.to - share) / (band.to - band.from), 0.0, 1.0);
   };
+  const auto outside_band = [&](int i, int j) {
+    const auto [least, most] = std::minmax({around.at(i, j), around.at(i + 1, j),
+                                            around.at(i, j + 1), around.at(i + 1, j + 1)});
+    return least >= band.to || most <= band.from;
+  };
   // Sums of T grad w for the pattern pairs (0,0), (1,1), (0,1); T is symmetric in the pair.
   std::array<mesh::Point, 3> sum{};
   for (int j = around.first_row; j < around.last_row; ++j) {
     for (int i = around.first_column; i < around.last_column; ++i) {
+      if (outside_band(i, j)) continue;
       const int cell = j * (grid.columns - 1) + i;
       for (int t = 2 * cell; t <= 2 * cell + 1; ++t) {
         if (grid.region[static_cast<std::size_t>(t)] != 0) continue;

@@ -40,11 +40,11 @@ struct SolveOptions {
   /// A at the nodes of the outer boundary [Wb/m] in place of the open boundary's values, for steady
   /// currents alone; A then keeps the constant that these values give it. Fields of 1 A in a bar
   /// have the open boundary always.
-  std::function<double(mesh::Point)> boundary;
+  std::function<double(mesh::Point)> boundary = nullptr;
   /// On the residual of a nonlinear solve, relative to that of no field.
   double newton_tolerance = 1e-11;
   /// Where a nonlinear solve starts [Wb/m], all nodes; empty: from the coarse grid, or from zero.
-  Eigen::VectorXd start;
+  Eigen::VectorXd start = {};
 };
 
 /// The equations of the scheme, as they are: at every node within the boundary the flux of

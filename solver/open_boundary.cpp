@@ -21,13 +21,7 @@ CurrentPattern pattern_of(const mesh::Section& section, std::vector<double> part
     if (current == 0.0) continue;
     pattern.net += current;
     magnitude += std::abs(current);
-    double whole = 0.0;
-    mesh::Point weighted;
-    for (const mesh::Shape& piece : section.parts[k].pieces) {
-      whole += area(piece);
-      weighted += area(piece) * mesh::centroid(piece);
-    }
-    moment += (current / whole) * weighted;
+    moment += current * centroid(section.parts[k]);
   }
   if (std::abs(pattern.net) <= 1e-12 * magnitude) pattern.net = 0.0;
   if (pattern.net != 0.0) pattern.centroid = (1.0 / pattern.net) * moment;

@@ -142,10 +142,9 @@ private:
     const mesh::Polygon inside{line};
     Complex sum = 0.0;
     for (std::size_t k = 0; k < problem_.section.parts.size(); ++k) {
-      const auto& pieces = problem_.section.parts[k].pieces;
-      double whole = 0.0;
-      for (const mesh::Shape& piece : pieces) whole += area(piece);
-      for (const mesh::Shape& piece : pieces) {
+      const mesh::Part& part = problem_.section.parts[k];
+      const double whole = area(part);
+      for (const mesh::Shape& piece : part.pieces) {
         // The line crosses no part: one point of a piece's outline stands for the piece.
         const auto chains = boundary(piece);
         if (contains(inside, at(chains.front().front(), 0.5))) {

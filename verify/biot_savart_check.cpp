@@ -15,8 +15,7 @@ namespace {
 
 /// B [T] at a point of 1 A in one part, spread over its pieces by area.
 mesh::Point field_of_part(const mesh::Part& part, mesh::Point at) {
-  double whole = 0.0;
-  for (const mesh::Shape& piece : part.pieces) whole += area(piece);
+  const double whole = area(part);
   mesh::Point b;
   for (const mesh::Shape& piece : part.pieces) b += field_of(piece, area(piece) / whole, at);
   return b;

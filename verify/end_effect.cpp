@@ -16,9 +16,9 @@ std::vector<BarCurrent> bar_currents(const solver::Problem& problem, bool quadra
     const auto phasor = problem.excitation.current[k];
     const double current = quadrature ? phasor.imag() : phasor.real();
     if (current == 0.0) continue;
-    double whole = 0.0;
-    for (const mesh::Shape& piece : problem.section.parts[k].pieces) whole += area(piece);
-    for (const mesh::Shape& piece : problem.section.parts[k].pieces) {
+    const mesh::Part& part = problem.section.parts[k];
+    const double whole = area(part);
+    for (const mesh::Shape& piece : part.pieces) {
       bars.push_back({piece, current * area(piece) / whole});
     }
   }

@@ -42,7 +42,7 @@ LadderQuantity inductance(double error) {
 LadderProblem half_space() {
   auto problem =
       problem_of("round bars before a half-space of steel", bars_before_steel(),
-                 {off_outlines(5.8e-4), near_curved_outlines(1.8e-3), force_on_currents(4.3e-4)});
+                 {off_outlines(9.8e-5), near_curved_outlines(3.3e-4), force_on_currents(1.2e-4)});
   problem.grid.reach = 1.0;  // the steel reaches the boundary
   return problem;
 }
@@ -72,21 +72,21 @@ LadderProblem made_up_potential() {
 
 std::vector<LadderProblem> ladder_problems() {
   return {problem_of("round bar in open air", round_bar_in_air(),
-                     {off_outlines(8.7e-4), near_curved_outlines(2.1e-3)}),
+                     {off_outlines(2.4e-4), near_curved_outlines(4.3e-4)}),
           problem_of("flat bar in open air", flat_bar_in_air(),
-                     {off_outlines(1.5e-4), near_straight_outlines(1.0e-3)}),
+                     {off_outlines(2.1e-4), near_straight_outlines(7.5e-4)}),
           problem_of("pair of flat bars", pair_of_flat_bars(),
-                     {off_outlines(1.8e-4), near_straight_outlines(1.3e-3),
-                      force_on_currents(4.0e-4), force_by_stress(5.4e-4), inductance(6.8e-4)}),
+                     {off_outlines(2.5e-4), near_straight_outlines(9.2e-4),
+                      force_on_currents(4.7e-4), force_by_stress(4.7e-4), inductance(5.1e-4)}),
           half_space(),
           problem_of("off-centre round bars in a steel pipe", bars_in_pipe(),
-                     {off_outlines(3.8e-4), near_curved_outlines(7.0e-4), force_on_currents(2.5e-4),
-                      force_by_stress(4.4e-4), inductance(1.1e-4)}),
+                     {off_outlines(8.8e-5), near_curved_outlines(5.1e-4), force_on_currents(6.2e-5),
+                      force_by_stress(7.9e-5), inductance(2.9e-5)}),
           problem_of("round bars beside a steel rod", bars_beside_rod(),
-                     {off_outlines(8.4e-4), near_curved_outlines(2.6e-3), force_on_currents(7.7e-4),
-                      force_by_stress(1.1e-3), inductance(4.5e-4)}),
+                     {off_outlines(3.2e-4), near_curved_outlines(5.5e-4), force_on_currents(6.5e-4),
+                      force_by_stress(4.4e-4), inductance(2.2e-4)}),
           problem_of("coaxial tubes, go and return", coaxial_line(),
-                     {off_outlines(6.2e-4), near_curved_outlines(2.4e-3), inductance(5.6e-4)}),
+                     {off_outlines(2.5e-4), near_curved_outlines(1.5e-3), inductance(4.8e-4)}),
           made_up_potential()};
 }
 

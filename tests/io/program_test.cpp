@@ -102,19 +102,34 @@ TEST_CASE("Out of memory exits with 3 and leaves no trace") {
   // From ample room down to little more than the program takes to start.
   bool refused = false;
   for (int megabytes = 640; megabytes >= 160; megabytes -= 80) {
-    const auto run = run_barwall(scratch.path(), "solve pair.toml --out out --threads 1",
-                                 "ulimit -v " + std::to_string(1024 * megabytes) + ";");
-    INFO(megabytes << " MB: " << run.err);
-    if (run.code == 0) {
-      fs::remove_all(scratch.path() / "out");
-      continue;
+    for (const char* threads : {" --threads 1", " --threads 2"}) {
+      const auto run =
+          run_barwall(scratch.path(), std::string("solve pair.toml --out out") + threads,
+                      "ulimit -v " + std::to_string(1024 * megabytes) + ";");
+      INFO(megabytes << " MB" << threads << ": " << run.err);
+      if (run.code == 0) {
+        fs::remove_all(scratch.path() / "out");
+        continue;
+      }
+      CHECK(run.code == 3);
+      refused = true;
+      CHECK(run.err.find("memory") != std::string::npos);
+      CHECK(test::names_in(scratch.path()) == before);
     }
-    CHECK(run.code == 3);
-    refused = true;
-    CHECK(run.err.find("memory") != std::string::npos);
-    CHECK(test::names_in(scratch.path()) == before);
   }
   CHECK(refused);
+}
+
+TEST_CASE("Where the system does not give the threads asked for, one does the work") {
+  const test::ScratchFolder scratch;
+  scratch.write("pair.toml", test::two_bars);
+  // The stacks of a thousand threads take more than that.
+  const auto run =
+      run_barwall(scratch.path(), "solve pair.toml --out out --threads 1000", "ulimit -v 2000000;");
+  CHECK(run.code == 0);
+  CHECK(run.err == "barwall: the system does not give 1000 threads; computing with one\n");
+  const auto record = nlohmann::json::parse(test::text_of_file(scratch.path() / "out/run.json"));
+  CHECK(record["threads"] == 1);
 }
 
 TEST_CASE("Another case's folder is refused with 2 until it may be replaced") {

@@ -71,7 +71,8 @@ TEST_CASE("A summary shows what is exceeded first and says how much is left out"
   CHECK(
       text.find("Verdict: unsound, do not use the numbers.  Validity: full.  Limits: exceeded.") !=
       std::string::npos);
-  CHECK(text.find("Results: results/case\n") != std::string::npos);
+  CHECK(text.find("Results: results/case\nReport:  results/case/report.html\n") !=
+        std::string::npos);
   CHECK(text.find('\x1b') == std::string::npos);
 }
 

@@ -204,7 +204,7 @@ TEST_CASE("A thousand random sections get valid grids, and at most one in a hund
         turned += bad;
         mixed += impure;
         off += wrong;
-        if (bad + impure + wrong > 0) faults += " " + std::to_string(seed);
+        if (bad + impure + wrong > 0) faults.append(" ").append(std::to_string(seed));
       }
     } catch (const GridError& error) {
 #pragma omp critical

@@ -1,0 +1,60 @@
+#include "io/threads.hpp"
+
+#include <fmt/format.h>
+#include <omp.h>
+#include <pthread.h>
+
+#include <algorithm>
+#include <cstdio>
+#include <mutex>
+#include <vector>
+
+namespace barwall::io {
+namespace {
+
+/// CHOLMOD asks for as many threads at a time, whatever the number set.
+constexpr int cholmod_threads = 4;
+
+void* wait_at(void* gate) {
+  const std::lock_guard<std::mutex> pass(*static_cast<std::mutex*>(gate));
+  return nullptr;
+}
+
+/// True when so many threads can run beside this one. Plain POSIX threads: those of the standard
+/// library free memory of their own, for which each would take an address space to keep.
+bool can_run(int count) {
+  std::mutex gate;
+  std::vector<pthread_t> threads(static_cast<std::size_t>(count));
+  std::size_t started = 0;
+  {
+    const std::lock_guard<std::mutex> closed(gate);
+    while (started < threads.size() &&
+           pthread_create(&threads[started], nullptr, wait_at, &gate) == 0) {
+      ++started;
+    }
+  }
+  for (std::size_t k = 0; k < started; ++k) pthread_join(threads[k], nullptr);
+  return started == threads.size();
+}
+
+}  // namespace
+
+void start_threads(int count) {
+  if (count == 0) count = omp_get_max_threads();
+  const int most = std::max(count, cholmod_threads);
+  if (count > 1 && !can_run(most - 1)) {
+    fmt::print(stderr, "barwall: the system does not give {} threads; computing with one\n", most);
+    count = 1;
+  }
+  omp_set_num_threads(count);
+  if (count == 1) {
+    // Serial even where a library asks for a number of its own.
+    omp_set_max_active_levels(0);
+    return;
+  }
+  // OpenMP keeps the threads of a parallel region for the next one.
+#pragma omp parallel num_threads(most)
+  {}
+}
+
+}  // namespace barwall::io

@@ -1,0 +1,10 @@
+#pragma once
+
+namespace barwall::io {
+
+/// Makes all that follows compute with `count` threads, as many as there are processors where it
+/// is 0, and starts them. Where the system does not give as many it computes with one and says so:
+/// OpenMP by itself would end the program.
+void start_threads(int count);
+
+}  // namespace barwall::io
