@@ -117,6 +117,13 @@ std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& out
 }
 
 std::shared_ptr<const solver::Problem> problem_of(const Case& input) {
+  for (std::size_t k = 0; k < input.materials.size(); ++k) {
+    if (!input.materials[k].saturable()) continue;
+    throw InputError(
+        fmt::format("{}:1:1: \"{}\" is of the saturable material \"{}\", which can be "
+                    "read but not solved yet; give it a relative_permeability",
+                    input.file, input.section.parts[k].name, input.materials[k].name));
+  }
   auto problem = std::make_shared<solver::Problem>();
   problem->section = input.section;
   problem->outline = outline_of(input.section);
