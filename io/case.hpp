@@ -53,10 +53,10 @@ struct GridRequest {
 
 /// A case file, read and found valid; SI units throughout, names resolved to part indices.
 struct Case {
-  std::string file;        ///< the case file as it was given
-  std::string name;        ///< the file's name without extension
-  std::string title;       ///< the name where the file gives no title
-  std::string sha256;      ///< of the case file's bytes and of every --set
+  std::string file;    ///< the case file as it was given
+  std::string name;    ///< the file's name without extension
+  std::string title;   ///< the name where the file gives no title
+  std::string sha256;  ///< of the bytes of the case file and its curve files, and of every --set
   std::string grid_place;  ///< FILE:LINE:COLUMN of [grid], for messages about the grid
   std::optional<double> run_length_m;
   /// Names of [given] with their values after --set, in file order, in the file's own units.

@@ -1,52 +1,36 @@
 #include <fmt/format.h>
 
 #include <algorithm>
-#include <cstdint>
-#include <fstream>
 #include <map>
-#include <system_error>
 #include <utility>
 
 #include "io/case.hpp"
 #include "io/case_currents.hpp"
 #include "io/case_fault.hpp"
+#include "io/case_material.hpp"
 #include "io/case_overlaps.hpp"
 #include "io/case_parts.hpp"
 #include "io/case_requests.hpp"
 #include "io/case_text.hpp"
-#include "io/input_error.hpp"
 #include "io/nearest_name.hpp"
+#include "io/plain_file.hpp"
 #include "io/sha256.hpp"
 
 namespace barwall::io {
 
 namespace {
 
-/// Largest case file [bytes]; ten thousand bars fill a quarter of it.
-constexpr std::uintmax_t largest_file = 4'000'000;
+/// Ten thousand bars fill a quarter of it.
+constexpr PlainFileKind case_file{"case", ".toml", 4'000'000};
 constexpr std::size_t most_given = 10000;
 
-/// The bytes of a plain file of bounded size.
-std::string bytes_of(const std::filesystem::path& file) {
-  // Without a line to point at, messages about the file as a whole point at its beginning.
-  const auto fail = [&](const std::string& what) {
-    throw InputError(fmt::format("{}:1:1: {}", file.string(), what));
-  };
-  std::error_code error;
-  const auto status = std::filesystem::status(file, error);
-  if (!std::filesystem::exists(status)) fail("no such file");
-  if (std::filesystem::is_directory(status)) fail("this is a folder; a case is a .toml file");
-  if (!std::filesystem::is_regular_file(status)) fail("this is no plain file");
-  std::ifstream stream(file, std::ios::binary);
-  if (!stream) fail("the file cannot be read");
-  std::string bytes(largest_file + 1, '\0');
-  stream.read(bytes.data(), static_cast<std::streamsize>(bytes.size()));
-  if (stream.bad()) fail("the file cannot be read");
-  bytes.resize(static_cast<std::size_t>(stream.gcount()));
-  if (bytes.size() > largest_file) {
-    fail(fmt::format("the file is too large; a case file has at most {} bytes", largest_file));
+/// Without a line to point at, messages about the file as a whole point at its beginning.
+std::string bytes_of_case(const CaseText& text) {
+  try {
+    return bytes_of(text.file, case_file);
+  } catch (const PlainFileError& error) {
+    text.fail({}, error.what());
   }
-  return bytes;
 }
 
 std::string option_of(const Setting& setting) {
@@ -122,7 +106,7 @@ std::vector<std::pair<std::string, double>> read_given(
 
 Case read_case(const std::filesystem::path& file, const std::vector<Setting>& settings) {
   CaseText text{file.string(), {}};
-  std::string hashed = bytes_of(file);
+  std::string hashed = bytes_of_case(text);
   const TomlValue toml = parse_toml(text.file, hashed);
   const CaseTable root(
       text, toml, "the case",
@@ -134,7 +118,6 @@ Case read_case(const std::filesystem::path& file, const std::vector<Setting>& se
   const auto sorted_settings = by_name(text, settings);
   for (const auto& [name, setting] : sorted_settings)
     hashed.append("\n").append(option_of(*setting));
-  result.sha256 = sha256(hashed);
 
   const TomlEntry* title = root.find("title");
   result.title = title == nullptr ? result.name : read_line(text, title->value, "title");
@@ -144,7 +127,12 @@ Case read_case(const std::filesystem::path& file, const std::vector<Setting>& se
         read_number(text, run->value, "run_length_m", {0.0, metres(farthest_mm), false, " m"});
   }
 
-  CaseParts parts = read_parts(root);
+  const CaseMaterials materials = read_materials(root);
+  for (const std::string& digest : materials.curve_digests) {
+    hashed.append("\nbh_curve ").append(digest);
+  }
+  result.sha256 = sha256(hashed);
+  CaseParts parts = read_parts(root, materials.by_name);
   CaseCurrents currents = read_currents(root, parts);
   result.probes = read_probes(root);
   result.loops = read_loops(root, parts);

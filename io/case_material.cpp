@@ -2,27 +2,119 @@
 
 #include <fmt/format.h>
 
-#include <vector>
+#include <algorithm>
+#include <filesystem>
+#include <memory>
+#include <system_error>
 
+#include "io/bh_table.hpp"
 #include "io/nearest_name.hpp"
+#include "io/plain_file.hpp"
+#include "io/sha256.hpp"
 
 namespace barwall::io {
 
 namespace {
 
+namespace fs = std::filesystem;
+
 constexpr Allowed permeability{1.0, 1e9, true, ""};
+constexpr PlainFileKind curve_file{"curve", ".csv", 1'000'000};
+/// Most rows of all B-H tables together.
+constexpr std::size_t most_rows_together = 200'000;
+
+/// Where a curve file lies, links and ".." resolved.
+fs::path resolved(const CaseText& text, const TomlValue& value, const fs::path& folder,
+                  const std::string& name) {
+  std::error_code error;
+  const fs::path home = fs::canonical(folder, error);
+  const fs::path file = error ? fs::path() : fs::weakly_canonical(folder / name, error);
+  if (error) {
+    text.fail(value.place, fmt::format("bh_curve is {}, which cannot be looked up: {}",
+                                       shown(value), error.message()));
+  }
+  if (std::mismatch(home.begin(), home.end(), file.begin(), file.end()).first != home.end()) {
+    text.fail(value.place, fmt::format("bh_curve is {}, which lies outside the case's folder; it "
+                                       "must be a file in that folder or below",
+                                       shown(value)));
+  }
+  return file;
+}
+
+/// Reads the magnetic laws of a case's materials.
+class LawReader {
+public:
+  LawReader(const CaseText& text, std::vector<std::string>& curve_digests)
+      : text_(text), curve_digests_(curve_digests) {}
+
+  solver::Material read(const std::string& name, const TomlEntry& law) {
+    if (law.key == "relative_permeability") {
+      return {name, read_number(text_, law.value, law.key, permeability)};
+    }
+    if (law.key == "bh_curve") return saturable_material(name, curve_in_file(law));
+    const BhTable table = read_bh_points(text_, law.value);
+    count(table, law);
+    return saturable_material(name, curve_through(text_, table, law.key));
+  }
+
+private:
+  void count(const BhTable& table, const TomlEntry& law) {
+    rows_ += table.points.size();
+    if (rows_ > most_rows_together) {
+      text_.fail(law.place,
+                 fmt::format("more than {} rows of B-H tables together", most_rows_together));
+    }
+  }
+
+  std::shared_ptr<const solver::BhCurve> curve_in_file(const TomlEntry& law) {
+    const std::string name = read_line(text_, law.value, law.key);
+    const fs::path parent = fs::path(text_.file).parent_path();
+    const fs::path folder = parent.empty() ? "." : parent;
+    const fs::path file = resolved(text_, law.value, folder, name);
+    const auto [known, is_new] = files_.try_emplace(file);
+    Curve& curve = known->second;
+    if (is_new) {
+      std::string bytes;
+      try {
+        bytes = bytes_of(file, curve_file);
+      } catch (const PlainFileError& error) {
+        text_.fail(law.value.place,
+                   fmt::format("bh_curve is {}: {}", shown(law.value), error.what()));
+      }
+      const CaseText csv{(parent / name).string(), {}};
+      const BhTable table = read_curve_file(csv, bytes);
+      count(table, law);
+      curve = {curve_through(csv, table, "the curve"), sha256(bytes)};
+    }
+    curve_digests_.push_back(curve.digest);
+    return curve.curve;
+  }
+
+  struct Curve {
+    std::shared_ptr<const solver::BhCurve> curve;
+    std::string digest;
+  };
+
+  const CaseText& text_;
+  std::vector<std::string>& curve_digests_;
+  std::map<fs::path, Curve> files_;  ///< those read already
+  std::size_t rows_ = 0;
+};
 
 }  // namespace
 
-Materials read_materials(const CaseTable& root) {
+CaseMaterials read_materials(const CaseTable& root) {
   const CaseText& text = root.text();
-  Materials materials;
+  CaseMaterials result;
+  Materials& materials = result.by_name;
+  LawReader laws(text, result.curve_digests);
+  const std::vector<std::string> law_keys = {"relative_permeability", "bh_points", "bh_curve"};
   for (const char* name : {"air", "copper", "aluminium", "brass", "stainless"}) {
     materials[name] = {name, 1.0};
   }
   const std::size_t built_in = materials.size();
   const TomlEntry* entry = root.find("material");
-  if (entry == nullptr) return materials;
+  if (entry == nullptr) return result;
   const auto* list = std::get_if<TomlTable>(&entry->value.content);
   if (list == nullptr) {
     text.fail(entry->value.place,
@@ -39,17 +131,10 @@ Materials read_materials(const CaseTable& root) {
                                             "permeability of 1; choose another name",
                                             material.key));
     }
-    const std::vector<std::string> keys = {"relative_permeability", "bh_points", "bh_curve"};
-    const CaseTable table(text, material.value, "[material." + material.key + "]", keys);
-    const TomlEntry& law = table.exactly_one(keys);
-    if (law.key != keys.front()) {
-      text.fail(law.place, fmt::format("{}: B-H tables are not supported yet; give "
-                                       "relative_permeability",
-                                       law.key));
-    }
-    materials[material.key] = {material.key, read_number(text, law.value, law.key, permeability)};
+    const CaseTable table(text, material.value, "[material." + material.key + "]", law_keys);
+    materials[material.key] = laws.read(material.key, table.exactly_one(law_keys));
   }
-  return materials;
+  return result;
 }
 
 const solver::Material& read_material(const Materials& materials, const CaseText& text,

@@ -5,7 +5,6 @@
 #include <algorithm>
 #include <cstddef>
 
-#include "io/case_material.hpp"
 #include "io/case_shape.hpp"
 #include "io/nearest_name.hpp"
 
@@ -98,9 +97,8 @@ std::vector<std::string> CaseParts::names(Part::Kind kind) const {
   return list;
 }
 
-CaseParts read_parts(const CaseTable& root) {
+CaseParts read_parts(const CaseTable& root, const Materials& materials) {
   const CaseText& text = root.text();
-  const Materials materials = read_materials(root);
 
   struct Entry {
     const TomlValue* table;

@@ -4,6 +4,7 @@
 #include <string>
 #include <vector>
 
+#include "io/case_material.hpp"
 #include "io/case_text.hpp"
 #include "mesh/section.hpp"
 #include "solver/material.hpp"
@@ -24,9 +25,9 @@ struct CaseParts {
   std::vector<std::string> names(mesh::Part::Kind kind) const;
 };
 
-/// Reads [material.*], [[bar]], [[wall]] and [[opening]].
+/// Reads [[bar]], [[wall]] and [[opening]].
 /// \throws InputError
-CaseParts read_parts(const CaseTable& root);
+CaseParts read_parts(const CaseTable& root, const Materials& materials);
 
 /// The bar, or wall, that a string names.
 /// \throws InputError for an unknown name, with the nearest, and for a part of another kind

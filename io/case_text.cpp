@@ -19,12 +19,6 @@ bool is_control(char c) {
   return (c >= '\0' && c < ' ') || c == '\x7f';
 }
 
-/// Number of characters of a UTF-8 text.
-int characters(std::string_view text) {
-  return static_cast<int>(
-      std::count_if(text.begin(), text.end(), [](char c) { return (c & 0xc0) != 0x80; }));
-}
-
 /// A text in quotes, its control characters replaced, cut to a readable length.
 std::string quoted(std::string_view text) {
   std::string result = "\"";
@@ -86,6 +80,11 @@ std::string shown_number(const TomlValue& value, double number, std::string_view
 
 void CaseText::fail(Place place, std::string_view what) const {
   throw InputError(fmt::format("{}:{}:{}: {}", file, place.line, place.column, what));
+}
+
+int characters(std::string_view text) {
+  return static_cast<int>(
+      std::count_if(text.begin(), text.end(), [](char c) { return (c & 0xc0) != 0x80; }));
 }
 
 std::string shown(const TomlValue& value) {

@@ -42,6 +42,9 @@ inline constexpr Allowed coordinate_mm{-farthest_mm, farthest_mm, true, " mm"};
 /// Widths, diameters and thicknesses [mm].
 inline constexpr Allowed size_mm{smallest_mm, 2.0 * farthest_mm, true, " mm"};
 
+/// Number of characters of a UTF-8 text; columns count them.
+int characters(std::string_view text);
+
 /// A value as the file says it, shortened, for messages.
 std::string shown(const TomlValue& value);
 

@@ -203,7 +203,7 @@ int run_program(int argc, char** argv) {
     return 2;
   }
   return guarded([&] {
-    start_threads(request.threads);
+    set_threads(request.threads);
     if (solve->parsed()) return solve_case(request);
     if (draw->parsed()) return draw_case(request);
     if (!verify_file->empty()) return verify_case(request);

@@ -37,6 +37,8 @@ std::string in_words(const std::string& key) {
       {"flux_linkage_quadrature", "Flux linkage, quadrature"},
       {"inductance", "Inductance"},
       {"inductance_secant", "Inductance, secant"},
+      {"inductance_differential", "Inductance, differential"},
+      {"saturated_share", "share of the area with dB/dH below 10 µ0"},
       {"reactance", "Reactance"},
       {"reactance_mean", "Reactance, mean"},
       {"b_mean", "|B|, mean over the area"},
@@ -255,7 +257,9 @@ std::string case_tables(const Results& results) {
     const mesh::Part& p = results.problem->section.parts[k];
     materials.row({p.name, p.kind == mesh::Part::Kind::bar ? "bar" : "wall",
                    input.materials[k].name,
-                   fmt::format("{:.6g}", input.materials[k].relative_permeability)});
+                   input.materials[k].saturable()
+                       ? std::string("B-H table")
+                       : fmt::format("{:.6g}", input.materials[k].relative_permeability)});
   }
   return table.html() + given.html() + materials.html();
 }

@@ -98,9 +98,16 @@ std::shared_ptr<solver::Problem> problem_without_grid(const Case& input) {
   return problem;
 }
 
-/// The grid of a case, fine out to every probe.
-std::shared_ptr<const mesh::FittedGrid> grid_of(const Case& input, const mesh::Outline& outline,
-                                                const std::vector<solver::Probe>& probes) {
+/// Gives a problem its grid, fine out to every probe, and with saturable steel the coarser one on
+/// which the solve begins.
+void set_grids(solver::Problem& problem, const Case& input,
+               const std::vector<solver::Probe>& probes) {
+  if (saturable(problem) && input.excitation.alternating()) {
+    throw InputError(
+        fmt::format("{}: saturable steel is solved for steady currents only; leave out "
+                    "frequency_hz, or give relative_permeability in place of the B-H table",
+                    input.grid_place));
+  }
   mesh::GridOptions options;
   options.cells_across = input.grid.cells_across;
   options.reach = input.grid.reach;
@@ -110,9 +117,17 @@ std::shared_ptr<const mesh::FittedGrid> grid_of(const Case& input, const mesh::O
     for (mesh::Point point : probe.points) options.fine.include(point);
   }
   try {
-    return std::make_shared<mesh::FittedGrid>(make_grid(input.section, outline, options));
+    problem.grid =
+        std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem.outline, options));
   } catch (const mesh::GridError& error) {
     throw InputError(fmt::format("{}: {}", input.grid_place, error.what()));
+  }
+  if (!saturable(problem)) return;
+  try {
+    options.cells_across = std::max(1, options.cells_across / 2);
+    problem.coarse_grid =
+        std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem.outline, options));
+  } catch (const mesh::GridError&) {  // then the solve begins from zero
   }
 }
 
@@ -147,7 +162,7 @@ std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& out
 
 std::shared_ptr<const solver::Problem> problem_of(const Case& input) {
   auto problem = problem_without_grid(input);
-  problem->grid = grid_of(input, problem->outline, probes_of(input, problem->outline));
+  set_grids(*problem, input, probes_of(input, problem->outline));
   return problem;
 }
 
@@ -158,7 +173,7 @@ Results run_case(Case input, const std::function<void(const std::string&)>& on_s
   watch.begin("grid");
   auto problem = problem_without_grid(results.input);
   const auto probes = probes_of(results.input, problem->outline);
-  problem->grid = grid_of(results.input, problem->outline, probes);
+  set_grids(*problem, results.input, probes);
   results.problem = problem;
   watch.begin("solve");
   auto solution = std::make_shared<solver::Solution>(solve(results.problem));

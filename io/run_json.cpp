@@ -58,6 +58,13 @@ std::string run_json(const Results& results, const std::filesystem::path& folder
       {"seconds", milliseconds(solution.linear_seconds)},
       {"iterations", solution.report.iterations},
       {"residuals", solution.report.residuals}};
+  for (const solver::NewtonReport& newton : solution.newton) {
+    json["newton"].push_back({{"nodes", newton.nodes},
+                              {"converged", newton.converged},
+                              {"iterations", newton.iterations},
+                              {"residuals", newton.residuals},
+                              {"steps", newton.steps}});
+  }
   json["threads"] = omp_get_max_threads();
   json["peak_memory_bytes"] = static_cast<std::int64_t>(peak_memory());
   return json.dump(1, ' ', false, Json::error_handler_t::replace) + "\n";

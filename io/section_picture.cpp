@@ -159,7 +159,9 @@ void draw_key(Canvas& canvas, const Case& input, const solver::Problem& problem,
     canvas.box(swatch, Pen{ink, 1.0, {}});
     const mesh::Part& part = problem.section.parts[p];
     std::string text = part.name + ": " + material;
-    if (input.materials[p].magnetic()) {
+    if (input.materials[p].saturable()) {
+      text += ", B-H table";
+    } else if (input.materials[p].magnetic()) {
       text += fmt::format(", \u00b5r {}", plain_number(input.materials[p].relative_permeability));
     }
     if (part.kind == mesh::Part::Kind::bar) text += ", " + current_text(input, p);

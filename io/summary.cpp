@@ -159,10 +159,14 @@ public:
   }
 
   std::string inductances() const {
-    PlainTable loops("lr");
+    PlainTable loops("lrr");
+    const bool both = !figures_.loops.empty() && figures_.loops.front().figures.size() == 2;
+    if (both) loops.add({"", "secant", "differential"});
     for (std::size_t k = 0; k < std::min(figures_.loops.size(), most_rows); ++k) {
       const solver::Entry& loop = figures_.loops[k];
-      loops.add({name_of(loop.name), quantity_text(loop.figures.front())});
+      std::vector<std::string> cells{name_of(loop.name)};
+      for (const solver::Figure& figure : loop.figures) cells.push_back(quantity_text(figure));
+      loops.add(std::move(cells));
     }
     PlainTable bars("lr");
     std::size_t count = 0;
@@ -181,16 +185,26 @@ public:
   }
 
   std::string walls() const {
-    PlainTable table("lrr");
-    if (!figures_.walls.empty()) table.add({"", "mean", "exceeded on 1 % of the area"});
+    const bool saturable =
+        std::any_of(figures_.walls.begin(), figures_.walls.end(), [](const solver::Entry& wall) {
+          return find_figure(wall.figures, "saturated_share") != nullptr;
+        });
+    PlainTable table("lrrr");
+    if (!figures_.walls.empty()) {
+      table.add({"", "mean", "exceeded on 1 % of the area", saturable ? "saturated" : ""});
+    }
     for (std::size_t k = 0; k < std::min(figures_.walls.size(), most_rows); ++k) {
       const solver::Entry& wall = figures_.walls[k];
-      table.add(
-          {name_of(wall.name), text_of(wall.figures, "b_mean"), text_of(wall.figures, "b_high")});
+      const double share = value_of(wall.figures, "saturated_share");
+      table.add({name_of(wall.name), text_of(wall.figures, "b_mean"),
+                 text_of(wall.figures, "b_high"),
+                 std::isfinite(share) ? fmt::format("{:.0f} %", 100.0 * share) : ""});
     }
-    return section(alternating_ ? "Flux density in the walls, largest in the cycle"
-                                : "Flux density in the walls",
-                   table, figures_.walls.size());
+    std::string text = section(alternating_ ? "Flux density in the walls, largest in the cycle"
+                                            : "Flux density in the walls",
+                               table, figures_.walls.size());
+    if (saturable) text += "  saturated: the share of the area with dB/dH below 10 mu_0\n";
+    return text;
   }
 
   std::string notices() const {

@@ -39,7 +39,7 @@ bool can_run(int count) {
 
 }  // namespace
 
-void start_threads(int count) {
+void set_threads(int count) {
   if (count == 0) count = omp_get_max_threads();
   const int most = std::max(count, cholmod_threads);
   if (count > 1 && !can_run(most - 1)) {
@@ -47,14 +47,8 @@ void start_threads(int count) {
     count = 1;
   }
   omp_set_num_threads(count);
-  if (count == 1) {
-    // Serial even where a library asks for a number of its own.
-    omp_set_max_active_levels(0);
-    return;
-  }
-  // OpenMP keeps the threads of a parallel region for the next one.
-#pragma omp parallel num_threads(most)
-  {}
+  // Serial even where a library asks for a number of its own.
+  if (count == 1) omp_set_max_active_levels(0);
 }
 
 }  // namespace barwall::io

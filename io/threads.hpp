@@ -3,8 +3,8 @@
 namespace barwall::io {
 
 /// Makes all that follows compute with `count` threads, as many as there are processors where it
-/// is 0, and starts them. Where the system does not give as many it computes with one and says so:
-/// OpenMP by itself would end the program.
-void start_threads(int count);
+/// is 0. Where the system does not give as many, it computes with one and says so on the standard
+/// error: OpenMP by itself would end the program.
+void set_threads(int count);
 
 }  // namespace barwall::io

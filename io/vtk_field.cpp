@@ -74,7 +74,7 @@ Places add_mesh(vtkUnstructuredGrid* data, const Results& results, const std::ve
   return used;
 }
 
-/// B as recovered, H = nu B with the reluctivity of the place's own occupant, and A.
+/// B as recovered, H = nu B in the place's own occupant, and A.
 void add_point_data(vtkUnstructuredGrid* data, const Results& results, const Places& used) {
   const solver::Solution& solution = *results.solution;
   const solver::RecoveredField& field = *results.field;
@@ -86,8 +86,8 @@ void add_point_data(vtkUnstructuredGrid* data, const Results& results, const Pla
     for (std::size_t k = 0; k < used.place.size(); ++k) {
       const int place = used.place[k];
       b[pattern].push_back(field.flux_density(place, column));
-      h[pattern].push_back(solution.reluctivity[static_cast<std::size_t>(used.triangle[k])] *
-                           b[pattern].back());
+      h[pattern].push_back(
+          field_strength(*solution.problem, field.region_of_place(place), b[pattern].back()));
       a[pattern].push_back(solution.potential(field.node_of_place(place), column));
     }
   }

@@ -7,7 +7,10 @@
 #include "solver/linear_solve.hpp"
 #include "solver/nested_dissection.hpp"
 
-extern "C" void openblas_set_num_threads(int);
+extern "C" {
+int openblas_get_num_threads();
+void openblas_set_num_threads(int);
+}
 
 namespace barwall::solver {
 namespace {
@@ -17,8 +20,9 @@ class DirectSystem final : public PreparedSystem<double> {
 public:
   explicit DirectSystem(const Stencil<double>& stencil) : stencil_(stencil) {
     // Two threads gain little on the small fronts of a plane grid, and one thread makes the same
-    // bytes from the same case whatever --threads says.
-    openblas_set_num_threads(1);
+    // bytes from the same case whatever --threads says. Setting the number, even to what it is,
+    // starts OpenBLAS's threads anew where they were ended, and each takes 128 MiB.
+    if (openblas_get_num_threads() != 1) openblas_set_num_threads(1);
     cholmod_start(&common_);
     common_.supernodal = CHOLMOD_SUPERNODAL;
     common_.final_ll = 1;

@@ -20,6 +20,11 @@ Pulsation field_energy(const Solution& solution) {
   });
 }
 
+SaturableEnergy saturable_energy(const Solution& solution) {
+  const double energy = NonlinearOperator(*solution.problem).energy(solution.potential.col(0));
+  return {energy, 2.0 * field_energy(solution).mean - energy};
+}
+
 TerminalEnergy terminal_energy(const PartIntegrals& integrals) {
   const Solution& solution = integrals.solution();
   const mesh::FittedGrid& grid = solution.grid();

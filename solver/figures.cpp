@@ -1,5 +1,7 @@
 #include "solver/figures.hpp"
 
+#include <fmt/format.h>
+
 #include <algorithm>
 #include <cmath>
 #include <map>
@@ -51,6 +53,7 @@ public:
         field_(field),
         bands_(bands),
         alternating_(problem_.excitation.alternating()),
+        saturable_(saturable(problem_)),
         visible_(visible_parts(problem_.outline)),
         levels_(field_levels(solution_)) {}
 
@@ -70,6 +73,7 @@ public:
                "seldom do, which makes forces between them and field nearby indicative",
            true});
     }
+    for (int part : visible_) add_table_notice(figures, part);
     for (std::size_t b = 0; b < bands_.bodies().size(); ++b) {
       const auto& members = bands_.bodies()[b];
       if (members.size() < 2) continue;
@@ -84,8 +88,14 @@ public:
 
   void loops(Figures& figures) const {
     for (const Loop& loop : problem_.loops) {
-      figures.loops.push_back(
-          {loop.name, {}, {{"inductance", loop_inductance(integrals_, loop), "H/m"}}, {}, 0.0});
+      const double inductance = loop_inductance(integrals_, loop);
+      Entry entry{loop.name, {}, {{"inductance", inductance, "H/m"}}, {}, 0.0};
+      if (saturable_) {
+        entry.figures = {
+            {"inductance_secant", inductance, "H/m"},
+            {"inductance_differential", differential_inductance(integrals_, loop), "H/m"}};
+      }
+      figures.loops.push_back(std::move(entry));
     }
   }
 
@@ -107,7 +117,10 @@ public:
     bool net = false;
     for (const CurrentPattern& pattern : solution_.patterns) net = net || pattern.net != 0.0;
     const Pulsation energy = field_energy(solution_);
-    if (!alternating_) {
+    if (saturable_) {
+      const SaturableEnergy both = saturable_energy(solution_);
+      figures.energy = {{"energy", both.energy, "J/m"}, {"coenergy", both.coenergy, "J/m"}};
+    } else if (!alternating_) {
       figures.energy = {{"energy", energy.mean, "J/m"}};
     } else {
       figures.energy = {{"energy_mean", energy.mean, "J/m"},
@@ -151,6 +164,17 @@ private:
   }
   bool magnetic(int part) const {
     return problem_.materials[static_cast<std::size_t>(part)].magnetic();
+  }
+  /// Says how much of a part lies beyond its material's B-H table.
+  void add_table_notice(Figures& figures, int part) const {
+    const double share = levels_[static_cast<std::size_t>(part)].share_beyond_table;
+    if (share == 0.0) return;
+    const BhCurve& curve = *problem_.materials[static_cast<std::size_t>(part)].curve;
+    const std::string text = fmt::format(
+        "\"{}\": {:.3g} % of its area lies above {:.4g} T, where its B-H table ends; there B is "
+        "taken to rise as in vacuum",
+        name_of(part), 100.0 * share, curve.table_end());
+    figures.notices.push_back({"beyond the B-H table", text, false});
   }
   static std::string joined(const std::vector<std::string>& names) {
     std::string result;
@@ -206,6 +230,9 @@ private:
       }
     } else {
       append(entry.figures, {{"b_mean", level.mean, "T"}, {"b_high", level.high, "T"}});
+    }
+    if (problem_.materials[static_cast<std::size_t>(part)].saturable()) {
+      append(entry.figures, {{"saturated_share", level.saturated_share, "1"}});
     }
     return entry;
   }
@@ -273,6 +300,7 @@ private:
   const RecoveredField& field_;
   const StressBands& bands_;
   bool alternating_;
+  bool saturable_;
   std::vector<int> visible_;
   std::vector<FieldLevel> levels_;  ///< per part
 };

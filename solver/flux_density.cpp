@@ -28,6 +28,128 @@ void add_once(std::vector<int>& list, int value) {
   if (std::find(list.begin(), list.end(), value) == list.end()) list.push_back(value);
 }
 
+/// The nodes round a place: half their extents along the axes [m], and whether fitting moved one.
+struct Patch {
+  mesh::Point origin;
+  double sx = 0.0;
+  double sy = 0.0;
+  bool uneven = false;
+};
+
+/// Of A at a place: gradient [T], second derivatives [T/m].
+struct Derivatives {
+  mesh::Point gradient;
+  double xx = 0.0;
+  double xy = 0.0;
+  double yy = 0.0;
+};
+
+/// Coefficients of the combination of terms that fits values at nodes best, nearer ones weighing
+/// more.
+/// \param value_at of a node
+/// \param row_at the terms at an offset d from the patch's origin
+template <int terms, class Value, class Row>
+Eigen::Matrix<double, terms, 1> least_squares(const Patch& patch, const mesh::FittedGrid& grid,
+                                              const std::vector<int>& nodes, Value value_at,
+                                              Row row_at) {
+  using Column = Eigen::Matrix<double, terms, 1>;
+  using Square = Eigen::Matrix<double, terms, terms>;
+  Square normal = Square::Zero();
+  Column right = Column::Zero();
+  for (int n : nodes) {
+    const mesh::Point d = grid.nodes[static_cast<std::size_t>(n)] - patch.origin;
+    const double u = d.x / patch.sx;
+    const double v = d.y / patch.sy;
+    const double near = 1.0 / (0.1 + u * u + v * v);
+    const Column row = row_at(d);
+    const Column weighted = (patch.uneven ? near : near * near) * row;
+    normal.noalias() += weighted * row.transpose();
+    right += value_at(n, d) * weighted;
+  }
+  // In the narrow ends of a part a patch may not tell all terms apart: least-norm then.
+  const Eigen::LDLT<Square> direct(normal);
+  const auto pivots = direct.vectorD().cwiseAbs();
+  if (pivots.minCoeff() > 1e-10 * pivots.maxCoeff()) return direct.solve(right);
+  return normal.completeOrthogonalDecomposition().solve(right);
+}
+
+/// A = a0 + gx x + gy y + p (x2 - y2)/2 + q xy + c Re z3 + d Im z3 - mu J (x2 + y2)/4, each term
+/// scaled to the patch, which may be long and narrow: the gradient and the second derivatives.
+/// \param value A at a node less that at the patch's own
+/// \param source mu J [T/m]
+template <class Value>
+Derivatives harmonic_fit(const Patch& patch, const mesh::FittedGrid& grid,
+                         const std::vector<int>& nodes, Value value, double source) {
+  const double sx = patch.sx;
+  const double sy = patch.sy;
+  const double s = std::max(sx, sy);
+  const double narrow = std::min(sx, sy) / s;
+  const double re_scale = sx > sy ? 1.0 : narrow;
+  const double im_scale = sx > sy ? narrow : 1.0;
+  const auto a = least_squares<7>(
+      patch, grid, nodes,
+      [&](int n, mesh::Point d) { return value(n) + 0.25 * source * dot(d, d); },
+      [&](mesh::Point d) {
+        const double x = d.x / s;
+        const double y = d.y / s;
+        Eigen::Matrix<double, 7, 1> row;
+        row << 1.0, d.x / sx, d.y / sy, 0.5 * (x * x - y * y), (d.x / sx) * (d.y / sy),
+            (x * x * x - 3.0 * x * y * y) / re_scale, (3.0 * x * x * y - y * y * y) / im_scale;
+        return row;
+      });
+  return {{a[1] / sx, a[2] / sy},
+          a[3] / (s * s) - 0.5 * source,
+          a[4] / (sx * sy),
+          -a[3] / (s * s) - 0.5 * source};
+}
+
+/// The same in saturable steel. There A satisfies nu A_ss + nu_d A_nn = 0 at every place, s along B
+/// and n across it, nu_d = dH/dB: harmonic polynomials of s and n sqrt(nu / nu_d).
+/// \param along unit vector of B near the place
+/// \param stretch sqrt(nu / nu_d) there
+template <class Value>
+Derivatives saturable_fit(const Patch& patch, const mesh::FittedGrid& grid,
+                          const std::vector<int>& nodes, Value value, mesh::Point along,
+                          double stretch) {
+  double scale_s = 0.0;
+  double scale_n = 0.0;
+  const auto turned = [&](mesh::Point d) {
+    return mesh::Point{dot(d, along), stretch * cross(along, d)};
+  };
+  for (int n : nodes) {
+    const mesh::Point q = turned(grid.nodes[static_cast<std::size_t>(n)] - patch.origin);
+    scale_s = std::max(scale_s, std::abs(q.x));
+    scale_n = std::max(scale_n, std::abs(q.y));
+  }
+  const double scale = std::max(scale_s, scale_n);
+  const double narrow = std::min(scale_s, scale_n) / scale;
+  const double re_scale = scale_s > scale_n ? 1.0 : narrow;
+  const double im_scale = scale_s > scale_n ? narrow : 1.0;
+  const auto a = least_squares<7>(
+      patch, grid, nodes, [&](int n, mesh::Point) { return value(n); },
+      [&](mesh::Point d) {
+        const mesh::Point q = turned(d);
+        const double x = q.x / scale;
+        const double y = q.y / scale;
+        Eigen::Matrix<double, 7, 1> row;
+        row << 1.0, q.x / scale_s, q.y / scale_n, 0.5 * (x * x - y * y),
+            (q.x / scale_s) * (q.y / scale_n), (x * x * x - 3.0 * x * y * y) / re_scale,
+            (3.0 * x * x * y - y * y * y) / im_scale;
+        return row;
+      });
+  // Back from (s, stretched n) to (x, y).
+  const double g_s = a[1] / scale_s;
+  const double g_n = stretch * a[2] / scale_n;
+  const double a_ss = a[3] / (scale * scale);
+  const double a_sn = stretch * a[4] / (scale_s * scale_n);
+  const double a_nn = -stretch * stretch * a[3] / (scale * scale);
+  const mesh::Point t = along;
+  const mesh::Point n = quarter_turn(along);
+  return {g_s * t + g_n * n, a_ss * t.x * t.x + 2.0 * a_sn * t.x * n.x + a_nn * n.x * n.x,
+          a_ss * t.x * t.y + a_sn * (t.x * n.y + t.y * n.x) + a_nn * n.x * n.y,
+          a_ss * t.y * t.y + 2.0 * a_sn * t.y * n.y + a_nn * n.y * n.y};
+}
+
 }  // namespace
 
 mesh::Point cell_flux_density(const mesh::FittedGrid& grid, int triangle,
@@ -47,6 +169,7 @@ RecoveredField::RecoveredField(const Solution& solution) : solution_(&solution) 
   number_places();
   field_.assign(static_cast<std::size_t>(solution.pattern_count()),
                 std::vector<Local>(node_of_place_.size()));
+  const mesh::FittedGrid& grid = solution.grid();
   // mu J of each occupant, a row of load patterns: minus div grad A there.
   const auto permeability = permeability_by_region(*solution.problem);
   std::vector<std::vector<double>> source(permeability.size());
@@ -61,7 +184,10 @@ RecoveredField::RecoveredField(const Solution& solution) : solution_(&solution) 
     std::vector<int> nodes;
 #pragma omp for schedule(static)
     for (int place = 0; place < place_count(); ++place) {
-      fit_place(place, nodes, source[static_cast<std::size_t>(region_of_place(place))]);
+      const int part = grid.occupants[static_cast<std::size_t>(region_of_place(place))].part;
+      fit_place(place, nodes, source[static_cast<std::size_t>(region_of_place(place))],
+                part < 0 ? nullptr
+                         : solution.problem->materials[static_cast<std::size_t>(part)].curve.get());
     }
   }
 }
@@ -143,74 +269,56 @@ void RecoveredField::gather_layers(int node, int region, int layers,
 }
 
 void RecoveredField::fit_place(int place, std::vector<int>& nodes,
-                               const std::vector<double>& source) {
-  constexpr int terms = 7;
-  constexpr std::size_t enough = 20;  // well more nodes than terms
-  using Row = Eigen::Matrix<double, terms, 1>;
+                               const std::vector<double>& source, const BhCurve* curve) {
   const mesh::FittedGrid& grid = solution_->grid();
   const int node = node_of_place(place);
   const int region = region_of_place(place);
-  const mesh::Point origin = grid.nodes[static_cast<std::size_t>(node)];
+  constexpr std::size_t enough = 20;  // well more nodes than terms
   if (!gather_window(node, region, nodes)) {
     int layers = 1;
     do {
       gather_layers(node, region, ++layers, nodes);
     } while (nodes.size() < enough && layers < 4);
   }
-  // Beside curved and inclined outlines A carries a ripple from node to node: there every node of
-  // the patch counts more alike.
-  const bool moved = std::any_of(nodes.begin(), nodes.end(), [&](int n) { return grid.moved(n); });
-  double sx = 0.0;
-  double sy = 0.0;
+  Patch patch;
+  patch.origin = grid.nodes[static_cast<std::size_t>(node)];
   for (int n : nodes) {
-    const mesh::Point d = grid.nodes[static_cast<std::size_t>(n)] - origin;
-    sx = std::max(sx, std::abs(d.x));
-    sy = std::max(sy, std::abs(d.y));
+    const mesh::Point d = grid.nodes[static_cast<std::size_t>(n)] - patch.origin;
+    patch.sx = std::max(patch.sx, std::abs(d.x));
+    patch.sy = std::max(patch.sy, std::abs(d.y));
+    // Beside curved and inclined outlines A carries a ripple from node to node: there every node
+    // of the patch counts more alike.
+    patch.uneven = patch.uneven || grid.moved(n);
   }
-  const double s = std::max(sx, sy);
-  // A = a0 + gx x + gy y + p (x2 - y2)/2 + q xy + c Re z3 + d Im z3 - mu J (x2 + y2)/4, each term
-  // scaled to the patch, which may be long and narrow.
-  const double narrow = std::min(sx, sy) / s;
-  const double re_scale = sx > sy ? 1.0 : narrow;
-  const double im_scale = sx > sy ? narrow : 1.0;
-  const auto patterns = static_cast<std::size_t>(solution_->potential.cols());
-  Eigen::Matrix<double, terms, terms> normal = Eigen::Matrix<double, terms, terms>::Zero();
-  std::array<Row, 2> right{Row::Zero(), Row::Zero()};
-  for (int n : nodes) {
-    const mesh::Point d = grid.nodes[static_cast<std::size_t>(n)] - origin;
-    const double u = d.x / sx;
-    const double v = d.y / sy;
-    const double x = d.x / s;
-    const double y = d.y / s;
-    const double near = 1.0 / (0.1 + u * u + v * v);
-    const double weight = moved ? near : near * near;
-    Row row;
-    row << 1.0, u, v, 0.5 * (x * x - y * y), u * v, (x * x * x - 3.0 * x * y * y) / re_scale,
-        (3.0 * x * x * y - y * y * y) / im_scale;
-    const Row weighted = weight * row;
-    normal.noalias() += weighted * row.transpose();
-    for (std::size_t c = 0; c < patterns; ++c) {
-      const auto column = static_cast<Eigen::Index>(c);
-      const double value = solution_->potential(n, column) - solution_->potential(node, column) +
-                           0.25 * source[c] * dot(d, d);
-      right[c] += value * weighted;
+  for (int c = 0; c < solution_->pattern_count(); ++c) {
+    const auto value = [&](int n) {
+      return solution_->potential(n, c) - solution_->potential(node, c);
+    };
+    Derivatives a;
+    if (curve == nullptr) {
+      a = harmonic_fit(patch, grid, nodes, value, source[static_cast<std::size_t>(c)]);
+    } else {
+      // The direction and the size of B that the fit needs: of the cells round the place first,
+      // then of the fit itself.
+      double area = 0.0;
+      each_triangle_at(grid, node, [&](int t, const std::array<int, 3>&) {
+        if (grid.region[static_cast<std::size_t>(t)] != region) return;
+        const double share = triangle_area(grid.corners(t));
+        const mesh::Point b = cell_flux_density(grid, t, solution_->potential.col(c));
+        a.gradient += share * mesh::Point{-b.y, b.x};
+        area += share;
+      });
+      a.gradient = (1.0 / area) * a.gradient;
+      for (int pass = 0; pass < 2; ++pass) {
+        const mesh::Point b{a.gradient.y, -a.gradient.x};
+        const double size = norm(b);
+        const mesh::Point along = size > 0.0 ? (1.0 / size) * b : mesh::Point{1.0, 0.0};
+        const double stretch = std::sqrt(curve->reluctivity(size) / curve->slope(size));
+        a = saturable_fit(patch, grid, nodes, value, along, stretch);
+      }
     }
-  }
-  // In the narrow ends of a part a patch may not tell all terms apart: least-norm then.
-  const Eigen::LDLT<Eigen::Matrix<double, terms, terms>> direct(normal);
-  const auto pivots = direct.vectorD().cwiseAbs();
-  const bool regular = pivots.minCoeff() > 1e-10 * pivots.maxCoeff();
-  for (std::size_t c = 0; c < patterns; ++c) {
-    const Row a = regular ? Row(direct.solve(right[c]))
-                          : Row(normal.completeOrthogonalDecomposition().solve(right[c]));
-    const double half_source = 0.5 * source[c];
-    const double a_xx = a[3] / (s * s) - half_source;
-    const double a_yy = -a[3] / (s * s) - half_source;
-    const double a_xy = a[4] / (sx * sy);
-    Local& local = field_[c][static_cast<std::size_t>(place)];
-    local.b = {a[2] / sy, -a[1] / sx};
-    local.b_dx = {a_xy, -a_xx};
-    local.b_dy = {a_yy, -a_xy};
+    field_[static_cast<std::size_t>(c)][static_cast<std::size_t>(place)] = {
+        {a.gradient.y, -a.gradient.x}, {a.xy, -a.xx}, {a.yy, -a.xy}};
   }
 }
 

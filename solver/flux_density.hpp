@@ -19,7 +19,9 @@ mesh::Point cell_flux_density(const mesh::FittedGrid& grid, int triangle,
 /// At each node a polynomial is fitted to A over the nodes of the same occupant within two cells
 /// (recovery by local least squares: Z. Zhang and A. Naga, SIAM J. Sci. Comput. 26, 2005), here
 /// one that satisfies -div grad A = mu J exactly, as A does where the permeability is constant:
-/// the source's own quadratic and the harmonic polynomials up to the third degree.
+/// the source's own quadratic and the harmonic polynomials up to the third degree. In
+/// saturable steel they are harmonic in coordinates along and across B that are stretched as the
+/// steel differs in reluctivity along and across it.
 class RecoveredField {
 public:
   explicit RecoveredField(const Solution& solution);
@@ -52,7 +54,8 @@ private:
     mesh::Point b_dy;  ///< dB/dy [T/m]
   };
   void number_places();
-  void fit_place(int place, std::vector<int>& nodes, const std::vector<double>& source);
+  void fit_place(int place, std::vector<int>& nodes, const std::vector<double>& source,
+                 const BhCurve* curve);
   bool gather_window(int node, int region, std::vector<int>& nodes) const;
   void gather_layers(int node, int region, int layers, std::vector<int>& nodes) const;
 

@@ -23,20 +23,33 @@ std::vector<Share> shares(const PartIntegrals& integrals, const Loop& loop) {
   return result;
 }
 
-}  // namespace
-
-double loop_inductance(const PartIntegrals& integrals, const Loop& loop) {
+/// The loop's own flux linkage per ampere, from the mean of A over a part (first) for 1 A in the
+/// bar of a unit field (second).
+template <class MeanOfUnit>
+double linkage_of_loop(const PartIntegrals& integrals, const Loop& loop, MeanOfUnit mean) {
   const auto all = shares(integrals, loop);
   const auto& units = integrals.solution().unit_bars;
   double linkage = 0.0;
   for (const Share& source : all) {
     const auto unit = std::find(units.begin(), units.end(), source.bar) - units.begin();
     for (const Share& seen : all) {
-      linkage += source.current * seen.current *
-                 integrals.mean_unit_potential(seen.bar, static_cast<int>(unit));
+      linkage += source.current * seen.current * mean(seen.bar, static_cast<int>(unit));
     }
   }
   return linkage;
+}
+
+}  // namespace
+
+double loop_inductance(const PartIntegrals& integrals, const Loop& loop) {
+  return linkage_of_loop(integrals, loop, [&](int part, int unit) {
+    return integrals.mean_unit_potential(part, unit);
+  });
+}
+
+double differential_inductance(const PartIntegrals& integrals, const Loop& loop) {
+  return linkage_of_loop(
+      integrals, loop, [&](int part, int unit) { return integrals.mean_unit_change(part, unit); });
 }
 
 }  // namespace barwall::solver

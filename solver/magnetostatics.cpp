@@ -69,6 +69,61 @@ void set_reference(const Problem& problem, std::span<const CurrentPattern> patte
   }
 }
 
+/// Boundary values of a pattern, zero at all other nodes.
+Eigen::VectorXd boundary_values(const mesh::FittedGrid& grid, const CurrentPattern& pattern,
+                                const std::function<double(mesh::Point)>& given) {
+  Eigen::VectorXd values = Eigen::VectorXd::Zero(grid.node_count());
+  if (pattern.net == 0.0 && !given) return values;
+  for (int n = 0; n < grid.node_count(); ++n) {
+    if (!grid.on_boundary(n)) continue;
+    const mesh::Point at = grid.nodes[static_cast<std::size_t>(n)];
+    values[n] = given ? given(at) : pattern.boundary_value(at);
+  }
+  return values;
+}
+
+Eigen::VectorXd current_of(const Problem& problem, const CurrentPattern& pattern) {
+  return assemble_current(*problem.grid, density_by_region(problem, pattern.part_current));
+}
+
+/// A of one grid at the inner nodes of another.
+void interpolate(const Problem& from, const Eigen::VectorXd& potential,
+                 const mesh::FittedGrid& grid, Eigen::VectorXd& result) {
+#pragma omp parallel for schedule(static)
+  for (int n = 0; n < grid.node_count(); ++n) {
+    if (grid.on_boundary(n)) continue;
+    const mesh::Location at =
+        locate(*from.grid, from.section, grid.nodes[static_cast<std::size_t>(n)]);
+    const auto corner = from.grid->triangle(at.triangle);
+    result[n] = 0.0;
+    for (std::size_t c = 0; c < 3; ++c) result[n] += at.weight[c] * potential[corner[c]];
+  }
+}
+
+/// The potential of saturable steel, nested: from the coarse grid's when there is one.
+Eigen::VectorXd nonlinear_potential(const Problem& problem, const CurrentPattern& pattern,
+                                    const SolveOptions& options,
+                                    std::vector<NewtonReport>& reports) {
+  const mesh::FittedGrid& grid = *problem.grid;
+  Eigen::VectorXd potential = boundary_values(grid, pattern, options.boundary);
+  if (options.start.size() > 0) {
+    for (int n = 0; n < grid.node_count(); ++n) {
+      if (!grid.on_boundary(n)) potential[n] = options.start[n];
+    }
+  } else if (problem.coarse_grid) {
+    Problem coarse = problem;
+    coarse.grid = problem.coarse_grid;
+    coarse.coarse_grid = nullptr;
+    // A start need not be closer to its grid's solution than that is to the fine one.
+    SolveOptions rough = options;
+    rough.newton_tolerance = 1e-4;
+    interpolate(coarse, nonlinear_potential(coarse, pattern, rough, reports), grid, potential);
+  }
+  reports.push_back(newton_solve(NonlinearOperator(problem), grid, current_of(problem, pattern),
+                                 potential, options.newton_tolerance));
+  return potential;
+}
+
 }  // namespace
 
 SolveReport solve_nodes(const mesh::FittedGrid& grid, const std::vector<double>& reluctivity,
@@ -78,18 +133,29 @@ SolveReport solve_nodes(const mesh::FittedGrid& grid, const std::vector<double>&
 }
 
 Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& options) {
-  if (options.boundary && problem->excitation.alternating()) {
-    throw std::invalid_argument("boundary values are given for steady currents alone");
+  const bool nonlinear = saturable(*problem);
+  if (problem->excitation.alternating() && (options.boundary || nonlinear)) {
+    throw std::invalid_argument(
+        "boundary values are given, and saturable steel is solved, for steady currents alone");
   }
   Solution solution;
   const mesh::FittedGrid& grid = *problem->grid;
   solution.patterns = load_patterns(*problem);
   solution.unit_bars = bars_in_loops(*problem);
-  solution.reluctivity = by_triangle(grid, reluctivity_by_region(*problem));
+  const auto start = std::chrono::steady_clock::now();
+  if (nonlinear) {
+    solution.potential =
+        nonlinear_potential(*problem, solution.patterns[0], options, solution.newton);
+    solution.reluctivity = NonlinearOperator(*problem).reluctivity(solution.potential.col(0));
+  } else {
+    solution.reluctivity = by_triangle(grid, reluctivity_by_region(*problem));
+  }
 
   // Loads first, then 1 A in each bar of a loop: right-hand sides of one preparation. The unit
   // fields refer to the section's centre, so that any loop's boundary value is exactly 0.
-  std::vector<CurrentPattern> all = solution.patterns;
+  std::vector<CurrentPattern> all;
+  if (!nonlinear) all = solution.patterns;
+  const auto loads = static_cast<Eigen::Index>(all.size());
   const mesh::Point centre = bounds(problem->section).centre();
   for (int bar : solution.unit_bars) {
     std::vector<double> unit(problem->section.parts.size(), 0.0);
@@ -98,29 +164,28 @@ Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& optio
   }
   const auto columns = static_cast<Eigen::Index>(all.size());
   Eigen::MatrixXd rhs(grid.node_count(), columns);
-  Eigen::MatrixXd x = Eigen::MatrixXd::Zero(grid.node_count(), columns);
+  Eigen::MatrixXd x(grid.node_count(), columns);
   for (Eigen::Index c = 0; c < columns; ++c) {
     const CurrentPattern& pattern = all[static_cast<std::size_t>(c)];
-    rhs.col(c) = assemble_current(grid, density_by_region(*problem, pattern.part_current));
-    const bool given = options.boundary && c == 0;
-    if (pattern.net == 0.0 && !given) continue;
-    for (int n = 0; n < grid.node_count(); ++n) {
-      if (grid.on_boundary(n)) {
-        const mesh::Point at = grid.nodes[static_cast<std::size_t>(n)];
-        x(n, c) = given ? options.boundary(at) : pattern.boundary_value(at);
-      }
-    }
+    rhs.col(c) = current_of(*problem, pattern);
+    x.col(c) = boundary_values(grid, pattern, c < loads ? options.boundary : nullptr);
   }
-  const auto start = std::chrono::steady_clock::now();
-  solution.report = solve_nodes(grid, solution.reluctivity, rhs, x, options.tolerance);
+  if (nonlinear && columns > 0) {
+    solution.unit_change = x;
+    prepare(NonlinearOperator(*problem).tangent(solution.potential.col(0)))
+        ->solve(rhs, solution.unit_change, options.tolerance);
+  }
+  if (columns > 0) {
+    solution.report = solve_nodes(grid, solution.reluctivity, rhs, x, options.tolerance);
+  }
   solution.linear_seconds =
       std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
-  const Eigen::Index kept = options.boundary ? 1 : 0;
-  set_reference(*problem, std::span(all).subspan(static_cast<std::size_t>(kept)),
-                x.rightCols(columns - kept));
-  const auto loads = static_cast<Eigen::Index>(solution.patterns.size());
-  solution.potential = x.leftCols(loads);
+  if (!nonlinear) solution.potential = x.leftCols(loads);
   solution.unit_potential = x.rightCols(columns - loads);
+  if (!options.boundary) set_reference(*problem, solution.patterns, solution.potential);
+  const auto units = std::span(all).subspan(static_cast<std::size_t>(loads));
+  set_reference(*problem, units, solution.unit_potential);
+  if (nonlinear) set_reference(*problem, units, solution.unit_change);
   solution.problem = std::move(problem);
   return solution;
 }

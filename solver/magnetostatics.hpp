@@ -6,6 +6,7 @@
 #include <vector>
 
 #include "solver/linear_solve.hpp"
+#include "solver/newton.hpp"
 #include "solver/open_boundary.hpp"
 #include "solver/problem.hpp"
 
@@ -22,9 +23,13 @@ struct Solution {
   /// each [Wb/(m A)].
   std::vector<int> unit_bars;
   Eigen::MatrixXd unit_potential;
-  std::vector<double> reluctivity;  ///< per triangle [m/H]
-  SolveReport report;
-  double linear_seconds = 0.0;  ///< preparing and solving
+  /// With saturable steel, the change of the field with the current in each of these bars at the
+  /// operating point, a column each [Wb/(m A)]; else no columns.
+  Eigen::MatrixXd unit_change;
+  std::vector<double> reluctivity;  ///< H / B per triangle, of the operating point [m/H]
+  SolveReport report;  ///< of the linear solve; of the unit fields with saturable steel
+  std::vector<NewtonReport> newton;  ///< with saturable steel, coarse grid to fine; else empty
+  double linear_seconds = 0.0;       ///< preparing and solving
 
   const mesh::FittedGrid& grid() const { return *problem->grid; }
   int pattern_count() const { return static_cast<int>(patterns.size()); }
@@ -35,7 +40,11 @@ struct SolveOptions {
   /// A at the nodes of the outer boundary [Wb/m] in place of the open boundary's values, for steady
   /// currents alone; A then keeps the constant that these values give it. Fields of 1 A in a bar
   /// have the open boundary always.
-  std::function<double(mesh::Point)> boundary;
+  std::function<double(mesh::Point)> boundary = nullptr;
+  /// On the residual of a nonlinear solve, relative to that of no field.
+  double newton_tolerance = 1e-11;
+  /// Where a nonlinear solve starts [Wb/m], all nodes; empty: from the coarse grid, or from zero.
+  Eigen::VectorXd start = {};
 };
 
 /// The equations of the scheme, as they are: at every node within the boundary the flux of
@@ -49,8 +58,11 @@ SolveReport solve_nodes(const mesh::FittedGrid& grid, const std::vector<double>&
                         const Eigen::MatrixXd& current, Eigen::MatrixXd& potential,
                         double tolerance = 1e-12);
 
-/// \throws SolveError
-/// \throws std::invalid_argument when boundary values are given for currents that alternate
+/// With saturable steel the currents must be steady; an alternating cycle is solved instant by
+/// instant. Unit fields are then those at the permeability of the operating point.
+/// \throws SolveError, NewtonError
+/// \throws std::invalid_argument when currents alternate and boundary values are given or steel is
+///         saturable
 Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& options = {});
 
 }  // namespace barwall::solver

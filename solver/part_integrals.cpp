@@ -19,6 +19,7 @@ PartIntegrals::PartIntegrals(const Solution& solution) : solution_(&solution) {
   const auto count = static_cast<Eigen::Index>(occupants.size());
   potential_ = Eigen::MatrixXd::Zero(count, solution.potential.cols());
   unit_potential_ = Eigen::MatrixXd::Zero(count, solution.unit_potential.cols());
+  unit_change_ = Eigen::MatrixXd::Zero(count, solution.unit_change.cols());
   flux_.assign(solution.patterns.size(), std::vector<mesh::Point>(occupants.size()));
   for (int t = 0; t < grid.triangle_count(); ++t) {
     const auto region = grid.region[static_cast<std::size_t>(t)];
@@ -30,6 +31,9 @@ PartIntegrals::PartIntegrals(const Solution& solution) : solution_(&solution) {
     for (std::size_t k = 0; k < 3; ++k) {
       potential_.row(region) += share[k] * solution.potential.row(n[k]);
       unit_potential_.row(region) += share[k] * solution.unit_potential.row(n[k]);
+      if (unit_change_.cols() > 0) {
+        unit_change_.row(region) += share[k] * solution.unit_change.row(n[k]);
+      }
     }
     for (std::size_t c = 0; c < flux_.size(); ++c) {
       flux_[c][static_cast<std::size_t>(region)] +=
@@ -44,20 +48,24 @@ double PartIntegrals::area(int part) const {
   return sum;
 }
 
-double PartIntegrals::mean_potential(int part, int pattern) const {
+double PartIntegrals::mean(const Eigen::MatrixXd& integral, int part, int column) const {
   double sum = 0.0;
   for (std::size_t r : regions_[static_cast<std::size_t>(part)]) {
-    sum += potential_(static_cast<Eigen::Index>(r), pattern);
+    sum += integral(static_cast<Eigen::Index>(r), column);
   }
   return sum / area(part);
 }
 
+double PartIntegrals::mean_potential(int part, int pattern) const {
+  return mean(potential_, part, pattern);
+}
+
 double PartIntegrals::mean_unit_potential(int part, int unit) const {
-  double sum = 0.0;
-  for (std::size_t r : regions_[static_cast<std::size_t>(part)]) {
-    sum += unit_potential_(static_cast<Eigen::Index>(r), unit);
-  }
-  return sum / area(part);
+  return mean(unit_potential_, part, unit);
+}
+
+double PartIntegrals::mean_unit_change(int part, int unit) const {
+  return mean(unit_change_, part, unit);
 }
 
 mesh::Point PartIntegrals::lorentz_force(int part, int piece, int current, int field) const {

@@ -1,8 +1,15 @@
 #include "solver/problem.hpp"
 
+#include <algorithm>
+
 #include "solver/constants.hpp"
 
 namespace barwall::solver {
+
+bool saturable(const Problem& problem) {
+  return std::any_of(problem.materials.begin(), problem.materials.end(),
+                     [](const Material& material) { return material.saturable(); });
+}
 
 std::vector<double> permeability_by_region(const Problem& problem) {
   std::vector<double> result;
@@ -19,6 +26,15 @@ std::vector<double> reluctivity_by_region(const Problem& problem) {
   std::vector<double> result = permeability_by_region(problem);
   for (double& value : result) value = nu_0 / value;
   return result;
+}
+
+mesh::Point field_strength(const Problem& problem, int region, mesh::Point flux_density) {
+  const int part = problem.grid->occupants[static_cast<std::size_t>(region)].part;
+  if (part < 0) return nu_0 * flux_density;
+  const Material& material = problem.materials[static_cast<std::size_t>(part)];
+  const double nu = material.saturable() ? material.curve->reluctivity(norm(flux_density))
+                                         : nu_0 / material.relative_permeability;
+  return nu * flux_density;
 }
 
 std::vector<double> area_by_region(const mesh::FittedGrid& grid) {

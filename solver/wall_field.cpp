@@ -2,6 +2,7 @@
 
 #include <algorithm>
 
+#include "solver/constants.hpp"
 #include "solver/cycle.hpp"
 #include "solver/flux_density.hpp"
 
@@ -14,14 +15,23 @@ struct Sample {
   double area = 0.0;
 };
 
-FieldLevel level_of(std::vector<Sample> samples) {
+FieldLevel level_of(std::vector<Sample> samples, const BhCurve* curve) {
   FieldLevel result;
   double area = 0.0;
   for (const Sample& sample : samples) {
     area += sample.area;
     result.mean += sample.level * sample.area;
+    if (curve == nullptr) continue;
+    if (curve->differential_permeability(sample.level) < saturated_below * mu_0) {
+      result.saturated_share += sample.area;
+    }
+    if (sample.level > curve->table_end()) result.share_beyond_table += sample.area;
   }
-  if (area > 0.0) result.mean /= area;
+  if (area > 0.0) {
+    for (double* value : {&result.mean, &result.saturated_share, &result.share_beyond_table}) {
+      *value /= area;
+    }
+  }
   std::sort(samples.begin(), samples.end(),
             [](const Sample& a, const Sample& b) { return a.level > b.level; });
   double above = 0.0;
@@ -49,7 +59,9 @@ std::vector<FieldLevel> field_levels(const Solution& solution) {
     samples[static_cast<std::size_t>(part)].push_back({level, triangle_area(grid.corners(t))});
   }
   std::vector<FieldLevel> levels;
-  for (auto& of_part : samples) levels.push_back(level_of(std::move(of_part)));
+  for (std::size_t k = 0; k < samples.size(); ++k) {
+    levels.push_back(level_of(std::move(samples[k]), solution.problem->materials[k].curve.get()));
+  }
   return levels;
 }
 

@@ -10,7 +10,13 @@ namespace barwall::solver {
 struct FieldLevel {
   double mean = 0.0;  ///< averaged over the part's area [T]
   double high = 0.0;  ///< exceeded on 1 % of the part's area [T]
+  /// Of saturable steel, the share of the area whose differential permeability dB/dH is below
+  /// `saturated_below` mu_0, and the share beyond the end of the B-H table [1].
+  double saturated_share = 0.0;
+  double share_beyond_table = 0.0;
 };
+
+inline constexpr double saturated_below = 10.0;
 
 /// The level in every part of the section, by index; zeros for one that does not show.
 std::vector<FieldLevel> field_levels(const Solution& solution);

@@ -74,3 +74,35 @@ TEST_CASE("Whatever happens to a case file, it is read or refused as bad input")
   CHECK(read > tries / 50);
   CHECK(refused > tries / 2);
 }
+
+TEST_CASE("Whatever happens to a curve file, it is read or refused as bad input") {
+  const test::ScratchFolder folder;
+  const std::filesystem::path file =
+      folder.write("case.toml", "[material.steel]\nbh_curve = \"steel.csv\"\n" + test::one_bar);
+  const std::string curve =
+      "# a comment\nH_A_per_m,B_T\n0,0\n20,0.018\n100,0.1652\n300,0.6632\n1000,1.2706\n"
+      "4000,1.6059\n14000,1.8750\n";
+  std::mt19937 random(20240608);
+  int read = 0;
+  int refused = 0;
+  const int tries = 4000;
+  for (int k = 0; k < tries; ++k) {
+    const std::string text = mutated(curve, random);
+    folder.write("steel.csv", text);
+    try {
+      io::read_case(file);
+      ++read;
+    } catch (const io::InputError& error) {
+      ++refused;
+      const std::string message = error.what();
+      const std::string prefix = (folder.path() / "steel.csv").string() + ":";
+      REQUIRE(message.rfind(prefix, 0) == 0);
+      REQUIRE(message.find_first_not_of("0123456789:", prefix.size()) > prefix.size() + 3);
+    } catch (const std::exception& error) {
+      FAIL("an exception that is no InputError: " << error.what() << "\n" << text);
+    }
+  }
+  CHECK(read + refused == tries);
+  CHECK(read > tries / 50);
+  CHECK(refused > tries / 2);
+}

@@ -124,15 +124,7 @@ TEST_CASE("Materials are given once, by one law, and none of the built-in ones a
                 {"relative_permeability = 600",
                  "relative_permeability = 600\nbh_curve = \"x.csv\"",
                  "11:1",
-                 {"relative_permeability and bh_curve", "only one"}},
-                {"relative_permeability = 600",
-                 "bh_points = [[0, 0], [200, 0.5]]",
-                 "10:1",
-                 {"B-H tables are not supported yet"}},
-                {"relative_permeability = 600",
-                 "bh_curve = \"x.csv\"",
-                 "10:1",
-                 {"B-H tables are not supported yet"}}});
+                 {"relative_permeability and bh_curve", "only one"}}});
 }
 
 TEST_CASE("A current given twice, not at all or against the frequency is refused") {

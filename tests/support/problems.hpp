@@ -10,7 +10,7 @@ namespace barwall::support {
 struct TestGrid {
   int cells_across = 4;
   double reach = 400.0;
-  mesh::Box probes;  ///< the fine zone covers this too
+  mesh::Box probes = {};  ///< the fine zone covers this too
 };
 
 /// A section with its outlines, grid, permeabilities and currents; steady unless a frequency is
