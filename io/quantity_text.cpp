@@ -35,7 +35,7 @@ std::string with_prefix(const std::string& unit, int power) {
 }  // namespace
 
 std::string quantity_text(double value, const std::string& unit) {
-  return quantity_text({"", value, unit, solver::not_given});
+  return quantity_text({"", value, unit});
 }
 
 std::string quantity_text(const solver::Figure& figure) {

@@ -153,6 +153,8 @@ std::string report_html(const Results& results, const std::string& picture_png) 
       title, base64(picture_png));
   const std::string forces = force_tables(results);
   page += section("Forces", forces.empty() ? "" : explanations_of_forces + forces);
+  page += section("Short circuit", fault_tables(results));
+  page += section("Hand values", hand_table(results));
   page += section("Field and limits", probe_tables(results));
   page += section("Inductance, reactance and energy", circuit_tables(results));
   page += section("Bars, walls and clearances", part_tables(results));

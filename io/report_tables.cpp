@@ -11,6 +11,7 @@
 #include "io/printable_text.hpp"
 #include "io/quantity_text.hpp"
 #include "io/report.hpp"
+#include "io/tidy_figures.hpp"
 
 namespace barwall::io {
 namespace {
@@ -32,6 +33,18 @@ std::string in_words(const std::string& key) {
       {"force_peak", "|F|, peak"},
       {"force_peak_at", "at ωt"},
       {"force_peak_direction", "direction"},
+      {"force_peak_closing", "closing angle"},
+      {"support_force", "on a support"},
+      {"support_share", "of its strength"},
+      {"symmetrical_current", "Symmetrical current, r.m.s."},
+      {"r_over_x", "R/X"},
+      {"x_over_r", "X/R"},
+      {"power_factor", "Power factor"},
+      {"kappa", "Factor kappa of IEC 60909-0"},
+      {"peak_over_rms", "Peak over r.m.s. by kappa"},
+      {"crest_over_rms", "Crest of the waveform over r.m.s."},
+      {"crest_current", "Crest of the waveform"},
+      {"crest_at", "Crest, after closing"},
       {"flux_linkage", "Flux linkage"},
       {"flux_linkage_in_phase", "Flux linkage, in phase"},
       {"flux_linkage_quadrature", "Flux linkage, quadrature"},
@@ -146,6 +159,54 @@ std::string force_tables(const Results& results) {
          entry_table("Forces on walls, per metre of run", "Wall", f.walls, is_force) +
          entry_table("Forces on bodies of parts in contact, per metre of run", "Body", f.bodies,
                      is_force);
+}
+
+std::string fault_tables(const Results& results) {
+  if (!results.figures.fault) return "";
+  const solver::FaultFigures fault = *tidy(results.figures).fault;
+  HtmlTable circuit("The short circuit", {"Quantity", "Value"});
+  for (const Figure& figure : fault.circuit) {
+    circuit.row({in_words(figure.key), figure.unit == "1" && std::isfinite(figure.value)
+                                           ? fmt::format("{:.4g}", figure.value)
+                                           : shown(figure)});
+  }
+  std::string text = circuit.html();
+  if (results.input.supports) {
+    const SupportRequest& supports = *results.input.supports;
+    text += fmt::format("<p>Supports every {:.6g} mm", 1e3 * supports.span);
+    if (supports.strength) {
+      text += fmt::format(", strength {} (from: {})", quantity_text(*supports.strength, "N"),
+                          escaped(supports.strength_from));
+    }
+    text += "; force on a support: force per metre times span, static, no dynamic factor.</p>\n";
+  }
+  const auto all = [](const Figure&) { return true; };
+  text += entry_table("Largest forces on bars, per metre of run", "Bar", fault.bars, all);
+  text += entry_table("Largest forces on walls, per metre of run", "Wall", fault.walls, all);
+  text += entry_table("Largest forces on bodies, per metre of run", "Body", fault.bodies, all);
+  return text;
+}
+
+std::string hand_table(const Results& results) {
+  const solver::Figures figures = tidy(results.figures);
+  HtmlTable table("Computed and by hand",
+                  {"Of", "Figure", "Computed", "By hand", "Ratio", "Formula", "Source"},
+                  {1, 2, 6, 7});
+  const auto add = [&](const std::string& what, const std::vector<Entry>& entries) {
+    for (const Entry& entry : entries) {
+      for (const Figure& figure : entry.figures) {
+        if (!std::isfinite(figure.hand)) continue;
+        table.row({entry.name + what, in_words(figure.key), shown(figure),
+                   quantity_text(figure.hand, figure.unit),
+                   fmt::format("{:.3f}", figure.value / figure.hand), entry.hand_formula,
+                   entry.hand_source});
+      }
+    }
+  };
+  add("", figures.bars);
+  add("", figures.loops);
+  if (figures.fault) add(", fault", figures.fault->bars);
+  return table.html();
 }
 
 std::string probe_tables(const Results& results) {

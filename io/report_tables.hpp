@@ -9,6 +9,9 @@ namespace barwall::io {
 // The report's tables, as HTML; a table without rows is an empty text.
 
 std::string force_tables(const Results& results);
+std::string fault_tables(const Results& results);
+/// What handbooks' formulas give, with their names, sources and the ratio to them.
+std::string hand_table(const Results& results);
 std::string probe_tables(const Results& results);
 std::string circuit_tables(const Results& results);
 std::string part_tables(const Results& results);

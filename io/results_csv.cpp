@@ -21,9 +21,9 @@ std::string text_of(double value) {
 }
 
 std::string row(const std::string& address, const solver::Figure& figure, const Limit& limit = {}) {
-  // Two empty fields: the hand formula's value and the ratio to it.
-  return fmt::format("{},{},{},{},,,{},{}\n", csv_field(address), text_of(figure.value),
-                     csv_field(figure.unit), text_of(figure.plus_minus), text_of(limit.value),
+  return fmt::format("{},{},{},{},{},{},{},{}\n", csv_field(address), text_of(figure.value),
+                     csv_field(figure.unit), text_of(figure.plus_minus), text_of(figure.hand),
+                     text_of(figure.value / figure.hand), text_of(limit.value),
                      text_of(limit.share));
 }
 

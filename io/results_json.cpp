@@ -126,6 +126,55 @@ Json probe_json(const solver::ProbeFigures& probe) {
   return json;
 }
 
+Json fault_json(const Results& results, const solver::FaultFigures& fault) {
+  Json json;
+  for (int bar : results.input.fault->current.bars) {
+    json["between"].push_back(results.input.section.parts[static_cast<std::size_t>(bar)].name);
+  }
+  add_figures(json, fault.circuit);
+  json["bars"] = Json::array();
+  for (const solver::Entry& bar : fault.bars) {
+    Json entry{{"name", bar.name}};
+    add_figures(entry, bar.figures);
+    entry["pieces"] = entries_json(bar.pieces);
+    json["bars"].push_back(std::move(entry));
+  }
+  json["walls"] = entries_json(fault.walls);
+  json["bodies"] = entries_json(fault.bodies, "parts");
+  if (results.input.supports) {
+    const SupportRequest& supports = *results.input.supports;
+    json["supports"] = {{"span_mm", number(1e3 * supports.span)},
+                        {"note", "static, no dynamic factor"}};
+    if (supports.strength) {
+      json["supports"]["strength_n"] = number(*supports.strength);
+      json["supports"]["strength_from"] = supports.strength_from;
+    }
+  }
+  return json;
+}
+
+/// Every figure beside which a handbook's formula has a value, by address.
+Json hand_json(const solver::Figures& figures) {
+  Json list = Json::array();
+  const auto add = [&](const std::string& prefix, const std::vector<solver::Entry>& entries) {
+    for (const solver::Entry& entry : entries) {
+      for (const solver::Figure& figure : entry.figures) {
+        if (!std::isfinite(figure.hand)) continue;
+        list.push_back({{"address", prefix + entry.name + "/" + figure.key},
+                        {"value", number(figure.hand)},
+                        {"unit", figure.unit},
+                        {"ratio", number(figure.value / figure.hand)},
+                        {"formula", entry.hand_formula},
+                        {"source", entry.hand_source}});
+      }
+    }
+  };
+  add("bars/", figures.bars);
+  add("loops/", figures.loops);
+  if (figures.fault) add("fault/bars/", figures.fault->bars);
+  return list;
+}
+
 Json checks_json(const std::vector<verify::Check>& checks) {
   Json list = Json::array();
   for (const verify::Check& check : checks) {
@@ -157,6 +206,8 @@ std::string figures_json(const Results& results) {
   json["loops"] = entries_json(figures.loops);
   json["circuits"] = entries_json(figures.circuits, "bars");
   add_figures(json, figures.energy);
+  if (figures.fault) json["fault"] = fault_json(results, *figures.fault);
+  json["hand"] = hand_json(figures);
   json["probes"] = Json::array();
   for (const solver::ProbeFigures& probe : figures.probes) {
     json["probes"].push_back(probe_json(probe));

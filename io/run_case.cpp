@@ -7,7 +7,9 @@
 #include "io/input_error.hpp"
 #include "io/results.hpp"
 #include "mesh/offset_line.hpp"
+#include "solver/fault_figures.hpp"
 #include "verify/end_effect.hpp"
+#include "verify/hand_figures.hpp"
 #include "verify/run_checks.hpp"
 
 namespace barwall::io {
@@ -108,6 +110,12 @@ void set_grids(solver::Problem& problem, const Case& input,
                     "frequency_hz, or give relative_permeability in place of the B-H table",
                     input.grid_place));
   }
+  if (saturable(problem) && input.fault) {
+    throw InputError(
+        fmt::format("{}: with saturable steel a [fault] is not solved; give relative_permeability "
+                    "in place of the B-H table",
+                    input.grid_place));
+  }
   mesh::GridOptions options;
   options.cells_across = input.grid.cells_across;
   options.reach = input.grid.reach;
@@ -191,6 +199,17 @@ Results run_case(Case input, const std::function<void(const std::string&)>& on_s
     auto& all = results.figures.notices;
     all.insert(all.end(), notices.begin(), notices.end());
   }
+  const solver::FaultCurrent* fault = nullptr;
+  if (results.input.fault) {
+    watch.begin("fault");
+    fault = &results.input.fault->current;
+    const auto sustained = solve(solver::fault_problem(*results.problem, *fault));
+    std::optional<solver::Supports> supports;
+    if (const auto& given = results.input.supports) supports = {given->span, given->strength};
+    results.figures.fault =
+        fault_figures(*fault, solver::PartIntegrals(sustained), bands, supports);
+  }
+  verify::add_hand_values(results.figures, *results.problem, fault);
   watch.end();
   return results;
 }

@@ -88,6 +88,7 @@ public:
       std::vector<std::string> cells;
     };
     std::vector<Row> rows;
+    bool any_hand = false;
     const auto add = [&](const solver::Entry& entry, const std::string& current) {
       const bool given =
           std::isfinite(value_of(entry.figures, alternating_ ? "force_peak" : "force_x"));
@@ -107,6 +108,10 @@ public:
         add_vector(row.cells, value_of(entry.figures, "force_x"),
                    value_of(entry.figures, "force_y"));
       }
+      const double by_hand = hand_size(entry);
+      row.cells.push_back(by_hand > 0.0 ? quantity_text(by_hand, "N/m") : "");
+      row.cells.push_back(by_hand > 0.0 ? fmt::format("{:.3g}", row.size / by_hand) : "");
+      any_hand = any_hand || by_hand > 0.0;
       rows.push_back(std::move(row));
     };
     for (const solver::Entry& bar : figures_.bars) add(bar, current_text(bar.current));
@@ -115,10 +120,66 @@ public:
     if (rows.empty()) return "";
     std::stable_sort(rows.begin(), rows.end(),
                      [](const Row& a, const Row& b) { return a.size > b.size; });
-    PlainTable table(alternating_ ? "lrrllrl" : "lrrl");
-    if (alternating_) table.add({"", "", "peak", "", "", "mean", ""});
+    PlainTable table(alternating_ ? "lrrllrlrr" : "lrrlrr");
+    const std::string hand = any_hand ? "hand" : "";
+    const std::string ratio = any_hand ? "ratio" : "";
+    if (alternating_) {
+      table.add({"", "", "peak", "", "", "mean", "", hand, ratio});
+    } else if (any_hand) {
+      table.add({"", "", "", "", hand, ratio});
+    }
     for (std::size_t k = 0; k < std::min(rows.size(), most_rows); ++k) table.add(rows[k].cells);
     return section("Forces, per metre of run", table, rows.size());
+  }
+
+  /// The largest forces of the fault beside the standard's hand value.
+  std::string fault() const {
+    if (!figures_.fault) return "";
+    const solver::FaultFigures& fault = *figures_.fault;
+    std::string names;
+    for (int bar : results_.input.fault->current.bars) {
+      names += (names.empty() ? "" : ", ") +
+               results_.input.section.parts[static_cast<std::size_t>(bar)].name;
+    }
+    const auto given = [&](const char* key) { return value_of(fault.circuit, key); };
+    std::string text = "\nFault between " + names + ", largest forces per metre of run\n";
+    if (std::isfinite(given("r_over_x"))) {
+      text += wrapped(
+          fmt::format("{} symmetrical, R/X {:.3g}, power factor {:.3g}, kappa {:.4g}, peak over "
+                      "r.m.s. {:.4g}; the waveform's own crest {}",
+                      text_of(fault.circuit, "symmetrical_current"), given("r_over_x"),
+                      given("power_factor"), given("kappa"), given("peak_over_rms"),
+                      text_of(fault.circuit, "crest_current")),
+          2, summary_width);
+    } else {
+      text += "  largest current " + text_of(fault.circuit, "crest_current") + "\n";
+    }
+    PlainTable table("lrlrrrr");
+    table.add({"", "peak", "", "hand", "ratio", "a support", "of its strength"});
+    std::size_t count = 0;
+    const auto add = [&](const solver::Entry& entry) {
+      const solver::Figure* peak = find_figure(entry.figures, "force_peak");
+      if (!std::isfinite(peak->value) || ++count > most_rows) return;
+      const bool hand = std::isfinite(peak->hand);
+      const double share = value_of(entry.figures, "support_share");
+      table.add(
+          {name_of(entry.name), quantity_text(*peak),
+           peak->value > 0.0 ? direction_text(value_of(entry.figures, "force_peak_direction")) : "",
+           hand ? quantity_text(peak->hand, peak->unit) : "",
+           hand ? fmt::format("{:.3g}", peak->value / peak->hand) : "",
+           std::isfinite(value_of(entry.figures, "support_force"))
+               ? text_of(entry.figures, "support_force")
+               : "",
+           std::isfinite(share) ? percent_text(share) : ""});
+    };
+    for (const auto* entries : {&fault.bars, &fault.walls, &fault.bodies}) {
+      for (const solver::Entry& entry : *entries) add(entry);
+    }
+    text += table.text(summary_width) + more_rows(count);
+    if (results_.input.supports) {
+      text += wrapped("a support: force times span, static, no dynamic factor", 2, summary_width);
+    }
+    return text;
   }
 
   std::string probes() const {
@@ -222,6 +283,16 @@ private:
     return "\n" + title + "\n" + table.text(summary_width) + more_rows(all);
   }
 
+  /// Magnitude of an entry's force by a handbook's formula, of the peak with a frequency [N/m].
+  double hand_size(const solver::Entry& entry) const {
+    if (entry.hand_formula.empty()) return 0.0;
+    const auto hand = [&](const char* key) {
+      const solver::Figure* figure = find_figure(entry.figures, key);
+      return figure != nullptr && std::isfinite(figure->hand) ? figure->hand : 0.0;
+    };
+    return alternating_ ? hand("force_peak") : std::hypot(hand("force_x"), hand("force_y"));
+  }
+
   std::string current_text(std::complex<double> current) const {
     if (!alternating_) return fmt::format("{:.6g} A", to_ten_digits(current.real()));
     const double size = std::abs(current);
@@ -285,8 +356,8 @@ std::string verdict_line(const Results& results, bool colour) {
 
 std::string summary(const Results& results, const std::filesystem::path& folder, bool colour) {
   const Summary parts(results, colour);
-  return parts.head() + parts.forces() + parts.probes() + parts.inductances() + parts.walls() +
-         "\nChecks\n" + checks_table(results, colour) + parts.notices() + "\n" +
+  return parts.head() + parts.forces() + parts.fault() + parts.probes() + parts.inductances() +
+         parts.walls() + "\nChecks\n" + checks_table(results, colour) + parts.notices() + "\n" +
          verdict_line(results, colour) +
          fmt::format("Results: {}\nReport:  {}\n", folder.string(),
                      (folder / "report.html").string()) +

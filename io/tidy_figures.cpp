@@ -31,7 +31,9 @@ double largest(const std::vector<solver::Entry>& entries, const std::string& uni
 
 void drop_below(std::vector<solver::Figure>& figures, const std::string& unit, double floor) {
   for (solver::Figure& figure : figures) {
-    if (figure.unit == unit && std::abs(figure.value) < floor) figure.value = 0.0;
+    if (figure.unit != unit) continue;
+    if (std::abs(figure.value) < floor) figure.value = 0.0;
+    if (std::abs(figure.hand) < floor) figure.hand = solver::not_given;
   }
 }
 
@@ -39,11 +41,13 @@ void round_all(std::vector<solver::Figure>& figures) {
   const solver::Figure* peak = solver::find_figure(figures, "force_peak");
   const bool no_peak = peak != nullptr && peak->value == 0.0;
   for (solver::Figure& figure : figures) {
-    if (no_peak && (figure.key == "force_peak_at" || figure.key == "force_peak_direction")) {
+    if (no_peak && (figure.key == "force_peak_at" || figure.key == "force_peak_direction" ||
+                    figure.key == "force_peak_closing")) {
       figure.value = solver::not_given;
     }
     figure.value = to_ten_digits(figure.value);
     figure.plus_minus = to_ten_digits(figure.plus_minus);
+    figure.hand = to_ten_digits(figure.hand);
   }
 }
 
@@ -59,6 +63,15 @@ void tidy_entries(std::vector<solver::Entry>& entries, const Floors& floors) {
     round_all(entry.figures);
     tidy_entries(entry.pieces, floors);
   }
+}
+
+void tidy_fault(solver::FaultFigures& fault) {
+  Floors floors;
+  for (const auto* entries : {&fault.bars, &fault.walls, &fault.bodies}) {
+    floors.force = std::max(floors.force, smallest_share * largest(*entries, "N/m"));
+  }
+  for (auto* entries : {&fault.bars, &fault.walls, &fault.bodies}) tidy_entries(*entries, floors);
+  round_all(fault.circuit);
 }
 
 }  // namespace
@@ -78,6 +91,7 @@ std::string number_text(double value) {
 }
 
 solver::Figures tidy(solver::Figures figures) {
+  if (figures.fault) tidy_fault(*figures.fault);
   Floors floors;
   for (const auto* entries : {&figures.bars, &figures.walls, &figures.bodies}) {
     floors.force = std::max(floors.force, smallest_share * largest(*entries, "N/m"));

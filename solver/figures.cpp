@@ -19,27 +19,6 @@ constexpr std::size_t most_parts_with_all_gaps = 40;
 
 constexpr double degree = std::numbers::pi / 180.0;
 
-std::vector<Figure> force_figures(const PulsatingVector& force, bool alternating) {
-  if (!alternating) {
-    return {{"force_x", force.x.mean, "N/m"}, {"force_y", force.y.mean, "N/m"}};
-  }
-  const Peak peak = peak_of(force);
-  return {{"force_mean_x", force.x.mean, "N/m"},
-          {"force_mean_y", force.y.mean, "N/m"},
-          {"force_x_max", force.x.largest(), "N/m"},
-          {"force_x_min", force.x.smallest(), "N/m"},
-          {"force_y_max", force.y.largest(), "N/m"},
-          {"force_y_min", force.y.smallest(), "N/m"},
-          {"force_peak", peak.magnitude, "N/m"},
-          {"force_peak_at", peak.wt / degree, "deg"},
-          {"force_peak_direction", std::atan2(peak.value.y, peak.value.x) / degree, "deg"}};
-}
-
-std::vector<Figure> without_values(std::vector<Figure> figures) {
-  for (Figure& figure : figures) figure.value = not_given;
-  return figures;
-}
-
 void append(std::vector<Figure>& to, std::vector<Figure> more) {
   to.insert(to.end(), more.begin(), more.end());
 }
@@ -176,24 +155,10 @@ private:
         name_of(part), 100.0 * share, curve.table_end());
     figures.notices.push_back({"beyond the B-H table", text, false});
   }
-  static std::string joined(const std::vector<std::string>& names) {
-    std::string result;
-    for (const std::string& name : names) result += (result.empty() ? "" : "+") + name;
-    return result;
-  }
-
-  /// J x B where that is exact, else the stress round the part, unless it touches another.
   std::vector<Figure> part_force(int part) const {
-    if (is_bar(part) && !magnetic(part)) {
-      return force_figures(lorentz_force(integrals_, part), alternating_);
-    }
-    const auto& bodies = bands_.bodies();
-    for (std::size_t b = 0; b < bodies.size(); ++b) {
-      if (std::find(bodies[b].begin(), bodies[b].end(), part) == bodies[b].end()) continue;
-      if (bodies[b].size() > 1) break;
-      return force_figures(bands_.force(solution_, static_cast<int>(b), whole_band), alternating_);
-    }
-    return without_values(force_figures({}, alternating_));
+    const auto force = force_on_part(integrals_, bands_, part);
+    return force ? force_figures(*force, alternating_)
+                 : without_values(force_figures({}, alternating_));
   }
 
   double reactance(int bar) const {
@@ -307,6 +272,33 @@ private:
 
 }  // namespace
 
+std::vector<Figure> force_figures(const PulsatingVector& force, bool alternating) {
+  if (!alternating) {
+    return {{"force_x", force.x.mean, "N/m"}, {"force_y", force.y.mean, "N/m"}};
+  }
+  const Peak peak = peak_of(force);
+  return {{"force_mean_x", force.x.mean, "N/m"},
+          {"force_mean_y", force.y.mean, "N/m"},
+          {"force_x_max", force.x.largest(), "N/m"},
+          {"force_x_min", force.x.smallest(), "N/m"},
+          {"force_y_max", force.y.largest(), "N/m"},
+          {"force_y_min", force.y.smallest(), "N/m"},
+          {"force_peak", peak.magnitude, "N/m"},
+          {"force_peak_at", peak.wt / degree, "deg"},
+          {"force_peak_direction", std::atan2(peak.value.y, peak.value.x) / degree, "deg"}};
+}
+
+std::vector<Figure> without_values(std::vector<Figure> figures) {
+  for (Figure& figure : figures) figure.value = not_given;
+  return figures;
+}
+
+std::string joined(const std::vector<std::string>& names) {
+  std::string result;
+  for (const std::string& name : names) result += (result.empty() ? "" : "+") + name;
+  return result;
+}
+
 const Figure* find_figure(const std::vector<Figure>& figures, const std::string& key) {
   const auto found = std::find_if(figures.begin(), figures.end(),
                                   [&](const Figure& figure) { return figure.key == key; });
@@ -332,6 +324,12 @@ std::vector<std::pair<std::string, const Figure*>> addresses(const Figures& figu
   add_entries("loops", figures.loops);
   add_entries("circuits", figures.circuits);
   add("", figures.energy);
+  if (figures.fault) {
+    add("fault/", figures.fault->circuit);
+    add_entries("fault/bars", figures.fault->bars);
+    add_entries("fault/walls", figures.fault->walls);
+    add_entries("fault/bodies", figures.fault->bodies);
+  }
   for (const ProbeFigures& probe : figures.probes) {
     const std::string prefix = "probes/" + probe.probe.name + "/";
     if (!probe.probe.line) add(prefix, probe.points.front().figures);

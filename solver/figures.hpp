@@ -21,6 +21,7 @@ struct Figure {
   double value = not_given;
   std::string unit;               ///< SI
   double plus_minus = not_given;  ///< numerical uncertainty, 95 %
+  double hand = not_given;        ///< what a handbook's formula gives in its place
 };
 
 /// A named group of figures: a bar, a piece, a wall, a body, a loop, a circuit.
@@ -30,6 +31,8 @@ struct Entry {
   std::vector<Figure> figures;
   std::vector<Entry> pieces;           ///< of a bar with several
   std::complex<double> current = 0.0;  ///< of a bar [A]; r.m.s. phasor with a frequency
+  std::string hand_formula = {};       ///< name of the formula of its figures' hand values
+  std::string hand_source = {};        ///< where that is published
 };
 
 /// A place where the field is wanted: one point, or the points of a line.
@@ -68,6 +71,14 @@ struct Notice {
   bool indicative = false;  ///< the model fits the thing only roughly because of this
 };
 
+/// The largest forces of a short circuit, whose currents are its own.
+struct FaultFigures {
+  std::vector<Figure> circuit;  ///< the fault's ratios in all their guises, its crest
+  std::vector<Entry> bars;      ///< with pieces
+  std::vector<Entry> walls;
+  std::vector<Entry> bodies;
+};
+
 /// All numbers of a solution, in the order of the case file.
 struct Figures {
   std::vector<Entry> bars;
@@ -78,6 +89,7 @@ struct Figures {
   std::vector<Figure> energy;
   std::vector<ProbeFigures> probes;
   std::vector<Clearance> clearances;
+  std::optional<FaultFigures> fault;
   std::vector<Notice> notices;
 };
 
@@ -87,6 +99,15 @@ const Figure* find_figure(const std::vector<Figure>& figures, const std::string&
 /// Every figure with its address, in order: "bars/L2/force_x", "bars/N/pieces/N.1/force_x",
 /// "loops/L1-L2/inductance", "energy", "probes/sensor/b", "clearances/L1-L2/gap".
 std::vector<std::pair<std::string, const Figure*>> addresses(const Figures& figures);
+
+/// The figures of a force over the cycle, or of a steady one.
+std::vector<Figure> force_figures(const PulsatingVector& force, bool alternating);
+
+/// The same figures without their values.
+std::vector<Figure> without_values(std::vector<Figure> figures);
+
+/// Names joined by "+", as a body's and a circuit's.
+std::string joined(const std::vector<std::string>& names);
 
 /// The worst of the probes' limit states: exceeded, undecided, met, none.
 LimitState limits_of(const Figures& figures);

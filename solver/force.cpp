@@ -194,8 +194,8 @@ PulsatingVector StressBands::force(const Solution& solution, int body, const Ban
     return std::clamp((band.to - share) / (band.to - band.from), 0.0, 1.0);
   };
   const auto outside_band = [&](int i, int j) {
-    const auto [least, most] = std::minmax({around.at(i, j), around.at(i + 1, j),
-                                            around.at(i, j + 1), around.at(i + 1, j + 1)});
+    const auto [least, most] = std::minmax(
+        {around.at(i, j), around.at(i + 1, j), around.at(i, j + 1), around.at(i + 1, j + 1)});
     return least >= band.to || most <= band.from;
   };
   // Sums of T grad w for the pattern pairs (0,0), (1,1), (0,1); T is symmetric in the pair.
@@ -230,6 +230,22 @@ PulsatingVector StressBands::force(const Solution& solution, int body, const Ban
   }
   return over_cycle(patterns,
                     [&](int f, int g) { return -sum[static_cast<std::size_t>(f == g ? f : 2)]; });
+}
+
+std::optional<PulsatingVector> force_on_part(const PartIntegrals& integrals,
+                                             const StressBands& bands, int part) {
+  const Solution& solution = integrals.solution();
+  const auto k = static_cast<std::size_t>(part);
+  if (solution.problem->section.parts[k].kind == mesh::Part::Kind::bar &&
+      !solution.problem->materials[k].magnetic()) {
+    return lorentz_force(integrals, part);
+  }
+  const auto& bodies = bands.bodies();
+  for (std::size_t b = 0; b < bodies.size(); ++b) {
+    if (bodies[b].size() > 1 || bodies[b].front() != part) continue;
+    return bands.force(solution, static_cast<int>(b), whole_band);
+  }
+  return {};
 }
 
 }  // namespace barwall::solver

@@ -1,0 +1,99 @@
+#include "solver/fault_figures.hpp"
+
+#include <cmath>
+#include <numbers>
+
+#include "solver/fault_extremes.hpp"
+
+namespace barwall::solver {
+namespace {
+
+constexpr double degree = std::numbers::pi / 180.0;
+
+std::vector<Figure> extreme_figures(const FaultExtremes& extremes) {
+  const FaultPeak& peak = extremes.peak;
+  return {{"force_x_max", extremes.x_max.value, "N/m"},
+          {"force_x_min", extremes.x_min.value, "N/m"},
+          {"force_y_max", extremes.y_max.value, "N/m"},
+          {"force_y_min", extremes.y_min.value, "N/m"},
+          {"force_peak", peak.magnitude, "N/m"},
+          {"force_peak_direction", std::atan2(peak.value.y, peak.value.x) / degree, "deg"},
+          {"force_peak_at", peak.seconds.value_or(not_given), "s"},
+          {"force_peak_closing", peak.closing ? *peak.closing / degree : not_given, "deg"}};
+}
+
+std::vector<Figure> circuit_figures(const FaultCurrent& fault) {
+  const FaultCrest crest = crest_of(fault);
+  std::vector<Figure> figures;
+  if (const auto* alternating = std::get_if<AlternatingFault>(&fault.course)) {
+    const FaultEquivalents equal = equivalents_of(alternating->r_over_x);
+    figures = {{"symmetrical_current", alternating->symmetrical, "A"},
+               {"r_over_x", equal.r_over_x, "1"},
+               {"x_over_r", equal.x_over_r, "1"},
+               {"power_factor", equal.power_factor, "1"},
+               {"kappa", equal.kappa, "1"},
+               {"peak_over_rms", equal.peak_over_rms, "1"},
+               {"crest_over_rms", equal.crest_over_rms, "1"}};
+  }
+  figures.push_back({"crest_current", crest.current, "A"});
+  figures.push_back({"crest_at", crest.seconds.value_or(not_given), "s"});
+  return figures;
+}
+
+}  // namespace
+
+std::shared_ptr<const Problem> fault_problem(const Problem& problem, const FaultCurrent& fault) {
+  auto result = std::make_shared<Problem>(problem);
+  result->excitation = sustained_excitation(fault, problem.section.parts.size());
+  result->loops.clear();
+  return result;
+}
+
+FaultFigures fault_figures(const FaultCurrent& fault, const PartIntegrals& integrals,
+                           const StressBands& bands, const std::optional<Supports>& supports) {
+  const Solution& solution = integrals.solution();
+  const Problem& problem = *solution.problem;
+  const auto figures_of = [&](const std::optional<PulsatingVector>& sustained) {
+    return sustained ? extreme_figures(extremes_of(fault, *sustained))
+                     : without_values(extreme_figures({}));
+  };
+  FaultFigures result;
+  result.circuit = circuit_figures(fault);
+  for (int part : visible_parts(problem.outline)) {
+    const mesh::Part& p = problem.section.parts[static_cast<std::size_t>(part)];
+    Entry entry{p.name, {}, figures_of(force_on_part(integrals, bands, part)), {}, 0.0};
+    if (p.kind == mesh::Part::Kind::wall) {
+      result.walls.push_back(std::move(entry));
+      continue;
+    }
+    if (supports) {
+      const double force = find_figure(entry.figures, "force_peak")->value * supports->span;
+      entry.figures.push_back({"support_force", force, "N"});
+      if (supports->strength) {
+        entry.figures.push_back({"support_share", force / *supports->strength, "1"});
+      }
+    }
+    const bool magnetic = problem.materials[static_cast<std::size_t>(part)].magnetic();
+    for (std::size_t k = 0; p.pieces.size() > 1 && k < p.pieces.size(); ++k) {
+      std::optional<PulsatingVector> force;
+      if (!magnetic) force = lorentz_force(integrals, part, static_cast<int>(k));
+      entry.pieces.push_back(
+          {p.name + "." + std::to_string(k + 1), {}, figures_of(force), {}, 0.0});
+    }
+    result.bars.push_back(std::move(entry));
+  }
+  for (std::size_t b = 0; b < bands.bodies().size(); ++b) {
+    const auto& members = bands.bodies()[b];
+    if (members.size() < 2) continue;
+    Entry entry;
+    for (int part : members) {
+      entry.parts.push_back(problem.section.parts[static_cast<std::size_t>(part)].name);
+    }
+    entry.name = joined(entry.parts);
+    entry.figures = figures_of(bands.force(solution, static_cast<int>(b), whole_band));
+    result.bodies.push_back(std::move(entry));
+  }
+  return result;
+}
+
+}  // namespace barwall::solver
