@@ -208,6 +208,10 @@ Results run_case(Case input, const std::function<void(const std::string&)>& on_s
     if (const auto& given = results.input.supports) supports = {given->span, given->strength};
     results.figures.fault =
         fault_figures(*fault, solver::PartIntegrals(sustained), bands, supports);
+    for (auto& notice : saturation_notices(*results.problem, field_levels(sustained),
+                                           largest_scale(*fault).scale, "in the fault")) {
+      results.figures.notices.push_back(std::move(notice));
+    }
   }
   verify::add_hand_values(results.figures, *results.problem, fault);
   watch.end();

@@ -88,7 +88,6 @@ public:
       std::vector<std::string> cells;
     };
     std::vector<Row> rows;
-    bool any_hand = false;
     const auto add = [&](const solver::Entry& entry, const std::string& current) {
       const bool given =
           std::isfinite(value_of(entry.figures, alternating_ ? "force_peak" : "force_x"));
@@ -109,9 +108,7 @@ public:
                    value_of(entry.figures, "force_y"));
       }
       const double by_hand = hand_size(entry);
-      row.cells.push_back(by_hand > 0.0 ? quantity_text(by_hand, "N/m") : "");
-      row.cells.push_back(by_hand > 0.0 ? fmt::format("{:.3g}", row.size / by_hand) : "");
-      any_hand = any_hand || by_hand > 0.0;
+      row.cells.push_back(by_hand > 0.0 ? fmt::format("{:.3g} × hand", row.size / by_hand) : "");
       rows.push_back(std::move(row));
     };
     for (const solver::Entry& bar : figures_.bars) add(bar, current_text(bar.current));
@@ -120,14 +117,8 @@ public:
     if (rows.empty()) return "";
     std::stable_sort(rows.begin(), rows.end(),
                      [](const Row& a, const Row& b) { return a.size > b.size; });
-    PlainTable table(alternating_ ? "lrrllrlrr" : "lrrlrr");
-    const std::string hand = any_hand ? "hand" : "";
-    const std::string ratio = any_hand ? "ratio" : "";
-    if (alternating_) {
-      table.add({"", "", "peak", "", "", "mean", "", hand, ratio});
-    } else if (any_hand) {
-      table.add({"", "", "", "", hand, ratio});
-    }
+    PlainTable table(alternating_ ? "lrrllrlr" : "lrrlr");
+    if (alternating_) table.add({"", "", "peak", "", "", "mean", "", ""});
     for (std::size_t k = 0; k < std::min(rows.size(), most_rows); ++k) table.add(rows[k].cells);
     return section("Forces, per metre of run", table, rows.size());
   }

@@ -9,7 +9,6 @@
 
 #include "solver/energy.hpp"
 #include "solver/flux_linkage.hpp"
-#include "solver/wall_field.hpp"
 
 namespace barwall::solver {
 namespace {
@@ -19,7 +18,8 @@ constexpr std::size_t most_parts_with_all_gaps = 40;
 
 constexpr double degree = std::numbers::pi / 180.0;
 
-void append(std::vector<Figure>& to, std::vector<Figure> more) {
+template <class T>
+void append(std::vector<T>& to, std::vector<T> more) {
   to.insert(to.end(), more.begin(), more.end());
 }
 
@@ -53,6 +53,7 @@ public:
            true});
     }
     for (int part : visible_) add_table_notice(figures, part);
+    append(figures.notices, saturation_notices(problem_, levels_, 1.0, "under load"));
     for (std::size_t b = 0; b < bands_.bodies().size(); ++b) {
       const auto& members = bands_.bodies()[b];
       if (members.size() < 2) continue;
@@ -178,13 +179,13 @@ private:
       const double in_phase = integrals_.mean_potential(part, 0);
       if (alternating_) {
         const double quadrature = integrals_.mean_potential(part, 1);
-        append(entry.figures, {{"flux_linkage_in_phase", in_phase, "Wb/m"},
-                               {"flux_linkage_quadrature", quadrature, "Wb/m"},
-                               {"reactance", reactance(part), "ohm/m"}});
+        append<Figure>(entry.figures, {{"flux_linkage_in_phase", in_phase, "Wb/m"},
+                                       {"flux_linkage_quadrature", quadrature, "Wb/m"},
+                                       {"reactance", reactance(part), "ohm/m"}});
       } else {
-        append(entry.figures, {{"flux_linkage", in_phase, "Wb/m"}});
+        append<Figure>(entry.figures, {{"flux_linkage", in_phase, "Wb/m"}});
       }
-      append(entry.figures, {{"b_high", level.high, "T"}});
+      append<Figure>(entry.figures, {{"b_high", level.high, "T"}});
       for (std::size_t k = 0; p.pieces.size() > 1 && k < p.pieces.size(); ++k) {
         auto force =
             magnetic(part)
@@ -194,10 +195,10 @@ private:
             {p.name + "." + std::to_string(k + 1), {}, std::move(force), {}, 0.0});
       }
     } else {
-      append(entry.figures, {{"b_mean", level.mean, "T"}, {"b_high", level.high, "T"}});
+      append<Figure>(entry.figures, {{"b_mean", level.mean, "T"}, {"b_high", level.high, "T"}});
     }
     if (problem_.materials[static_cast<std::size_t>(part)].saturable()) {
-      append(entry.figures, {{"saturated_share", level.saturated_share, "1"}});
+      append<Figure>(entry.figures, {{"saturated_share", level.saturated_share, "1"}});
     }
     return entry;
   }
@@ -297,6 +298,25 @@ std::string joined(const std::vector<std::string>& names) {
   std::string result;
   for (const std::string& name : names) result += (result.empty() ? "" : "+") + name;
   return result;
+}
+
+std::vector<Notice> saturation_notices(const Problem& problem,
+                                       const std::vector<FieldLevel>& levels, double scale,
+                                       const std::string& when) {
+  std::vector<Notice> notices;
+  for (std::size_t k = 0; k < levels.size(); ++k) {
+    const Material& material = problem.materials[k];
+    const double high = scale * levels[k].high;
+    if (!material.magnetic() || material.saturable() || high <= steel_saturates_at) continue;
+    notices.push_back(
+        {"saturation",
+         fmt::format("\"{}\" {}: B above {:.3g} T on 1 % of its area at a constant permeability; "
+                     "steel saturates near {:.1f} T, which weakens its effect on forces and lets "
+                     "more field through: give it a B-H table, or a lower permeability",
+                     problem.section.parts[k].name, when, high, steel_saturates_at),
+         true});
+  }
+  return notices;
 }
 
 const Figure* find_figure(const std::vector<Figure>& figures, const std::string& key) {

@@ -10,6 +10,7 @@
 #include "solver/flux_density.hpp"
 #include "solver/force.hpp"
 #include "solver/magnetostatics.hpp"
+#include "solver/wall_field.hpp"
 
 namespace barwall::solver {
 
@@ -108,6 +109,14 @@ std::vector<Figure> without_values(std::vector<Figure> figures);
 
 /// Names joined by "+", as a body's and a circuit's.
 std::string joined(const std::vector<std::string>& names);
+
+/// Notices of parts of constant permeability that are driven beyond what steel follows.
+/// \param levels of every part (field_levels)
+/// \param scale what the levels are to be multiplied by
+/// \param when what drives them, such as "in the fault"
+std::vector<Notice> saturation_notices(const Problem& problem,
+                                       const std::vector<FieldLevel>& levels, double scale,
+                                       const std::string& when);
 
 /// The worst of the probes' limit states: exceeded, undecided, met, none.
 LimitState limits_of(const Figures& figures);

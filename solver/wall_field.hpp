@@ -18,6 +18,10 @@ struct FieldLevel {
 
 inline constexpr double saturated_below = 10.0;
 
+/// Above this |B| [T] no constant permeability describes structural steel (common practice, no
+/// source).
+inline constexpr double steel_saturates_at = 1.5;
+
 /// The level in every part of the section, by index; zeros for one that does not show.
 std::vector<FieldLevel> field_levels(const Solution& solution);
 
