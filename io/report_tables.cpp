@@ -33,6 +33,7 @@ std::string in_words(const std::string& key) {
       {"force_peak", "|F|, peak"},
       {"force_peak_at", "at ωt"},
       {"force_peak_direction", "direction"},
+      {"force_peak_after", "after closing"},
       {"force_peak_closing", "closing angle"},
       {"support_force", "on a support"},
       {"support_share", "of its strength"},

@@ -42,7 +42,7 @@ void round_all(std::vector<solver::Figure>& figures) {
   const bool no_peak = peak != nullptr && peak->value == 0.0;
   for (solver::Figure& figure : figures) {
     if (no_peak && (figure.key == "force_peak_at" || figure.key == "force_peak_direction" ||
-                    figure.key == "force_peak_closing")) {
+                    figure.key == "force_peak_after" || figure.key == "force_peak_closing")) {
       figure.value = solver::not_given;
     }
     figure.value = to_ten_digits(figure.value);

@@ -18,7 +18,7 @@ std::vector<Figure> extreme_figures(const FaultExtremes& extremes) {
           {"force_y_min", extremes.y_min.value, "N/m"},
           {"force_peak", peak.magnitude, "N/m"},
           {"force_peak_direction", std::atan2(peak.value.y, peak.value.x) / degree, "deg"},
-          {"force_peak_at", peak.seconds.value_or(not_given), "s"},
+          {"force_peak_after", peak.seconds.value_or(not_given), "s"},
           {"force_peak_closing", peak.closing ? *peak.closing / degree : not_given, "deg"}};
 }
 

@@ -32,7 +32,8 @@ void add_hand_values(solver::Figures& figures, const solver::Problem& problem,
     if (!hand) continue;
     name_formula(bar, *hand);
     for (const solver::Figure& value : solver::force_figures(hand->value, alternating)) {
-      if (value.unit != "N/m") continue;
+      // With a frequency the peak alone: a ratio of means that nearly cancel says nothing.
+      if (value.unit != "N/m" || (alternating && value.key != "force_peak")) continue;
       for (solver::Figure& figure : bar.figures) {
         if (figure.key == value.key) figure.hand = value.value;
       }

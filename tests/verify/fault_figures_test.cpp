@@ -63,7 +63,7 @@ TEST_CASE("A fault between three round bars has the published factors of the lon
   for (const solver::Entry& bar : figures.bars) {
     CHECK(value(bar, "support_force") == Approx(0.5 * value(bar, "force_peak")));
     CHECK(value(bar, "support_share") == Approx(0.5 * value(bar, "force_peak") / 10e3));
-    CHECK(value(bar, "force_peak_at") == Approx(0.01).epsilon(1e-6));  // half a cycle on
+    CHECK(value(bar, "force_peak_after") == Approx(0.01).epsilon(1e-6));  // half a cycle on
   }
 }
 
