@@ -161,8 +161,7 @@ Json hand_json(const solver::Figures& figures) {
       for (const solver::Figure& figure : entry.figures) {
         if (!std::isfinite(figure.hand)) continue;
         list.push_back({{"address", prefix + entry.name + "/" + figure.key},
-                        {"value", number(figure.hand)},
-                        {"unit", figure.unit},
+                        {"hand", figure_json(figure.hand, figure.unit)},
                         {"ratio", number(figure.value / figure.hand)},
                         {"formula", entry.hand_formula},
                         {"source", entry.hand_source}});

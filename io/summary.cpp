@@ -88,6 +88,7 @@ public:
       std::vector<std::string> cells;
     };
     std::vector<Row> rows;
+    bool any_hand = false;
     const auto add = [&](const solver::Entry& entry, const std::string& current) {
       const bool given =
           std::isfinite(value_of(entry.figures, alternating_ ? "force_peak" : "force_x"));
@@ -98,9 +99,10 @@ public:
         row.cells.push_back(text_of(entry.figures, "force_peak"));
         row.cells.push_back(direction_text(value_of(entry.figures, "force_peak_direction")));
         const double at = value_of(entry.figures, "force_peak_at");
-        row.cells.push_back(std::isfinite(at) ? fmt::format("at wt = {:.0f}°", at) : "");
-        add_vector(row.cells, value_of(entry.figures, "force_mean_x"),
-                   value_of(entry.figures, "force_mean_y"));
+        row.cells.push_back(std::isfinite(at) ? fmt::format("{:.0f}°", at) : "");
+        row.cells.push_back(quantity_text(std::hypot(value_of(entry.figures, "force_mean_x"),
+                                                     value_of(entry.figures, "force_mean_y")),
+                                          "N/m"));
       } else {
         row.size =
             std::hypot(value_of(entry.figures, "force_x"), value_of(entry.figures, "force_y"));
@@ -108,7 +110,8 @@ public:
                    value_of(entry.figures, "force_y"));
       }
       const double by_hand = hand_size(entry);
-      row.cells.push_back(by_hand > 0.0 ? fmt::format("{:.3g} × hand", row.size / by_hand) : "");
+      row.cells.push_back(by_hand > 0.0 ? fmt::format("{:.2f}", row.size / by_hand) : "");
+      any_hand = any_hand || by_hand > 0.0;
       rows.push_back(std::move(row));
     };
     for (const solver::Entry& bar : figures_.bars) add(bar, current_text(bar.current));
@@ -117,8 +120,13 @@ public:
     if (rows.empty()) return "";
     std::stable_sort(rows.begin(), rows.end(),
                      [](const Row& a, const Row& b) { return a.size > b.size; });
-    PlainTable table(alternating_ ? "lrrllrlr" : "lrrlr");
-    if (alternating_) table.add({"", "", "peak", "", "", "mean", "", ""});
+    PlainTable table(alternating_ ? "lrrlrrr" : "lrrlr");
+    const std::string hand = any_hand ? "× hand" : "";
+    if (alternating_) {
+      table.add({"", "", "peak", "", "at wt", "mean", hand});
+    } else if (any_hand) {
+      table.add({"", "", "", "", hand});
+    }
     for (std::size_t k = 0; k < std::min(rows.size(), most_rows); ++k) table.add(rows[k].cells);
     return section("Forces, per metre of run", table, rows.size());
   }

@@ -13,18 +13,20 @@ namespace {
 
 // Bounds on the spacing's slope; with slope g neighbouring intervals differ by a factor exp(g).
 constexpr double sharp_slope = 0.113;  // away from sharp corners: below ln 1.12
-constexpr double near_slope = 0.1;     // otherwise within the section, and without such corners
-constexpr double smooth_slope = 0.05;  // this: no corner limits what a finer grid is good for
+constexpr double near_slope = 0.1;     // otherwise in the square round the section
 constexpr double open_slope = 0.1;     // in the open: the far field's error goes with its square
-constexpr double wide_slope = 0.15;    // where the net current's field is looked at
-constexpr double far_slope = 0.35;     // beyond every place where the field is asked for
+// Without sharp corners no error of theirs hides what a finer grid is good for.
+constexpr double smooth_near_slope = 0.05;
+constexpr double smooth_open_slope = 0.07;
+constexpr double wide_slope = 0.15;  // where the net current's field is looked at
+constexpr double far_slope = 0.35;   // beyond every place where the field is asked for
 constexpr double merge_fraction = 0.3;
 constexpr int most_attempts = 12;
 constexpr double most_lines = 1e6;
 
 /// Stretches of one axis, each within the next.
 struct Extents {
-  double near_low, near_high;    ///< the section
+  double near_low, near_high;    ///< the square round the section
   double fine_low, fine_high;    ///< where the field is asked for
   double wide_low, wide_high;    ///< where a net current's field is looked at
   double outer_low, outer_high;  ///< the boundary
@@ -33,12 +35,13 @@ struct Extents {
 std::vector<double> lines_along(const AxisFeatures& features, int cells_across,
                                 const Extents& extents) {
   const auto [near_low, near_high, fine_low, fine_high, wide_low, wide_high, low, high] = extents;
-  const double slope = features.sharp.empty() ? smooth_slope : near_slope;
-  SpacingFunction spacing(features.smooth, {{{near_low, near_high, slope},
-                                             {fine_low, fine_high, open_slope},
-                                             {wide_low, wide_high, wide_slope}},
-                                            far_slope});
-  if (!features.sharp.empty()) {
+  const bool smooth = features.sharp.empty();
+  SpacingFunction spacing(features.smooth,
+                          {{{near_low, near_high, smooth ? smooth_near_slope : near_slope},
+                            {fine_low, fine_high, smooth ? smooth_open_slope : open_slope},
+                            {wide_low, wide_high, wide_slope}},
+                           far_slope});
+  if (!smooth) {
     spacing =
         smaller_of(spacing, SpacingFunction(features.sharp, {{{fine_low, fine_high, sharp_slope},
                                                               {wide_low, wide_high, wide_slope}},
@@ -124,10 +127,11 @@ FittedGrid make_grid(const Section& section, const Outline& outline, const GridO
   Box wide = fine;
   wide.include(centre - Point{options.wide * half, options.wide * half});
   wide.include(centre + Point{options.wide * half, options.wide * half});
-  const Extents along_x{box.low.x,  box.high.x,  fine.low.x,       fine.high.x,
-                        wide.low.x, wide.high.x, centre.x - outer, centre.x + outer};
-  const Extents along_y{box.low.y,  box.high.y,  fine.low.y,       fine.high.y,
-                        wide.low.y, wide.high.y, centre.y - outer, centre.y + outer};
+  // Beside a row of bars their fields fall off over the row's length, not over its height.
+  const Extents along_x{centre.x - half, centre.x + half, fine.low.x,       fine.high.x,
+                        wide.low.x,      wide.high.x,     centre.x - outer, centre.x + outer};
+  const Extents along_y{centre.y - half, centre.y + half, fine.low.y,       fine.high.y,
+                        wide.low.y,      wide.high.y,     centre.y - outer, centre.y + outer};
   Features features = features_of(section, outline);
   FitResult result;
   for (int attempt = 0; attempt < most_attempts; ++attempt) {

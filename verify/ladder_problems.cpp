@@ -61,7 +61,7 @@ LadderProblem made_up_potential() {
       // As air; it is there to make the grid uneven.
       {"bar", mesh::Part::Kind::bar, {mesh::Round{{33 * mm, 14 * mm}, 10 * mm}}, false, false}};
   problem.grid.reach = 4.0;
-  problem.quantities = {{"A at nodes", error_band(1.6e-3)}};
+  problem.quantities = {{"A at nodes", error_band(3.0e-4)}};
   problem.errors = [field](const std::shared_ptr<const mesh::FittedGrid>& grid) {
     return std::vector<double>{error_of(field, 0, *grid)};
   };
