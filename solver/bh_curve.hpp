@@ -47,10 +47,10 @@ public:
 /// - H / B is smooth in B^2 at B = 0 (H is continued as an odd function).
 ///
 /// Rows that keep dB/dH >= mu_0 do not keep every point between them from rising more slowly: where
-/// an interval is steeper in H than both its neighbours dH/dB reaches at most 1.5 / mu_0. That is
-/// harmless: the energy needs dH/dB > 0 only.
+/// the first interval is steeper in H than the next, or one than both its neighbours, dH/dB may
+/// reach 1.5 / mu_0, not more. That is harmless: the energy needs dH/dB > 0 only.
 ///
-/// Outside its numbers a curve is a plain value: it can be copied, and used by many threads.
+/// A curve is a plain value: it can be copied, and threads may share it.
 class BhCurve {
 public:
   /// Everything at a flux density b >= 0 [T], in one look-up.
@@ -144,11 +144,12 @@ inline constexpr double steepest_bh_rise = 1e9;
 /// slowly than vacuum (to 1e-9, what mu_0's own digits differ by).
 ///
 /// Slopes at inner rows are the weighted harmonic means of the neighbouring secants of F. N.
-/// Fritsch and J. Butland, SIAM J. Sci. Stat. Comput. 5, 1984, with K. W. Brodlie's weights
-/// (cited from memory): below three times the smaller secant, so that the cubic is monotone by F.
-/// N. Fritsch and R. E. Carlson, SIAM J. Numer. Anal. 17, 1980, and never level. The slope at B = 0
-/// makes the second derivative vanish there, which an odd function has; that at the last row is the
-/// parabola's through three rows, at most vacuum's. Both are at least half the neighbouring secant.
+/// Fritsch and J. Butland, SIAM J. Sci. Stat. Comput. 5, 1984, with K. W. Brodlie's weights (cited
+/// from memory): below three times the smaller secant, so that the cubic is monotone by F. N.
+/// Fritsch and R. E. Carlson, SIAM J. Numer. Anal. 17, 1980, and never level. The slope at B = 0
+/// makes the second derivative vanish there, as an odd function's does; for that the slope at the
+/// second row is at most twice the first secant. The slope at the last row is that of the parabola
+/// through three rows, at most vacuum's. Both end slopes are at least half the neighbouring secant.
 /// \throws BhTableError
 BhCurve make_bh_curve(std::vector<BhPoint> points);
 

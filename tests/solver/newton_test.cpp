@@ -210,5 +210,33 @@ TEST_CASE("Coenergy grows with current by the flux linkage") {
   CHECK(quotient == Approx(work).epsilon(1e-5));
 }
 
+TEST_CASE("In saturated steel a force is the change of coenergy with the body's place") {
+  // A bar off the axis of a pipe that its return, on the other side, helps to saturate.
+  const auto at = [](double shift) {
+    mesh::Section section;
+    section.parts.push_back(support::bar("go", {mesh::Round{{-25 * mm + shift, 0.0}, 20 * mm}}));
+    section.parts.push_back(support::bar("back", {mesh::Round{{25 * mm, 0.0}, 20 * mm}}));
+    section.parts.push_back(
+        support::steel_wall("pipe", {mesh::Tube{{0.0, 0.0}, 130 * mm, 5 * mm}}));
+    return solved(with_curve(support::problem_of(section, {1, 1, 1}, {80000.0, -80000.0, 0.0}),
+                             test_steel()));
+  };
+  const Solved run = at(0.0);
+  const auto levels = field_levels(*run.solution);
+  CHECK(levels[2].saturated_share > 0.05);
+  CHECK(levels[2].saturated_share < 0.95);
+  const double step = 0.01 * 25 * mm;  // a hundredth of the gap to the pipe
+  const double quotient = (saturable_energy(*at(step).solution).coenergy -
+                           saturable_energy(*at(-step).solution).coenergy) /
+                          (2.0 * step);
+  const double force = lorentz_force(*run.integrals, 0).x.mean;
+  CHECK(force == Approx(quotient).epsilon(5e-3));
+  const double stress = run.bands->force(*run.solution, 0, solver::whole_band).x.mean;
+  CHECK(stress == Approx(force).epsilon(5e-3));
+  const double inner = run.bands->force(*run.solution, 0, solver::inner_band).x.mean;
+  const double outer = run.bands->force(*run.solution, 0, solver::outer_band).x.mean;
+  CHECK(inner == Approx(outer).epsilon(5e-3));
+}
+
 }  // namespace
 }  // namespace barwall
