@@ -46,7 +46,7 @@ struct Bounds {
 /// Reads the name of a bar, wall or opening and enters it.
 std::string enter_name(CaseParts& parts, const CaseTable& table, int index) {
   const TomlValue& value = table.require("name");
-  const std::string name = read_name(table.text(), value, "name");
+  std::string name = read_name(table.text(), value, "name");
   if (!parts.index_of.emplace(name, index).second) {
     table.text().fail(value.place,
                       fmt::format("the name \"{}\" is taken; names are unique among bars, walls "

@@ -32,7 +32,7 @@ ProbeRequest line_around(const std::string& name, double clearance_mm) {
 std::string unique_name(const CaseTable& table, std::set<std::string>& taken,
                         std::string_view among) {
   const TomlValue& value = table.require("name");
-  const std::string name = read_name(table.text(), value, "name");
+  std::string name = read_name(table.text(), value, "name");
   if (!taken.insert(name).second) {
     table.text().fail(value.place, fmt::format("the name \"{}\" is taken; names are unique among "
                                                "{}",

@@ -29,7 +29,7 @@ struct Allowed {
   double low = -HUGE_VAL;
   double high = HUGE_VAL;
   bool or_equal = true;
-  std::string_view unit = "";
+  std::string_view unit{};
 };
 
 /// Coordinates stay within this many millimetres of the origin.

@@ -146,7 +146,7 @@ std::string in_words(solver::LimitState state) {
 }
 
 std::string current_text(const Results& results, const Entry& bar) {
-  const std::string size = quantity_text(std::abs(bar.current), "A");
+  std::string size = quantity_text(std::abs(bar.current), "A");
   if (!results.alternating()) return quantity_text(bar.current.real(), "A");
   if (bar.current == 0.0) return size;
   return fmt::format("{}, {:.4g}°", size, std::arg(bar.current) * 180.0 / std::numbers::pi + 0.0);

@@ -81,6 +81,7 @@ std::vector<Named> named_pieces(const solver::Problem& problem, const Frame& fra
     }
   }
   std::vector<Named> result;
+  result.reserve(found.size());
   for (auto& [occupant, named] : found) result.push_back(std::move(named));
   // Bars first: they are the smaller ones, and their names matter most.
   std::stable_partition(result.begin(), result.end(), [&](const Named& n) {

@@ -146,7 +146,8 @@ void draw_key(Canvas& canvas, const Case& input, const solver::Problem& problem,
   const std::size_t shown = parts.size() > room ? room - 1 : parts.size();
   const double top = y;
   for (std::size_t k = 0; k < std::min(room, parts.size()); ++k) {
-    const double left = column.low.x + width * static_cast<double>(k / rows);
+    const std::size_t side = k / rows;
+    const double left = column.low.x + width * static_cast<double>(side);
     const double base = top + row * static_cast<double>(k % rows);
     if (k == shown) {
       canvas.text({left, base}, fmt::format("and {} more", parts.size() - shown), style);

@@ -56,7 +56,9 @@ std::vector<double> lines_along(const AxisFeatures& features, int cells_across,
   std::vector<double> fixed = thinned_lines(features.lines, spacing, merge_fraction);
   // A section may reach the boundary (at a reach of 1, with its own lines there) or beyond it.
   const double clear = 1e-9 * (high - low);
-  std::erase_if(fixed, [&](double v) { return v < low + clear || v > high - clear; });
+  std::erase_if(fixed, [least = low + clear, most = high - clear](double v) {
+    return v < least || v > most;
+  });
   fixed.insert(fixed.begin(), low);
   fixed.push_back(high);
   return graded_lines(fixed, spacing, cells_across);

@@ -80,6 +80,7 @@ std::vector<std::vector<Point>> offset_lines(const Outline& outline, const std::
   std::sort(found.begin(), found.end(),
             [](const auto& a, const auto& b) { return a.first > b.first; });
   std::vector<std::vector<Point>> result;
+  result.reserve(found.size());
   for (auto& [area, line] : found) result.push_back(std::move(line));
   return result;
 }
