@@ -4,16 +4,12 @@
 #include <omp.h>
 #include <pthread.h>
 
-#include <algorithm>
 #include <cstdio>
 #include <mutex>
 #include <vector>
 
 namespace barwall::io {
 namespace {
-
-/// CHOLMOD asks for as many threads at a time, whatever the number set.
-constexpr int cholmod_threads = 4;
 
 void* wait_at(void* gate) {
   const std::lock_guard<std::mutex> pass(*static_cast<std::mutex*>(gate));
@@ -41,9 +37,8 @@ bool can_run(int count) {
 
 void set_threads(int count) {
   if (count == 0) count = omp_get_max_threads();
-  const int most = std::max(count, cholmod_threads);
-  if (count > 1 && !can_run(most - 1)) {
-    fmt::print(stderr, "barwall: the system does not give {} threads; computing with one\n", most);
+  if (count > 1 && !can_run(count - 1)) {
+    fmt::print(stderr, "barwall: the system does not give {} threads; computing with one\n", count);
     count = 1;
   }
   omp_set_num_threads(count);

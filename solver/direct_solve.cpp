@@ -1,7 +1,9 @@
 #include <cholmod.h>
 #include <fmt/format.h>
+#include <omp.h>
 
 #include <algorithm>
+#include <cassert>
 #include <cmath>
 
 #include "solver/linear_solve.hpp"
@@ -14,6 +16,25 @@ void openblas_set_num_threads(int);
 
 namespace barwall::solver {
 namespace {
+
+/// While it lives, CHOLMOD's own parallel loops, which ask for four threads whatever the number
+/// set, run in this thread alone: on the small fronts of a plane grid, waking others takes longer
+/// than the work. Within a parallel region they do so anyway.
+class OneThread {
+public:
+  OneThread() : levels_(omp_get_max_active_levels()), set_(omp_in_parallel() == 0) {
+    if (set_) omp_set_max_active_levels(0);
+  }
+  ~OneThread() {
+    if (set_) omp_set_max_active_levels(levels_);
+  }
+  OneThread(const OneThread&) = delete;
+  OneThread& operator=(const OneThread&) = delete;
+
+private:
+  int levels_;
+  bool set_;
+};
 
 /// Columns of the interior block in compressed form, lower triangle, for CHOLMOD.
 class DirectSystem final : public PreparedSystem<double> {
@@ -38,6 +59,12 @@ public:
   }
   DirectSystem(const DirectSystem&) = delete;
   DirectSystem& operator=(const DirectSystem&) = delete;
+
+  void prepare_again(const Stencil<double>& stencil) override {
+    assert(stencil.columns == stencil_.columns && stencil.rows == stencil_.rows);
+    stencil_ = stencil;
+    factor();
+  }
 
   double memory() const override { return static_cast<double>(common_.memory_inuse); }
 
@@ -77,7 +104,9 @@ private:
            1;
   }
 
+  /// Orders and analyses the first time; factors every time.
   void factor() {
+    const OneThread serial;
     const int nx = interior_columns();
     const int ny = interior_rows();
     const auto n = static_cast<std::size_t>(nx) * static_cast<std::size_t>(ny);
@@ -106,8 +135,10 @@ private:
       }
     }
     start[n] = count;
-    std::vector<int> order = nested_dissection(nx, ny);
-    factor_ = cholmod_analyze_p(a, order.data(), nullptr, 0, &common_);
+    if (factor_ == nullptr) {
+      std::vector<int> order = nested_dissection(nx, ny);
+      factor_ = cholmod_analyze_p(a, order.data(), nullptr, 0, &common_);
+    }
     if (factor_ != nullptr) cholmod_factorize(a, factor_, &common_);
     cholmod_free_sparse(&a, &common_);
     check(factor_ != nullptr);
@@ -164,6 +195,7 @@ private:
   }
 
   void correct(const Matrix& residual, Matrix& x) const {
+    const OneThread serial;
     const auto n =
         static_cast<std::size_t>(interior_columns()) * static_cast<std::size_t>(interior_rows());
     const auto columns = static_cast<std::size_t>(x.cols());

@@ -40,6 +40,11 @@ public:
   /// \throws SolveError when the relative residual stays above `tolerance`
   virtual SolveReport solve(const Matrix& rhs, Matrix& x, double tolerance) const = 0;
 
+  /// Prepares another operator of the same grid in place of this one: what depends on the grid alone
+  /// is kept.
+  /// \throws SolveError
+  virtual void prepare_again(const Stencil<Scalar>& stencil) = 0;
+
   /// Bytes held.
   virtual double memory() const = 0;
 };

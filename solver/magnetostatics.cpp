@@ -119,8 +119,9 @@ Eigen::VectorXd nonlinear_potential(const Problem& problem, const CurrentPattern
     rough.newton_tolerance = 1e-4;
     interpolate(coarse, nonlinear_potential(coarse, pattern, rough, reports), grid, potential);
   }
+  std::unique_ptr<PreparedSystem<double>> system;
   reports.push_back(newton_solve(NonlinearOperator(problem), grid, current_of(problem, pattern),
-                                 potential, options.newton_tolerance));
+                                 potential, options.newton_tolerance, system));
   return potential;
 }
 

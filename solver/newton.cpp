@@ -68,7 +68,7 @@ double line_search(double slope_at_start, Slope slope_at) {
 
 NewtonReport newton_solve(const NonlinearOperator& equations, const mesh::FittedGrid& grid,
                           const Eigen::VectorXd& current, Eigen::VectorXd& potential,
-                          double tolerance) {
+                          double tolerance, std::unique_ptr<PreparedSystem<double>>& system) {
   NewtonReport report;
   report.nodes = grid.node_count();
   const auto residual_of = [&](const Eigen::VectorXd& a) {
@@ -97,7 +97,12 @@ NewtonReport newton_solve(const NonlinearOperator& equations, const mesh::Fitted
     if (!std::isfinite(report.residuals.back())) fail("it met values that are not finite numbers");
     if (report.iterations == most_iterations) fail("the tolerance was not reached");
     Eigen::MatrixXd step = Eigen::MatrixXd::Zero(grid.node_count(), 1);
-    prepare(equations.tangent(potential))->solve(residual, step, 1e-10);
+    if (system) {
+      system->prepare_again(equations.tangent(potential));
+    } else {
+      system = prepare(equations.tangent(potential));
+    }
+    system->solve(residual, step, 1e-10);
     const Eigen::VectorXd direction = step.col(0);
     const double length = line_search(-residual.dot(direction), [&](double s) {
       return -residual_of(potential + s * direction).dot(direction);

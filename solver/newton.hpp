@@ -1,5 +1,7 @@
 #pragma once
 
+#include <memory>
+
 #include "solver/linear_solve.hpp"
 #include "solver/nonlinear_operator.hpp"
 
@@ -32,9 +34,11 @@ private:
 /// \param current through each node's control cell [A]; boundary rows are not read
 /// \param potential in: A at the boundary nodes, a start at the others; out: A at all nodes [Wb/m]
 /// \param tolerance on the residual, relative to what it is with A = 0 inside the boundary
+/// \param system a prepared system of this grid to work with, whatever it was prepared for; made
+///        when null, and left for the next solve
 /// \throws NewtonError
 NewtonReport newton_solve(const NonlinearOperator& equations, const mesh::FittedGrid& grid,
                           const Eigen::VectorXd& current, Eigen::VectorXd& potential,
-                          double tolerance);
+                          double tolerance, std::unique_ptr<PreparedSystem<double>>& system);
 
 }  // namespace barwall::solver
