@@ -10,6 +10,7 @@
 #include <memory>
 #include <new>
 
+#include "io/case_problem.hpp"
 #include "io/input_error.hpp"
 #include "io/ladder_table.hpp"
 #include "io/memory.hpp"

@@ -13,7 +13,6 @@ public:
   Painter(const Results& results, FieldRaster& raster)
       : grid_(*results.problem->grid),
         field_(*results.field),
-        alternating_(results.alternating()),
         raster_(raster),
         pixel_{raster.window.width() / raster.width, raster.window.height() / raster.height} {}
 
@@ -54,7 +53,7 @@ private:
         if (w0 < slack || w1 < slack || w2 < slack) continue;
         raster_.magnitude[static_cast<std::size_t>(r) * static_cast<std::size_t>(raster_.width) +
                           static_cast<std::size_t>(c)] =
-            static_cast<float>(magnitude({t, {w0, w1, w2}}, at));
+            static_cast<float>(field_.rms({t, {w0, w1, w2}}, at));
       }
     }
   }
@@ -66,14 +65,8 @@ private:
     return static_cast<int>(std::floor(std::min(place, 1.0 * end) - 0.5));
   }
 
-  double magnitude(const mesh::Location& location, mesh::Point at) const {
-    const double b = norm(field_.flux_density(location, at, 0));
-    return alternating_ ? std::hypot(b, norm(field_.flux_density(location, at, 1))) : b;
-  }
-
   const mesh::FittedGrid& grid_;
   const solver::RecoveredField& field_;
-  bool alternating_;
   FieldRaster& raster_;
   mesh::Point pixel_;  ///< a pixel's sides [m]
 };

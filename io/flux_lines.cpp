@@ -33,9 +33,14 @@ struct Step {
   Crossing to;
 };
 
-Eigen::VectorXd potential_at(const Results& results, double wt) {
+/// A at the instant of the flux lines.
+Eigen::VectorXd potential_of(const Results& results) {
+  if (const auto& instants = results.instants) {
+    return instants->solution[instants->strongest]->potential.col(0);
+  }
   const Eigen::MatrixXd& a = results.solution->potential;
   if (!results.alternating()) return a.col(0);
+  const double wt = flux_line_instant(results);
   return std::numbers::sqrt2 * (std::cos(wt) * a.col(0) - std::sin(wt) * a.col(1));
 }
 
@@ -186,7 +191,7 @@ void add_clipped(std::vector<FluxLine>& lines, double level, std::vector<Point> 
 
 std::vector<FluxLine> flux_lines(const Results& results, const mesh::Box& window, int count) {
   const mesh::FittedGrid& grid = results.solution->grid();
-  const Eigen::VectorXd a = potential_at(results, flux_line_instant(results));
+  const Eigen::VectorXd a = potential_of(results);
   const GridWindow cells = window_covering(grid, window);
   const auto [low, high] = range_of(results, a, window, cells);
   if (count < 1 || !(high > low)) return {};
@@ -228,11 +233,10 @@ std::vector<FluxLine> flux_lines(const Results& results, const mesh::Box& window
 
 double flux_line_instant(const Results& results) {
   if (!results.alternating()) return 0.0;
+  if (results.instants) return results.instants->wt[results.instants->strongest];
   const solver::Pulsation energy = solver::field_energy(*results.solution);
   // Where the energy keeps still over the cycle the start stands for all of it.
-  if (std::hypot(energy.cosine, energy.sine) <= 1e-9 * energy.mean) return 0.0;
-  const double wt = 0.5 * std::atan2(energy.sine, energy.cosine);
-  return wt < 0.0 ? wt + std::numbers::pi : wt;
+  return energy.swing() <= 1e-9 * energy.mean ? 0.0 : energy.largest_at().wt;
 }
 
 }  // namespace barwall::io

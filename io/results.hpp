@@ -2,11 +2,13 @@
 
 #include <functional>
 #include <memory>
+#include <optional>
 #include <string>
 #include <utility>
 #include <vector>
 
 #include "io/case.hpp"
+#include "solver/fault_solve.hpp"
 #include "solver/figures.hpp"
 #include "verify/check.hpp"
 
@@ -19,8 +21,13 @@ using StageTimes = std::vector<std::pair<std::string, double>>;
 struct Results {
   Case input;
   std::shared_ptr<const solver::Problem> problem;
+  /// With alternating currents in saturable steel the fundamental of the field, its permeability
+  /// that of the strongest instant.
   std::shared_ptr<const solver::Solution> solution;
   std::shared_ptr<const solver::RecoveredField> field;
+  /// With alternating currents in saturable steel, half a cycle.
+  std::optional<solver::Instants> instants;
+  std::optional<solver::FaultSolution> fault;
   solver::Figures figures;
   std::vector<verify::Check> checks;
   StageTimes stages;
@@ -35,13 +42,6 @@ struct Results {
   /// 0 sound, 1 a check failed, 4 sound but a limit is exceeded or undecided.
   int exit_code() const;
 };
-
-/// Case -> Section -> FittedGrid -> Problem, ready to solve.
-/// \throws InputError when no grid fits or it is larger than memory allows
-std::shared_ptr<const solver::Problem> problem_of(const Case& input);
-
-/// Probe places with their points.
-std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& outline);
 
 /// The main job up to the files: grid, solve, figures, checks, notices.
 /// \param on_stage told the name of each stage as it begins

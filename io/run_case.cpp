@@ -1,38 +1,17 @@
-#include <fmt/format.h>
-#include <sys/sysinfo.h>
+#include "io/results.hpp"
 
-#include <algorithm>
 #include <chrono>
 
-#include "io/input_error.hpp"
-#include "io/results.hpp"
-#include "mesh/offset_line.hpp"
+#include "io/case_problem.hpp"
+#include "solver/cycle_recovery.hpp"
 #include "solver/fault_figures.hpp"
+#include "solver/saturation_notices.hpp"
 #include "verify/end_effect.hpp"
 #include "verify/hand_figures.hpp"
 #include "verify/run_checks.hpp"
 
 namespace barwall::io {
 namespace {
-
-/// Memory that a direct solve of n nodes takes, by measurement: about 31 n log2 n bytes for the
-/// factor and 700 n for everything else.
-double bytes_needed(double nodes) {
-  return nodes * (31.0 * std::log2(nodes) + 700.0);
-}
-
-/// Largest number of nodes that three quarters of the free memory hold.
-double nodes_that_fit() {
-  struct sysinfo info {};
-  sysinfo(&info);
-  const double free = 0.75 * static_cast<double>(info.freeram + info.bufferram) * info.mem_unit;
-  double nodes = 1e4;
-  while (nodes < 2e8 && bytes_needed(1.1 * nodes) < free) nodes *= 1.1;
-  return nodes;
-}
-
-/// Half-sizes out to which a net current's field is checked: 20 section sizes and a little.
-constexpr double net_current_zone = 42.0;
 
 class Stopwatch {
 public:
@@ -59,163 +38,110 @@ private:
   std::chrono::steady_clock::time_point last_ = std::chrono::steady_clock::now();
 };
 
-bool inside(const std::vector<mesh::Point>& line, mesh::Point point) {
-  return contains(mesh::Polygon{line}, point);
-}
-
-std::vector<mesh::Point> points_around(const mesh::Outline& outline, double clearance, int count) {
-  auto lines = offset_lines(outline, visible_parts(outline), clearance);
-  // Lines within others run round parts in the hollow of another: not outermost.
-  std::vector<std::vector<mesh::Point>> outermost;
-  for (auto& line : lines) {
-    const bool hidden = std::any_of(outermost.begin(), outermost.end(),
-                                    [&](const auto& outer) { return inside(outer, line.front()); });
-    if (!hidden) outermost.push_back(std::move(line));
+/// One run, from the case to what the files are written from.
+class Run {
+public:
+  Run(Case input, const std::function<void(const std::string&)>& on_stage)
+      : watch_(results_.stages, on_stage) {
+    results_.input = std::move(input);
   }
-  const auto length = [](const std::vector<mesh::Point>& line) {
-    double sum = 0.0;
-    for (std::size_t k = 0; k < line.size(); ++k) {
-      sum += distance(line[k], line[(k + 1) % line.size()]);
+
+  Results complete() {
+    watch_.begin("grid");
+    results_.problem = problem_of(results_.input);
+    probes_ = probes_of(results_.input, results_.problem->outline);
+    const Problem& problem = *results_.problem;
+    bands_.emplace(problem, bodies(problem.outline));
+    const solver::Readings readings =
+        saturable(problem) && results_.alternating() ? instant_by_instant() : at_once();
+    results_.figures =
+        figures_of(problem, bands_->bodies(), readings, probes_, results_.input.circuits);
+    if (results_.input.run_length_m) {
+      add_notices(verify::end_effect(problem, results_.figures, *results_.input.run_length_m));
     }
-    return sum;
-  };
-  double whole = 0.0;
-  for (const auto& line : outermost) whole += length(line);
-  std::vector<mesh::Point> points;
-  for (const auto& line : outermost) {
-    const auto share = static_cast<int>(std::lround(count * length(line) / whole));
-    for (mesh::Point p : spread_along(line, std::max(2, share))) points.push_back(p);
+    const solver::FaultCurrent* fault = nullptr;
+    if (results_.input.fault) {
+      watch_.begin("fault");
+      fault = &results_.input.fault->current;
+      add_fault(*fault);
+    }
+    verify::add_hand_values(results_.figures, problem, fault);
+    watch_.end();
+    return std::move(results_);
   }
-  return points;
-}
 
-/// The case's problem, all but its grid.
-std::shared_ptr<solver::Problem> problem_without_grid(const Case& input) {
-  auto problem = std::make_shared<solver::Problem>();
-  problem->section = input.section;
-  problem->outline = outline_of(input.section);
-  problem->materials = input.materials;
-  problem->excitation = input.excitation;
-  problem->loops = input.loops;
-  return problem;
-}
+private:
+  using Problem = solver::Problem;
 
-/// Gives a problem its grid, fine out to every probe, and with saturable steel the coarser one on
-/// which the solve begins.
-void set_grids(solver::Problem& problem, const Case& input,
-               const std::vector<solver::Probe>& probes) {
-  if (saturable(problem) && input.excitation.alternating()) {
-    throw InputError(
-        fmt::format("{}: saturable steel is solved for steady currents only; leave out "
-                    "frequency_hz, or give relative_permeability in place of the B-H table",
-                    input.grid_place));
+  /// Steady currents, or alternating ones whose fields can be added.
+  solver::Readings at_once() {
+    watch_.begin("solve");
+    results_.solution = std::make_shared<solver::Solution>(solve(results_.problem));
+    watch_.begin("figures");
+    results_.field = std::make_shared<solver::RecoveredField>(*results_.solution);
+    const solver::PartIntegrals integrals(*results_.solution);
+    auto readings = readings_of(integrals, *results_.field, *bands_, probes_);
+    watch_.begin("checks");
+    results_.checks = verify::run_checks(integrals, *results_.field, *bands_);
+    return readings;
   }
-  if (saturable(problem) && input.fault) {
-    throw InputError(
-        fmt::format("{}: with saturable steel a [fault] is not solved; give relative_permeability "
-                    "in place of the B-H table",
-                    input.grid_place));
+
+  /// Alternating currents in saturable steel.
+  solver::Readings instant_by_instant() {
+    watch_.begin("solve");
+    const Problem& problem = *results_.problem;
+    results_.instants = solve_instants(problem, solver::half_cycle_of(problem.excitation));
+    const solver::Instants& instants = *results_.instants;
+    const auto fundamental =
+        std::make_shared<solver::Solution>(fundamental_of(results_.problem, instants));
+    results_.solution = fundamental;
+    watch_.begin("figures and checks");
+    std::vector<solver::Readings> readings;
+    verify::CycleChecks checks;
+    solver::CycleRecovery recovery(static_cast<int>(instants.size()));
+    for (std::size_t k = 0; k < instants.size(); ++k) {
+      const solver::RecoveredField field(*instants.solution[k]);
+      const solver::PartIntegrals integrals(*instants.solution[k]);
+      readings.push_back(readings_at_instant(integrals, field, *bands_, probes_));
+      checks.add(instants.wt[k], integrals, field, *bands_);
+      recovery.add(field);
+    }
+    results_.field = std::make_shared<solver::RecoveredField>(recovery.over_cycle(*fundamental));
+    results_.checks = checks.checks(problem, bands_->bodies());
+    auto cycle = over_half_cycle(std::span<const solver::Readings>(readings));
+    cycle.levels = field_levels(instants);
+    cycle.loops = loop_inductances(solver::PartIntegrals(*fundamental));
+    cycle.loops_at = instants.wt[instants.strongest];
+    return cycle;
   }
-  mesh::GridOptions options;
-  options.cells_across = input.grid.cells_across;
-  options.reach = input.grid.reach;
-  if (has_net_current(input.excitation)) options.wide = net_current_zone;
-  options.max_nodes = nodes_that_fit();
-  for (const solver::Probe& probe : probes) {
-    for (mesh::Point point : probe.points) options.fine.include(point);
+
+  void add_fault(const solver::FaultCurrent& fault) {
+    const Problem& problem = *results_.problem;
+    results_.fault = solve_fault(problem, fault, *bands_);
+    std::optional<solver::Supports> supports;
+    if (const auto& given = results_.input.supports) supports = {given->span, given->strength};
+    results_.figures.fault =
+        fault_figures(fault, problem, bands_->bodies(), *results_.fault, supports);
+    const auto& levels = results_.fault->levels;
+    add_notices(saturation_notices(problem, levels, "in the fault"));
+    add_notices(table_notices(problem, levels, "in the fault"));
   }
-  try {
-    problem.grid =
-        std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem.outline, options));
-  } catch (const mesh::GridError& error) {
-    throw InputError(fmt::format("{}: {}", input.grid_place, error.what()));
+
+  void add_notices(const std::vector<solver::Notice>& notices) {
+    auto& all = results_.figures.notices;
+    all.insert(all.end(), notices.begin(), notices.end());
   }
-  if (!saturable(problem)) return;
-  try {
-    options.cells_across = std::max(1, options.cells_across / 2);
-    problem.coarse_grid =
-        std::make_shared<mesh::FittedGrid>(make_grid(input.section, problem.outline, options));
-  } catch (const mesh::GridError&) {  // then the solve begins from zero
-  }
-}
+
+  Results results_;
+  Stopwatch watch_;
+  std::vector<solver::Probe> probes_;
+  std::optional<solver::StressBands> bands_;
+};
 
 }  // namespace
 
-std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& outline) {
-  std::vector<solver::Probe> probes;
-  for (const ProbeRequest& request : input.probes) {
-    solver::Probe probe{request.name,
-                        {},
-                        request.kind != ProbeRequest::Kind::point,
-                        request.limit_t,
-                        request.limit_from};
-    switch (request.kind) {
-      case ProbeRequest::Kind::point:
-        probe.points = {request.at};
-        break;
-      case ProbeRequest::Kind::line:
-        for (int k = 0; k < request.points; ++k) {
-          const double t = static_cast<double>(k) / (request.points - 1);
-          probe.points.push_back(between(request.from, request.to, t));
-        }
-        break;
-      case ProbeRequest::Kind::around:
-        probe.points = points_around(outline, request.clearance, request.points);
-        break;
-    }
-    probes.push_back(std::move(probe));
-  }
-  return probes;
-}
-
-std::shared_ptr<const solver::Problem> problem_of(const Case& input) {
-  auto problem = problem_without_grid(input);
-  set_grids(*problem, input, probes_of(input, problem->outline));
-  return problem;
-}
-
 Results run_case(Case input, const std::function<void(const std::string&)>& on_stage) {
-  Results results;
-  results.input = std::move(input);
-  Stopwatch watch(results.stages, on_stage);
-  watch.begin("grid");
-  auto problem = problem_without_grid(results.input);
-  const auto probes = probes_of(results.input, problem->outline);
-  set_grids(*problem, results.input, probes);
-  results.problem = problem;
-  watch.begin("solve");
-  auto solution = std::make_shared<solver::Solution>(solve(results.problem));
-  results.solution = solution;
-  watch.begin("figures");
-  results.field = std::make_shared<solver::RecoveredField>(*solution);
-  const solver::PartIntegrals integrals(*solution);
-  const solver::StressBands bands(*results.problem, bodies(results.problem->outline));
-  results.figures = figures_of(integrals, *results.field, bands, probes, results.input.circuits);
-  watch.begin("checks");
-  results.checks = verify::run_checks(integrals, *results.field, bands);
-  if (results.input.run_length_m) {
-    const auto notices =
-        verify::end_effect(*results.problem, results.figures, *results.input.run_length_m);
-    auto& all = results.figures.notices;
-    all.insert(all.end(), notices.begin(), notices.end());
-  }
-  const solver::FaultCurrent* fault = nullptr;
-  if (results.input.fault) {
-    watch.begin("fault");
-    fault = &results.input.fault->current;
-    const auto sustained = solve(solver::fault_problem(*results.problem, *fault));
-    std::optional<solver::Supports> supports;
-    if (const auto& given = results.input.supports) supports = {given->span, given->strength};
-    results.figures.fault =
-        fault_figures(*fault, solver::PartIntegrals(sustained), bands, supports);
-    for (auto& notice : saturation_notices(*results.problem, field_levels(sustained),
-                                           largest_scale(*fault).scale, "in the fault")) {
-      results.figures.notices.push_back(std::move(notice));
-    }
-  }
-  verify::add_hand_values(results.figures, *results.problem, fault);
-  watch.end();
-  return results;
+  return Run(std::move(input), on_stage).complete();
 }
 
 }  // namespace barwall::io

@@ -5,6 +5,7 @@
 
 #include <cmath>
 #include <nlohmann/json.hpp>
+#include <numbers>
 
 #include "io/version.hpp"
 
@@ -15,6 +16,28 @@ using Json = nlohmann::ordered_json;
 
 Json milliseconds(double seconds) {
   return std::round(1e3 * seconds) / 1e3;
+}
+
+/// The histories of nonlinear solves, coarse grid to fine.
+Json newton_json(const std::vector<solver::NewtonReport>& reports) {
+  Json json = Json::array();
+  for (const solver::NewtonReport& newton : reports) {
+    json.push_back({{"nodes", newton.nodes},
+                    {"converged", newton.converged},
+                    {"iterations", newton.iterations},
+                    {"residuals", newton.residuals},
+                    {"steps", newton.steps}});
+  }
+  return json;
+}
+
+Json instants_json(const solver::Instants& instants) {
+  Json json = {{"count", instants.size()}, {"surprise", instants.surprise}};
+  for (std::size_t k = 0; k < instants.size(); ++k) {
+    json["at"].push_back({{"wt_deg", instants.wt[k] * 180.0 / std::numbers::pi},
+                          {"newton", newton_json(instants.solution[k]->newton)}});
+  }
+  return json;
 }
 
 }  // namespace
@@ -58,13 +81,8 @@ std::string run_json(const Results& results, const std::filesystem::path& folder
       {"seconds", milliseconds(solution.linear_seconds)},
       {"iterations", solution.report.iterations},
       {"residuals", solution.report.residuals}};
-  for (const solver::NewtonReport& newton : solution.newton) {
-    json["newton"].push_back({{"nodes", newton.nodes},
-                              {"converged", newton.converged},
-                              {"iterations", newton.iterations},
-                              {"residuals", newton.residuals},
-                              {"steps", newton.steps}});
-  }
+  if (!solution.newton.empty()) json["newton"] = newton_json(solution.newton);
+  if (results.instants) json["instants"] = instants_json(*results.instants);
   json["threads"] = omp_get_max_threads();
   json["peak_memory_bytes"] = static_cast<std::int64_t>(peak_memory());
   return json.dump(1, ' ', false, Json::error_handler_t::replace) + "\n";

@@ -110,20 +110,14 @@ std::string quantity_name(const std::string& quantity, const std::string& unit, 
   return quantity + (pattern == 0 ? "_in_phase_" : "_quadrature_") + unit;
 }
 
-void add_flux_density(vtkFieldData* to, const std::vector<std::vector<mesh::Point>>& b) {
-  const bool alternating = b.size() > 1;
-  for (std::size_t k = 0; k < b.size(); ++k) {
-    add_vectors(to, quantity_name("B", "T", static_cast<int>(k), alternating), b[k]);
+void add_flux_density(vtkFieldData* to, const FluxDensityArrays& arrays) {
+  const bool alternating = arrays.b.size() > 1;
+  for (std::size_t k = 0; k < arrays.b.size(); ++k) {
+    add_vectors(to, quantity_name("B", "T", static_cast<int>(k), alternating), arrays.b[k]);
   }
   if (!alternating) return;
-  std::vector<double> rms;
-  std::vector<double> peak;
-  for (std::size_t k = 0; k < b[0].size(); ++k) {
-    rms.push_back(std::hypot(norm(b[0][k]), norm(b[1][k])));
-    peak.push_back(solver::peak_magnitude(b[0][k], b[1][k]));
-  }
-  add_scalars(to, "B_rms_T", rms);
-  add_scalars(to, "B_peak_T", peak);
+  add_scalars(to, "B_rms_T", arrays.rms);
+  add_scalars(to, "B_peak_T", arrays.peak);
 }
 
 std::vector<std::string> part_names(const Results& results) {

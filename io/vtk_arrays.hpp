@@ -28,9 +28,15 @@ void add_texts(vtkFieldData* to, const std::string& name, const std::vector<std:
 std::string quantity_name(const std::string& quantity, const std::string& unit, int pattern,
                           bool alternating);
 
-/// B of every load pattern [T], and with a frequency B_rms_T and B_peak_T.
-/// \param b per pattern, per point
-void add_flux_density(vtkFieldData* to, const std::vector<std::vector<mesh::Point>>& b);
+/// B at points [T].
+struct FluxDensityArrays {
+  std::vector<std::vector<mesh::Point>> b;  ///< per load pattern, per point
+  std::vector<double> rms;                  ///< per point; with a frequency
+  std::vector<double> peak;
+};
+
+/// B of every load pattern, and with a frequency B_rms_T and B_peak_T.
+void add_flux_density(vtkFieldData* to, const FluxDensityArrays& arrays);
 
 /// Names of the parts by the number that stands for them in `part` arrays: air, then file order.
 std::vector<std::string> part_names(const Results& results);

@@ -74,35 +74,38 @@ Places add_mesh(vtkUnstructuredGrid* data, const Results& results, const std::ve
   return used;
 }
 
-/// B as recovered, H = nu B in the place's own occupant, and A.
-void add_point_data(vtkUnstructuredGrid* data, const Results& results, const Places& used) {
-  const solver::Solution& solution = *results.solution;
-  const solver::RecoveredField& field = *results.field;
-  std::vector<std::vector<Point>> b(static_cast<std::size_t>(solution.pattern_count()));
-  std::vector<std::vector<Point>> h(b.size());
-  std::vector<std::vector<double>> a(b.size());
-  for (std::size_t pattern = 0; pattern < b.size(); ++pattern) {
+/// B and H as recovered in the place's own occupant, and A.
+void add_point_data(vtkUnstructuredGrid* data, const solver::Solution& solution,
+                    const solver::RecoveredField& field, const Places& used) {
+  FluxDensityArrays arrays;
+  arrays.b.resize(static_cast<std::size_t>(solution.pattern_count()));
+  std::vector<std::vector<Point>> h(arrays.b.size());
+  std::vector<std::vector<double>> a(arrays.b.size());
+  for (std::size_t pattern = 0; pattern < arrays.b.size(); ++pattern) {
     const int column = static_cast<int>(pattern);
-    for (std::size_t k = 0; k < used.place.size(); ++k) {
-      const int place = used.place[k];
-      b[pattern].push_back(field.flux_density(place, column));
-      h[pattern].push_back(
-          field_strength(*solution.problem, field.region_of_place(place), b[pattern].back()));
+    for (const int place : used.place) {
+      arrays.b[pattern].push_back(field.flux_density(place, column));
+      h[pattern].push_back(field.field_strength(place, column));
       a[pattern].push_back(solution.potential(field.node_of_place(place), column));
     }
   }
+  for (const int place : used.place) {
+    arrays.rms.push_back(field.rms(place));
+    arrays.peak.push_back(field.peak(place));
+  }
+  const bool alternating = solution.problem->excitation.alternating();
   vtkFieldData* to = data->GetPointData();
-  add_flux_density(to, b);
+  add_flux_density(to, arrays);
   for (int k = 0; k < solution.pattern_count(); ++k) {
     const auto pattern = static_cast<std::size_t>(k);
-    add_vectors(to, quantity_name("H", "A_per_m", k, results.alternating()), h[pattern]);
-    add_scalars(to, quantity_name("A", "Wb_per_m", k, results.alternating()), a[pattern]);
+    add_vectors(to, quantity_name("H", "A_per_m", k, alternating), h[pattern]);
+    add_scalars(to, quantity_name("A", "Wb_per_m", k, alternating), a[pattern]);
   }
 }
 
-void add_cell_data(vtkUnstructuredGrid* data, const Results& results,
+void add_cell_data(vtkUnstructuredGrid* data, const solver::Solution& solution,
                    const std::vector<int>& chosen) {
-  const solver::Solution& solution = *results.solution;
+  const bool alternating = solution.problem->excitation.alternating();
   const mesh::FittedGrid& grid = solution.grid();
   vtkFieldData* to = data->GetCellData();
   std::vector<std::int32_t> part;
@@ -115,15 +118,15 @@ void add_cell_data(vtkUnstructuredGrid* data, const Results& results,
   add_scalars(to, "mu_r", permeability);
   for (int k = 0; k < solution.pattern_count(); ++k) {
     const auto density = density_by_region(
-        *results.problem, solution.patterns[static_cast<std::size_t>(k)].part_current);
+        *solution.problem, solution.patterns[static_cast<std::size_t>(k)].part_current);
     std::vector<double> j;
     std::vector<Point> b;
     for (const int t : chosen) {
       j.push_back(density[static_cast<std::size_t>(grid.region[static_cast<std::size_t>(t)])]);
       b.push_back(solver::cell_flux_density(grid, t, solution.potential.col(k)));
     }
-    add_scalars(to, quantity_name("J", "A_per_m2", k, results.alternating()), j);
-    add_vectors(to, quantity_name("B_cell", "T", k, results.alternating()), b);
+    add_scalars(to, quantity_name("J", "A_per_m2", k, alternating), j);
+    add_vectors(to, quantity_name("B_cell", "T", k, alternating), b);
   }
 }
 
@@ -136,8 +139,8 @@ void write_field(const Results& results, const std::filesystem::path& folder) {
     const std::vector<int> chosen = triangles(grid, window, near);
     vtkNew<vtkUnstructuredGrid> data;
     const Places used = add_mesh(data, results, chosen);
-    add_point_data(data, results, used);
-    add_cell_data(data, results, chosen);
+    add_point_data(data, *results.solution, *results.field, used);
+    add_cell_data(data, *results.solution, chosen);
     add_labels(data, results);
     write(data, folder / (near ? "field.vtu" : "field_far.vtu"));
   }

@@ -153,7 +153,8 @@ void write_probes(const Results& results, const std::filesystem::path& folder) {
   std::vector<std::string> of_point;
   std::vector<std::string> of_vertex;
   std::vector<std::string> of_line;
-  std::vector<std::vector<Point>> b(alternating ? 2 : 1);
+  FluxDensityArrays arrays;
+  arrays.b.resize(alternating ? 2 : 1);
   for (const solver::ProbeFigures& probe : results.figures.probes) {
     const vtkIdType first = points->GetNumberOfPoints();
     std::vector<Point> place;
@@ -161,11 +162,13 @@ void write_probes(const Results& results, const std::filesystem::path& folder) {
       points->InsertNextPoint(point.at.x, point.at.y, 0.0);
       place.push_back(point.at);
       of_point.push_back(probe.probe.name);
-      for (std::size_t k = 0; k < b.size(); ++k) {
+      for (std::size_t k = 0; k < arrays.b.size(); ++k) {
         const std::string suffix = !alternating ? "" : k == 0 ? "_in_phase" : "_quadrature";
-        b[k].push_back(
+        arrays.b[k].push_back(
             {value_of(point.figures, "b_x" + suffix), value_of(point.figures, "b_y" + suffix)});
       }
+      arrays.rms.push_back(value_of(point.figures, "b_rms"));
+      arrays.peak.push_back(value_of(point.figures, "b_peak"));
     }
     std::size_t from = 0;
     for (const std::size_t end : stretch_ends(place)) {
@@ -181,7 +184,7 @@ void write_probes(const Results& results, const std::filesystem::path& folder) {
   data->SetVerts(vertices);
   data->SetLines(lines);
   add_texts(data->GetPointData(), "probe", of_point);
-  add_flux_density(data->GetPointData(), b);
+  add_flux_density(data->GetPointData(), arrays);
   // Cells run: all vertices, then all lines.
   of_vertex.insert(of_vertex.end(), of_line.begin(), of_line.end());
   add_texts(data->GetCellData(), "probe", of_vertex);

@@ -1,6 +1,7 @@
 #include "solver/fault_extremes.hpp"
 
 #include <algorithm>
+#include <boost/math/interpolators/cardinal_cubic_b_spline.hpp>
 #include <cassert>
 #include <cmath>
 #include <numbers>
@@ -16,20 +17,10 @@ constexpr int steps_per_cycle = 360;
 /// Below this share of the largest a force is nothing but rounding, and so is its pulsation.
 constexpr double rounding = 1e-12;
 
-Pulsation minus(const Pulsation& p) {
-  return {-p.mean, -p.cosine, -p.sine};
-}
-
 /// Largest magnitude that a vector's components can have together.
 double size_of(const PulsatingVector& vector) {
-  const auto bound = [](const Pulsation& p) {
-    return std::abs(p.mean) + std::hypot(p.cosine, p.sine);
-  };
+  const auto bound = [](const Pulsation& p) { return std::abs(p.mean) + p.swing(); };
   return std::hypot(bound(vector.x), bound(vector.y));
-}
-
-double swing_of(const Pulsation& p) {
-  return std::hypot(p.cosine, p.sine);
 }
 
 FaultExtreme turned_over(FaultExtreme extreme) {
@@ -40,34 +31,8 @@ FaultExtreme turned_over(FaultExtreme extreme) {
 /// The five extremes from two searches: of a component's largest value and of the magnitude's.
 template <class OfComponent, class OfMagnitude>
 FaultExtremes collected(const PulsatingVector& sustained, OfComponent largest, OfMagnitude peak) {
-  return {largest(sustained.x), turned_over(largest(minus(sustained.x))), largest(sustained.y),
-          turned_over(largest(minus(sustained.y))), peak()};
-}
-
-/// Every angle can be had at every instant: a direct current, or the worst closing angle.
-FaultExtremes at_largest_scale(const FaultCurrent& fault, const PulsatingVector& sustained) {
-  const auto* alternating = std::get_if<AlternatingFault>(&fault.course);
-  const LargestScale largest = largest_scale(fault);
-  const double square = largest.scale * largest.scale;
-  const double size = size_of(sustained);
-  const auto closing = [&](double swing, double angle) -> std::optional<double> {
-    if (alternating == nullptr || swing <= rounding * size) return {};
-    return closing_for(*alternating, largest.wt, angle);
-  };
-  const auto component = [&](const Pulsation& p) -> FaultExtreme {
-    if (p.largest() <= rounding * size) return {0.0, 0.0, {}};
-    return {square * p.largest(), largest.seconds,
-            closing(swing_of(p), 0.5 * std::atan2(p.sine, p.cosine))};
-  };
-  const auto peak = [&]() -> FaultPeak {
-    if (size == 0.0) return {0.0, {}, 0.0, {}};
-    const LargestValue worst = largest_value(
-        [&](double angle) { return norm(sustained.at(angle)); }, 0.0, pi, steps_per_cycle / 2);
-    const mesh::Point value = square * sustained.at(worst.at);
-    return {norm(value), value, largest.seconds,
-            closing(std::hypot(swing_of(sustained.x), swing_of(sustained.y)), worst.at)};
-  };
-  return collected(sustained, component, peak);
+  return {largest(sustained.x), turned_over(largest(sum_of({}, sustained.x, -1.0))),
+          largest(sustained.y), turned_over(largest(sum_of({}, sustained.y, -1.0))), peak()};
 }
 
 /// A closing angle is given: time is searched.
@@ -120,7 +85,78 @@ FaultExtremes over_time(const AlternatingFault& fault, const PulsatingVector& su
   return collected(sustained, component, peak);
 }
 
+PulsatingVector scaled(const PulsatingVector& force, double factor) {
+  return sum_of({}, force, factor);
+}
+
 }  // namespace
+
+FaultExtremes extremes_at_largest_scale(const FaultCurrent& fault,
+                                        const PulsatingVector& at_largest) {
+  const auto* alternating = std::get_if<AlternatingFault>(&fault.course);
+  const LargestScale largest = largest_scale(fault);
+  const double size = size_of(at_largest);
+  const auto closing = [&](double swing, double angle) -> std::optional<double> {
+    if (alternating == nullptr || swing <= rounding * size) return {};
+    return closing_for(*alternating, largest.wt, angle);
+  };
+  const auto component = [&](const Pulsation& p) -> FaultExtreme {
+    const Pulsation::Crest crest = p.largest_at();
+    if (crest.value <= rounding * size) return {0.0, 0.0, {}};
+    return {crest.value, largest.seconds, closing(p.swing(), crest.wt)};
+  };
+  const auto peak = [&]() -> FaultPeak {
+    if (size == 0.0) return {0.0, {}, 0.0, {}};
+    const solver::Peak worst = peak_of(at_largest);
+    return {worst.magnitude, worst.value, largest.seconds,
+            closing(std::hypot(at_largest.x.swing(), at_largest.y.swing()), worst.wt)};
+  };
+  return collected(at_largest, component, peak);
+}
+
+FaultExtremes extremes_over_first_cycle(const AlternatingFault& fault,
+                                        const std::vector<mesh::Point>& first_cycle,
+                                        const PulsatingVector& sustained) {
+  const int intervals = static_cast<int>(first_cycle.size()) - 1;
+  const double step = 2.0 * pi / intervals;
+  std::vector<double> x;
+  std::vector<double> y;
+  double size = size_of(sustained);
+  for (const mesh::Point force : first_cycle) {
+    x.push_back(force.x);
+    y.push_back(force.y);
+    size = std::max(size, norm(force));
+  }
+  // Without current there is no force, and none that changes.
+  using Spline = boost::math::interpolators::cardinal_cubic_b_spline<double>;
+  const Spline along_x(x.begin(), x.end(), 0.0, step, 0.0);
+  const Spline along_y(y.begin(), y.end(), 0.0, step, 0.0);
+  const int steps = 8 * intervals;
+  const auto seconds = [&](double wt) { return wt / (2.0 * pi * fault.frequency_hz); };
+  const bool approached = fault.r_over_x > 0.0;
+  const auto component = [&](const Spline& spline, double sign,
+                             const Pulsation& later) -> FaultExtreme {
+    const LargestValue found =
+        largest_value([&](double wt) { return sign * spline(wt); }, 0.0, 2.0 * pi, steps);
+    const double approach = later.largest();
+    if (approached && approach > found.value + rounding * size) {
+      return {sign * approach, {}, fault.closing};
+    }
+    if (found.value <= rounding * size) return {0.0, 0.0, fault.closing};
+    return {sign * found.value, seconds(found.at), fault.closing};
+  };
+  const auto force = [&](double wt) { return mesh::Point{along_x(wt), along_y(wt)}; };
+  const LargestValue found =
+      largest_value([&](double wt) { return norm(force(wt)); }, 0.0, 2.0 * pi, steps);
+  FaultPeak peak{found.value, force(found.at), seconds(found.at), fault.closing};
+  const solver::Peak later = peak_of(sustained);
+  if (approached && later.magnitude > found.value + rounding * size) {
+    peak = {later.magnitude, later.value, {}, fault.closing};
+  }
+  return {component(along_x, 1.0, sustained.x), component(along_x, -1.0, scaled(sustained, -1.0).x),
+          component(along_y, 1.0, sustained.y), component(along_y, -1.0, scaled(sustained, -1.0).y),
+          peak};
+}
 
 PulsatingVector sustained_force(const FaultCurrent& fault, const QuadraticForce& force) {
   const auto currents = sustained_currents(fault);
@@ -144,7 +180,8 @@ FaultExtremes extremes_of(const FaultCurrent& fault, const PulsatingVector& sust
   if (const auto* alternating = std::get_if<AlternatingFault>(&fault.course)) {
     if (alternating->closing) return over_time(*alternating, sustained);
   }
-  return at_largest_scale(fault, sustained);
+  const double scale = largest_scale(fault).scale;
+  return extremes_at_largest_scale(fault, scaled(sustained, scale * scale));
 }
 
 FaultExtremes extremes_of(const FaultCurrent& fault, const QuadraticForce& force) {

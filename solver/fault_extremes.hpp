@@ -9,13 +9,16 @@
 
 namespace barwall::solver {
 
-// The largest forces of a fault where they are quadratic in its currents, which they are while
-// no permeability depends on the field.
+// The largest forces of a fault.
 //
-// Then the force at an instant is scale^2 times that of the sustained currents at the same angle
+// Where they are quadratic in its currents, as they are while no permeability depends on the field,
+// the force at an instant is scale^2 times that of the sustained currents at the same angle
 // (fault_current.hpp). With the worst closing angle every angle can be had at every instant, so
 // that the extremes are those of the sustained currents times the square of the largest scale:
 // exact, without a search in time. With a given closing angle, time is searched.
+//
+// With saturable steel the force at the largest scale is found for every angle, and over the first
+// cycle for a given closing; forces are taken to be largest where the currents are.
 
 /// A force in the currents of the bars named: F = sum over j, k of i_j i_k f_jk, per metre of run.
 /// Symmetric, one row and column per bar named [N/m per A^2].
@@ -55,6 +58,18 @@ struct FaultExtremes {
 /// hundredth, at most 150; and, where it has, the sustained currents that are approached. Without
 /// resistance the first cycle repeats.
 FaultExtremes extremes_of(const FaultCurrent& fault, const PulsatingVector& sustained);
+
+/// Where every angle can be had at every instant: a direct current, or the worst closing angle.
+/// \param at_largest the force over the angle, the currents at their largest scale
+FaultExtremes extremes_at_largest_scale(const FaultCurrent& fault,
+                                        const PulsatingVector& at_largest);
+
+/// For a given closing angle.
+/// \param first_cycle the force at wt = k 2 pi / n, k = 0 to n, since closing
+/// \param sustained the force of the sustained currents, which are approached
+FaultExtremes extremes_over_first_cycle(const AlternatingFault& fault,
+                                        const std::vector<mesh::Point>& first_cycle,
+                                        const PulsatingVector& sustained);
 FaultExtremes extremes_of(const FaultCurrent& fault, const QuadraticForce& force);
 
 }  // namespace barwall::solver

@@ -3,8 +3,6 @@
 #include <cmath>
 #include <numbers>
 
-#include "solver/fault_extremes.hpp"
-
 namespace barwall::solver {
 namespace {
 
@@ -42,27 +40,26 @@ std::vector<Figure> circuit_figures(const FaultCurrent& fault) {
 
 }  // namespace
 
-std::shared_ptr<const Problem> fault_problem(const Problem& problem, const FaultCurrent& fault) {
-  auto result = std::make_shared<Problem>(problem);
-  result->excitation = sustained_excitation(fault, problem.section.parts.size());
-  result->loops.clear();
-  return result;
-}
-
-FaultFigures fault_figures(const FaultCurrent& fault, const PartIntegrals& integrals,
-                           const StressBands& bands, const std::optional<Supports>& supports) {
-  const Solution& solution = integrals.solution();
-  const Problem& problem = *solution.problem;
-  const auto figures_of = [&](const std::optional<PulsatingVector>& sustained) {
-    return sustained ? extreme_figures(extremes_of(fault, *sustained))
-                     : without_values(extreme_figures({}));
+FaultFigures fault_figures(const FaultCurrent& fault, const Problem& problem,
+                           const std::vector<std::vector<int>>& bodies,
+                           const FaultSolution& solution, const std::optional<Supports>& supports) {
+  const PartForces<FaultExtremes>& forces = solution.extremes;
+  const auto figures_of = [&](const std::optional<FaultExtremes>& extremes) {
+    return extremes ? extreme_figures(*extremes) : without_values(extreme_figures({}));
   };
   FaultFigures result;
   result.circuit = circuit_figures(fault);
   for (int part : visible_parts(problem.outline)) {
-    const mesh::Part& p = problem.section.parts[static_cast<std::size_t>(part)];
-    Entry entry{p.name, {}, figures_of(force_on_part(integrals, bands, part)), {}, 0.0};
+    const auto index = static_cast<std::size_t>(part);
+    const mesh::Part& p = problem.section.parts[index];
+    Entry entry{p.name, {}, figures_of(forces.part[index]), {}, 0.0};
     if (p.kind == mesh::Part::Kind::wall) {
+      const FieldLevel& level = solution.levels[index];
+      entry.figures.push_back({"b_mean", level.mean, "T"});
+      entry.figures.push_back({"b_high", level.high, "T"});
+      if (problem.materials[index].saturable()) {
+        entry.figures.push_back({"saturated_share", level.saturated_share, "1"});
+      }
       result.walls.push_back(std::move(entry));
       continue;
     }
@@ -73,24 +70,23 @@ FaultFigures fault_figures(const FaultCurrent& fault, const PartIntegrals& integ
         entry.figures.push_back({"support_share", force / *supports->strength, "1"});
       }
     }
-    const bool magnetic = problem.materials[static_cast<std::size_t>(part)].magnetic();
     for (std::size_t k = 0; p.pieces.size() > 1 && k < p.pieces.size(); ++k) {
-      std::optional<PulsatingVector> force;
-      if (!magnetic) force = lorentz_force(integrals, part, static_cast<int>(k));
+      std::optional<FaultExtremes> extremes;
+      if (!forces.piece[index].empty()) extremes = forces.piece[index][k];
       entry.pieces.push_back(
-          {p.name + "." + std::to_string(k + 1), {}, figures_of(force), {}, 0.0});
+          {p.name + "." + std::to_string(k + 1), {}, figures_of(extremes), {}, 0.0});
     }
     result.bars.push_back(std::move(entry));
   }
-  for (std::size_t b = 0; b < bands.bodies().size(); ++b) {
-    const auto& members = bands.bodies()[b];
+  auto extremes = forces.body.begin();
+  for (const auto& members : bodies) {
     if (members.size() < 2) continue;
     Entry entry;
     for (int part : members) {
       entry.parts.push_back(problem.section.parts[static_cast<std::size_t>(part)].name);
     }
     entry.name = joined(entry.parts);
-    entry.figures = figures_of(bands.force(solution, static_cast<int>(b), whole_band));
+    entry.figures = figures_of(*extremes++);
     result.bodies.push_back(std::move(entry));
   }
   return result;

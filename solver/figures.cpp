@@ -7,8 +7,7 @@
 #include <map>
 #include <numbers>
 
-#include "solver/energy.hpp"
-#include "solver/flux_linkage.hpp"
+#include "solver/saturation_notices.hpp"
 
 namespace barwall::solver {
 namespace {
@@ -25,16 +24,13 @@ void append(std::vector<T>& to, std::vector<T> more) {
 
 class Collector {
 public:
-  Collector(const PartIntegrals& integrals, const RecoveredField& field, const StressBands& bands)
-      : integrals_(integrals),
-        solution_(integrals.solution()),
-        problem_(*solution_.problem),
-        field_(field),
-        bands_(bands),
+  Collector(const Problem& problem, const std::vector<std::vector<int>>& bodies,
+            const Readings& readings)
+      : problem_(problem),
+        bodies_(bodies),
+        readings_(readings),
         alternating_(problem_.excitation.alternating()),
-        saturable_(saturable(problem_)),
-        visible_(visible_parts(problem_.outline)),
-        levels_(field_levels(solution_)) {}
+        visible_(visible_parts(problem_.outline)) {}
 
   void parts(Figures& figures) const {
     for (int part : visible_) {
@@ -52,28 +48,29 @@ public:
                "seldom do, which makes forces between them and field nearby indicative",
            true});
     }
-    for (int part : visible_) add_table_notice(figures, part);
-    append(figures.notices, saturation_notices(problem_, levels_, 1.0, "under load"));
-    for (std::size_t b = 0; b < bands_.bodies().size(); ++b) {
-      const auto& members = bands_.bodies()[b];
+    append(figures.notices, table_notices(problem_, readings_.levels, "under load"));
+    append(figures.notices, saturation_notices(problem_, readings_.levels, "under load"));
+    auto force = readings_.forces.body.begin();
+    for (const auto& members : bodies_) {
       if (members.size() < 2) continue;
       Entry entry;
       for (int part : members) entry.parts.push_back(name_of(part));
       entry.name = joined(entry.parts);
-      entry.figures =
-          force_figures(bands_.force(solution_, static_cast<int>(b), whole_band), alternating_);
+      entry.figures = force_figures(*force++, alternating_);
       figures.bodies.push_back(std::move(entry));
     }
   }
 
   void loops(Figures& figures) const {
-    for (const Loop& loop : problem_.loops) {
-      const double inductance = loop_inductance(integrals_, loop);
-      Entry entry{loop.name, {}, {{"inductance", inductance, "H/m"}}, {}, 0.0};
-      if (saturable_) {
-        entry.figures = {
-            {"inductance_secant", inductance, "H/m"},
-            {"inductance_differential", differential_inductance(integrals_, loop), "H/m"}};
+    for (std::size_t k = 0; k < problem_.loops.size(); ++k) {
+      const LoopInductance& inductance = readings_.loops[k];
+      Entry entry{problem_.loops[k].name, {}, {{"inductance", inductance.value, "H/m"}}, {}, 0.0};
+      if (inductance.differential) {
+        entry.figures = {{"inductance_secant", inductance.value, "H/m"},
+                         {"inductance_differential", *inductance.differential, "H/m"}};
+      }
+      if (readings_.loops_at) {
+        entry.figures.push_back({"inductance_at", *readings_.loops_at / degree, "deg"});
       }
       figures.loops.push_back(std::move(entry));
     }
@@ -94,23 +91,23 @@ public:
   }
 
   void energy(Figures& figures) const {
-    bool net = false;
-    for (const CurrentPattern& pattern : solution_.patterns) net = net || pattern.net != 0.0;
-    const Pulsation energy = field_energy(solution_);
-    if (saturable_) {
-      const SaturableEnergy both = saturable_energy(solution_);
-      figures.energy = {{"energy", both.energy, "J/m"}, {"coenergy", both.coenergy, "J/m"}};
-    } else if (!alternating_) {
-      figures.energy = {{"energy", energy.mean, "J/m"}};
-    } else {
-      figures.energy = {{"energy_mean", energy.mean, "J/m"},
-                        {"energy_peak", energy.largest(), "J/m"}};
-    }
-    if (net) figures.energy = without_values(figures.energy);
+    const auto add = [&](const std::string& name, const Pulsation& energy) {
+      if (!alternating_) {
+        figures.energy.push_back({name, energy.mean, "J/m"});
+      } else {
+        figures.energy.push_back({name + "_mean", energy.mean, "J/m"});
+        figures.energy.push_back({name + "_peak", energy.largest(), "J/m"});
+      }
+    };
+    add("energy", readings_.energy);
+    if (readings_.coenergy) add("coenergy", *readings_.coenergy);
+    if (has_net_current(problem_.excitation)) figures.energy = without_values(figures.energy);
   }
 
   void probes(Figures& figures, const std::vector<Probe>& probes) const {
-    for (const Probe& probe : probes) figures.probes.push_back(probe_figures(probe, figures));
+    for (std::size_t k = 0; k < probes.size(); ++k) {
+      figures.probes.push_back(probe_figures(probes[k], readings_.probes[k], figures));
+    }
   }
 
   void clearances(Figures& figures) const {
@@ -145,19 +142,8 @@ private:
   bool magnetic(int part) const {
     return problem_.materials[static_cast<std::size_t>(part)].magnetic();
   }
-  /// Says how much of a part lies beyond its material's B-H table.
-  void add_table_notice(Figures& figures, int part) const {
-    const double share = levels_[static_cast<std::size_t>(part)].share_beyond_table;
-    if (share == 0.0) return;
-    const BhCurve& curve = *problem_.materials[static_cast<std::size_t>(part)].curve;
-    const std::string text = fmt::format(
-        "\"{}\": {:.3g} % of its area lies above {:.4g} T, where its B-H table ends; there B is "
-        "taken to rise as in vacuum",
-        name_of(part), 100.0 * share, curve.table_end());
-    figures.notices.push_back({"beyond the B-H table", text, false});
-  }
   std::vector<Figure> part_force(int part) const {
-    const auto force = force_on_part(integrals_, bands_, part);
+    const auto& force = readings_.forces.part[static_cast<std::size_t>(part)];
     return force ? force_figures(*force, alternating_)
                  : without_values(force_figures({}, alternating_));
   }
@@ -165,32 +151,30 @@ private:
   double reactance(int bar) const {
     const std::complex<double> current = problem_.excitation.current[static_cast<std::size_t>(bar)];
     if (current == 0.0) return not_given;
-    const std::complex<double> linkage{integrals_.mean_potential(bar, 0),
-                                       integrals_.mean_potential(bar, 1)};
+    const std::complex<double> linkage = readings_.linkage[static_cast<std::size_t>(bar)];
     return 2.0 * std::numbers::pi * problem_.excitation.frequency_hz * (linkage / current).real();
   }
 
   Entry entry_of(int part) const {
     const mesh::Part& p = problem_.section.parts[static_cast<std::size_t>(part)];
     Entry entry{p.name, {}, part_force(part), {}, 0.0};
-    const FieldLevel& level = levels_[static_cast<std::size_t>(part)];
+    const FieldLevel& level = readings_.levels[static_cast<std::size_t>(part)];
     if (is_bar(part)) {
       entry.current = problem_.excitation.current[static_cast<std::size_t>(part)];
-      const double in_phase = integrals_.mean_potential(part, 0);
+      const std::complex<double> linkage = readings_.linkage[static_cast<std::size_t>(part)];
       if (alternating_) {
-        const double quadrature = integrals_.mean_potential(part, 1);
-        append<Figure>(entry.figures, {{"flux_linkage_in_phase", in_phase, "Wb/m"},
-                                       {"flux_linkage_quadrature", quadrature, "Wb/m"},
+        append<Figure>(entry.figures, {{"flux_linkage_in_phase", linkage.real(), "Wb/m"},
+                                       {"flux_linkage_quadrature", linkage.imag(), "Wb/m"},
                                        {"reactance", reactance(part), "ohm/m"}});
       } else {
-        append<Figure>(entry.figures, {{"flux_linkage", in_phase, "Wb/m"}});
+        append<Figure>(entry.figures, {{"flux_linkage", linkage.real(), "Wb/m"}});
       }
       append<Figure>(entry.figures, {{"b_high", level.high, "T"}});
       for (std::size_t k = 0; p.pieces.size() > 1 && k < p.pieces.size(); ++k) {
-        auto force =
-            magnetic(part)
-                ? without_values(force_figures({}, alternating_))
-                : force_figures(lorentz_force(integrals_, part, static_cast<int>(k)), alternating_);
+        auto force = magnetic(part)
+                         ? without_values(force_figures({}, alternating_))
+                         : force_figures(readings_.forces.piece[static_cast<std::size_t>(part)][k],
+                                         alternating_);
         entry.pieces.push_back(
             {p.name + "." + std::to_string(k + 1), {}, std::move(force), {}, 0.0});
       }
@@ -203,34 +187,32 @@ private:
     return entry;
   }
 
-  std::vector<Figure> field_figures(mesh::Point point) const {
-    const mesh::Location at = locate(solution_.grid(), problem_.section, point);
-    const mesh::Point b = field_.flux_density(at, point, 0);
-    if (!alternating_) return {{"b_x", b.x, "T"}, {"b_y", b.y, "T"}, {"b", norm(b), "T"}};
-    const mesh::Point q = field_.flux_density(at, point, 1);
-    return {{"b_x_in_phase", b.x, "T"},
-            {"b_x_quadrature", q.x, "T"},
-            {"b_y_in_phase", b.y, "T"},
-            {"b_y_quadrature", q.y, "T"},
-            {"b_rms", std::hypot(norm(b), norm(q)), "T"},
-            {"b_peak", peak_magnitude(b, q), "T"}};
+  std::vector<Figure> field_figures(const FieldReading& reading) const {
+    const mesh::Point b = reading.in_phase;
+    if (!alternating_) {
+      return {{"b_x", b.x, "T"}, {"b_y", b.y, "T"}, {"b", reading.peak, "T"}};
+    }
+    const mesh::Point q = reading.quadrature;
+    return {{"b_x_in_phase", b.x, "T"},  {"b_x_quadrature", q.x, "T"},
+            {"b_y_in_phase", b.y, "T"},  {"b_y_quadrature", q.y, "T"},
+            {"b_rms", reading.rms, "T"}, {"b_peak", reading.peak, "T"}};
   }
 
-  ProbeFigures probe_figures(const Probe& probe, Figures& figures) const {
+  ProbeFigures probe_figures(const Probe& probe, const std::vector<FieldReading>& readings,
+                             Figures& figures) const {
     ProbeFigures result{probe, {}, {}, {}, LimitState::none};
     const std::string key = alternating_ ? "b_rms" : "b";
     double largest = -1.0;
     double largest_peak = 0.0;
     int on_outline = 0;
-    for (mesh::Point point : probe.points) {
-      result.points.push_back({point, field_figures(point)});
-      const auto& found = result.points.back().figures;
-      const double b = find_figure(found, key)->value;
-      if (b > largest) {
-        largest = b;
+    for (std::size_t k = 0; k < probe.points.size(); ++k) {
+      const mesh::Point point = probe.points[k];
+      result.points.push_back({point, field_figures(readings[k])});
+      if (readings[k].rms > largest) {
+        largest = readings[k].rms;
         result.largest_at = point;
       }
-      if (alternating_) largest_peak = std::max(largest_peak, find_figure(found, "b_peak")->value);
+      largest_peak = std::max(largest_peak, readings[k].peak);
       on_outline += lies_on_outline(point) ? 1 : 0;
     }
     if (on_outline > 0) {
@@ -260,15 +242,11 @@ private:
                        });
   }
 
-  const PartIntegrals& integrals_;
-  const Solution& solution_;
   const Problem& problem_;
-  const RecoveredField& field_;
-  const StressBands& bands_;
+  const std::vector<std::vector<int>>& bodies_;
+  const Readings& readings_;
   bool alternating_;
-  bool saturable_;
   std::vector<int> visible_;
-  std::vector<FieldLevel> levels_;  ///< per part
 };
 
 }  // namespace
@@ -298,25 +276,6 @@ std::string joined(const std::vector<std::string>& names) {
   std::string result;
   for (const std::string& name : names) result += (result.empty() ? "" : "+") + name;
   return result;
-}
-
-std::vector<Notice> saturation_notices(const Problem& problem,
-                                       const std::vector<FieldLevel>& levels, double scale,
-                                       const std::string& when) {
-  std::vector<Notice> notices;
-  for (std::size_t k = 0; k < levels.size(); ++k) {
-    const Material& material = problem.materials[k];
-    const double high = scale * levels[k].high;
-    if (!material.magnetic() || material.saturable() || high <= steel_saturates_at) continue;
-    notices.push_back(
-        {"saturation",
-         fmt::format("\"{}\" {}: B above {:.3g} T on 1 % of its area at a constant permeability; "
-                     "steel saturates near {:.1f} T, which weakens its effect on forces and lets "
-                     "more field through: give it a B-H table, or a lower permeability",
-                     problem.section.parts[k].name, when, high, steel_saturates_at),
-         true});
-  }
-  return notices;
 }
 
 const Figure* find_figure(const std::vector<Figure>& figures, const std::string& key) {
@@ -383,10 +342,10 @@ LimitState limits_of(const Figures& figures) {
   return worst;
 }
 
-Figures figures_of(const PartIntegrals& integrals, const RecoveredField& field,
-                   const StressBands& bands, const std::vector<Probe>& probes,
+Figures figures_of(const Problem& problem, const std::vector<std::vector<int>>& bodies,
+                   const Readings& readings, const std::vector<Probe>& probes,
                    const std::vector<Circuit>& circuits) {
-  const Collector collector(integrals, field, bands);
+  const Collector collector(problem, bodies, readings);
   Figures figures;
   collector.parts(figures);
   collector.loops(figures);

@@ -7,10 +7,7 @@
 #include <string>
 #include <vector>
 
-#include "solver/flux_density.hpp"
-#include "solver/force.hpp"
-#include "solver/magnetostatics.hpp"
-#include "solver/wall_field.hpp"
+#include "solver/readings.hpp"
 
 namespace barwall::solver {
 
@@ -34,15 +31,6 @@ struct Entry {
   std::complex<double> current = 0.0;  ///< of a bar [A]; r.m.s. phasor with a frequency
   std::string hand_formula = {};       ///< name of the formula of its figures' hand values
   std::string hand_source = {};        ///< where that is published
-};
-
-/// A place where the field is wanted: one point, or the points of a line.
-struct Probe {
-  std::string name;
-  std::vector<mesh::Point> points;  ///< [m]
-  bool line = false;
-  std::optional<double> limit;  ///< on |B| [T]; r.m.s. with a frequency
-  std::string limit_from;
 };
 
 enum class LimitState { none, met, exceeded, undecided };
@@ -110,19 +98,13 @@ std::vector<Figure> without_values(std::vector<Figure> figures);
 /// Names joined by "+", as a body's and a circuit's.
 std::string joined(const std::vector<std::string>& names);
 
-/// Notices of parts of constant permeability that are driven beyond what steel follows.
-/// \param levels of every part (field_levels)
-/// \param scale what the levels are to be multiplied by
-/// \param when what drives them, such as "in the fault"
-std::vector<Notice> saturation_notices(const Problem& problem,
-                                       const std::vector<FieldLevel>& levels, double scale,
-                                       const std::string& when);
-
 /// The worst of the probes' limit states: exceeded, undecided, met, none.
 LimitState limits_of(const Figures& figures);
 
-Figures figures_of(const PartIntegrals& integrals, const RecoveredField& field,
-                   const StressBands& bands, const std::vector<Probe>& probes,
+/// The figures of a problem from what was read off its solution.
+/// \param bodies groups of parts in contact (mesh::bodies)
+Figures figures_of(const Problem& problem, const std::vector<std::vector<int>>& bodies,
+                   const Readings& readings, const std::vector<Probe>& probes,
                    const std::vector<Circuit>& circuits);
 
 }  // namespace barwall::solver

@@ -4,6 +4,7 @@
 #include <cmath>
 
 #include "solver/constants.hpp"
+#include "solver/cycle.hpp"
 
 namespace barwall::solver {
 namespace {
@@ -320,6 +321,37 @@ void RecoveredField::fit_place(int place, std::vector<int>& nodes,
     field_[static_cast<std::size_t>(c)][static_cast<std::size_t>(place)] = {
         {a.gradient.y, -a.gradient.x}, {a.xy, -a.xx}, {a.yy, -a.xy}};
   }
+}
+
+mesh::Point RecoveredField::field_strength(int place, int pattern) const {
+  if (!strength_.empty()) {
+    return strength_[static_cast<std::size_t>(pattern)][static_cast<std::size_t>(place)];
+  }
+  return solver::field_strength(*solution_->problem, region_of_place(place),
+                                flux_density(place, pattern));
+}
+
+double RecoveredField::rms(int place) const {
+  if (!rms_.empty()) return rms_[static_cast<std::size_t>(place)];
+  const double b = norm(flux_density(place, 0));
+  return field_.size() == 1 ? b : std::hypot(b, norm(flux_density(place, 1)));
+}
+
+double RecoveredField::peak(int place) const {
+  if (!peak_.empty()) return peak_[static_cast<std::size_t>(place)];
+  if (field_.size() == 1) return norm(flux_density(place, 0));
+  return peak_magnitude(flux_density(place, 0), flux_density(place, 1));
+}
+
+double RecoveredField::rms(const mesh::Location& at, mesh::Point point) const {
+  if (!rms_.empty()) {
+    const auto corner = places(at.triangle);
+    double sum = 0.0;
+    for (std::size_t k = 0; k < 3; ++k) sum += at.weight[k] * rms(corner[k]);
+    return sum;
+  }
+  const double b = norm(flux_density(at, point, 0));
+  return field_.size() == 1 ? b : std::hypot(b, norm(flux_density(at, point, 1)));
 }
 
 mesh::Point RecoveredField::flux_density(const mesh::Location& at, mesh::Point point,

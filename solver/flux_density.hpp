@@ -40,6 +40,17 @@ public:
     return field_[static_cast<std::size_t>(pattern)][static_cast<std::size_t>(place)].b;
   }
 
+  /// H [A/m] of one load pattern at a place, in the place's own occupant.
+  mesh::Point field_strength(int place, int pattern) const;
+
+  /// Root of the summed squares of the r.m.s. of B's components, and B's largest magnitude in the
+  /// cycle, at a place [T]. Of steady currents both are |B|.
+  double rms(int place) const;
+  double peak(int place) const;
+
+  /// The r.m.s. at a point of a triangle [T].
+  double rms(const mesh::Location& at, mesh::Point point) const;
+
   /// B [T] of one load pattern at a point of a triangle: from the three corners' values and
   /// slopes, exact where B is quadratic.
   mesh::Point flux_density(const mesh::Location& at, mesh::Point point, int pattern) const;
@@ -48,6 +59,7 @@ public:
   double potential(const mesh::Location& at, mesh::Point point, int pattern) const;
 
 private:
+  friend class CycleRecovery;
   struct Local {
     mesh::Point b;     ///< [T]
     mesh::Point b_dx;  ///< dB/dx [T/m]
@@ -65,6 +77,10 @@ private:
   std::vector<std::int32_t> first_region_;             ///< per node
   std::vector<std::pair<std::int64_t, int>> further_;  ///< (node * regions + region) -> place
   std::vector<std::vector<Local>> field_;              ///< per pattern, per place
+  // Of a cycle that holds more than its fundamental; else empty and made from field_.
+  std::vector<std::vector<mesh::Point>> strength_;  ///< per pattern, per place [A/m]
+  std::vector<double> rms_;                         ///< per place [T]
+  std::vector<double> peak_;                        ///< per place [T]
 };
 
 }  // namespace barwall::solver

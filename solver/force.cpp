@@ -232,20 +232,4 @@ PulsatingVector StressBands::force(const Solution& solution, int body, const Ban
                     [&](int f, int g) { return -sum[static_cast<std::size_t>(f == g ? f : 2)]; });
 }
 
-std::optional<PulsatingVector> force_on_part(const PartIntegrals& integrals,
-                                             const StressBands& bands, int part) {
-  const Solution& solution = integrals.solution();
-  const auto k = static_cast<std::size_t>(part);
-  if (solution.problem->section.parts[k].kind == mesh::Part::Kind::bar &&
-      !solution.problem->materials[k].magnetic()) {
-    return lorentz_force(integrals, part);
-  }
-  const auto& bodies = bands.bodies();
-  for (std::size_t b = 0; b < bodies.size(); ++b) {
-    if (bodies[b].size() > 1 || bodies[b].front() != part) continue;
-    return bands.force(solution, static_cast<int>(b), whole_band);
-  }
-  return {};
-}
-
 }  // namespace barwall::solver

@@ -1,6 +1,5 @@
 #pragma once
 
-#include <optional>
 #include <vector>
 
 #include "solver/cycle.hpp"
@@ -53,11 +52,5 @@ private:
   std::vector<std::vector<int>> bodies_;
   std::vector<Surroundings> around_;  ///< per body
 };
-
-/// The force on a part over the cycle: J x B on a bar of mu_r = 1, where that is exact, else the
-/// stress in the whole band round the part. None for a part that touches another, whose own share
-/// of the stress nobody can tell.
-std::optional<PulsatingVector> force_on_part(const PartIntegrals& integrals,
-                                             const StressBands& bands, int part);
 
 }  // namespace barwall::solver

@@ -15,21 +15,6 @@
 namespace barwall::solver {
 namespace {
 
-std::vector<CurrentPattern> load_patterns(const Problem& problem) {
-  const auto& current = problem.excitation.current;
-  std::vector<double> in_phase;
-  std::vector<double> quadrature;
-  for (const auto& value : current) {
-    in_phase.push_back(value.real());
-    quadrature.push_back(value.imag());
-  }
-  std::vector<CurrentPattern> patterns{pattern_of(problem.section, std::move(in_phase))};
-  if (problem.excitation.alternating()) {
-    patterns.push_back(pattern_of(problem.section, std::move(quadrature)));
-  }
-  return patterns;
-}
-
 std::vector<int> bars_in_loops(const Problem& problem) {
   std::set<int> bars;
   for (const Loop& loop : problem.loops) {
@@ -102,7 +87,7 @@ void interpolate(const Problem& from, const Eigen::VectorXd& potential,
 
 /// The potential of saturable steel, nested: from the coarse grid's when there is one.
 Eigen::VectorXd nonlinear_potential(const Problem& problem, const CurrentPattern& pattern,
-                                    const SolveOptions& options,
+                                    const SolveOptions& options, Workspace& workspace,
                                     std::vector<NewtonReport>& reports) {
   const mesh::FittedGrid& grid = *problem.grid;
   Eigen::VectorXd potential = boundary_values(grid, pattern, options.boundary);
@@ -117,15 +102,33 @@ Eigen::VectorXd nonlinear_potential(const Problem& problem, const CurrentPattern
     // A start need not be closer to its grid's solution than that is to the fine one.
     SolveOptions rough = options;
     rough.newton_tolerance = 1e-4;
-    interpolate(coarse, nonlinear_potential(coarse, pattern, rough, reports), grid, potential);
+    Workspace of_coarse;
+    of_coarse.fine = std::move(workspace.coarse);
+    interpolate(coarse, nonlinear_potential(coarse, pattern, rough, of_coarse, reports), grid,
+                potential);
+    workspace.coarse = std::move(of_coarse.fine);
   }
-  std::unique_ptr<PreparedSystem<double>> system;
   reports.push_back(newton_solve(NonlinearOperator(problem), grid, current_of(problem, pattern),
-                                 potential, options.newton_tolerance, system));
+                                 potential, options.newton_tolerance, workspace.fine));
   return potential;
 }
 
 }  // namespace
+
+std::vector<CurrentPattern> load_patterns(const Problem& problem) {
+  const auto& current = problem.excitation.current;
+  std::vector<double> in_phase;
+  std::vector<double> quadrature;
+  for (const auto& value : current) {
+    in_phase.push_back(value.real());
+    quadrature.push_back(value.imag());
+  }
+  std::vector<CurrentPattern> patterns{pattern_of(problem.section, std::move(in_phase))};
+  if (problem.excitation.alternating()) {
+    patterns.push_back(pattern_of(problem.section, std::move(quadrature)));
+  }
+  return patterns;
+}
 
 SolveReport solve_nodes(const mesh::FittedGrid& grid, const std::vector<double>& reluctivity,
                         const Eigen::MatrixXd& current, Eigen::MatrixXd& potential,
@@ -133,7 +136,10 @@ SolveReport solve_nodes(const mesh::FittedGrid& grid, const std::vector<double>&
   return prepare(assemble_operator(grid, reluctivity))->solve(current, potential, tolerance);
 }
 
-Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& options) {
+Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& options,
+               Workspace* workspace) {
+  Workspace own;
+  if (workspace == nullptr) workspace = &own;
   const bool nonlinear = saturable(*problem);
   if (problem->excitation.alternating() && (options.boundary || nonlinear)) {
     throw std::invalid_argument(
@@ -146,7 +152,7 @@ Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& optio
   const auto start = std::chrono::steady_clock::now();
   if (nonlinear) {
     solution.potential =
-        nonlinear_potential(*problem, solution.patterns[0], options, solution.newton);
+        nonlinear_potential(*problem, solution.patterns[0], options, *workspace, solution.newton);
     solution.reluctivity = NonlinearOperator(*problem).reluctivity(solution.potential.col(0));
   } else {
     solution.reluctivity = by_triangle(grid, reluctivity_by_region(*problem));

@@ -47,6 +47,16 @@ struct SolveOptions {
   Eigen::VectorXd start = {};
 };
 
+/// Prepared systems that one solve leaves for the next on the same grids.
+struct Workspace {
+  std::unique_ptr<PreparedSystem<double>> fine;
+  std::unique_ptr<PreparedSystem<double>> coarse;
+};
+
+/// The patterns of a problem's own currents: steady, one; with a frequency, in phase and
+/// quadrature.
+std::vector<CurrentPattern> load_patterns(const Problem& problem);
+
 /// The equations of the scheme, as they are: at every node within the boundary the flux of
 /// H = nu grad A out of its control cell, with the current through it, adds up to nothing.
 /// \param reluctivity per triangle [m/H]
@@ -59,10 +69,12 @@ SolveReport solve_nodes(const mesh::FittedGrid& grid, const std::vector<double>&
                         double tolerance = 1e-12);
 
 /// With saturable steel the currents must be steady; an alternating cycle is solved instant by
-/// instant. Unit fields are then those at the permeability of the operating point.
+/// instant (solve_instants). Unit fields are then those at the permeability of the operating point.
 /// \throws SolveError, NewtonError
 /// \throws std::invalid_argument when currents alternate and boundary values are given or steel is
 ///         saturable
-Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& options = {});
+/// \param workspace of the same grids, used where steel is saturable; may be null
+Solution solve(std::shared_ptr<const Problem> problem, const SolveOptions& options = {},
+               Workspace* workspace = nullptr);
 
 }  // namespace barwall::solver

@@ -1,9 +1,11 @@
 #include "solver/wall_field.hpp"
 
 #include <algorithm>
+#include <optional>
 
 #include "solver/constants.hpp"
 #include "solver/cycle.hpp"
+#include "solver/field_peak.hpp"
 #include "solver/flux_density.hpp"
 
 namespace barwall::solver {
@@ -43,26 +45,47 @@ FieldLevel level_of(std::vector<Sample> samples, const BhCurve* curve) {
   return result;
 }
 
-}  // namespace
-
-std::vector<FieldLevel> field_levels(const Solution& solution) {
-  const mesh::FittedGrid& grid = solution.grid();
-  std::vector<std::vector<Sample>> samples(solution.problem->section.parts.size());
+/// \param level_at of a triangle: |B|
+template <class Level>
+std::vector<FieldLevel> levels_of(const Problem& problem, Level level_at) {
+  const mesh::FittedGrid& grid = *problem.grid;
+  std::vector<std::vector<Sample>> samples(problem.section.parts.size());
   for (int t = 0; t < grid.triangle_count(); ++t) {
     const int part = grid.occupant(t).part;
     if (part < 0) continue;
-    const mesh::Point b = cell_flux_density(grid, t, solution.potential.col(0));
-    const double level =
-        solution.pattern_count() == 1
-            ? norm(b)
-            : peak_magnitude(b, cell_flux_density(grid, t, solution.potential.col(1)));
-    samples[static_cast<std::size_t>(part)].push_back({level, triangle_area(grid.corners(t))});
+    samples[static_cast<std::size_t>(part)].push_back(
+        {level_at(t), triangle_area(grid.corners(t))});
   }
   std::vector<FieldLevel> levels;
   for (std::size_t k = 0; k < samples.size(); ++k) {
-    levels.push_back(level_of(std::move(samples[k]), solution.problem->materials[k].curve.get()));
+    levels.push_back(level_of(std::move(samples[k]), problem.materials[k].curve.get()));
   }
   return levels;
+}
+
+}  // namespace
+
+std::vector<FieldLevel> field_levels(const Solution& solution) {
+  return levels_of(*solution.problem, [&](int t) {
+    const mesh::Point b = cell_flux_density(solution.grid(), t, solution.potential.col(0));
+    if (solution.pattern_count() == 1) return norm(b);
+    return peak_magnitude(b, cell_flux_density(solution.grid(), t, solution.potential.col(1)));
+  });
+}
+
+std::vector<FieldLevel> field_levels(const Instants& instants) {
+  std::optional<PeakFinder> between;
+  if (instants.half_cycle) between.emplace(static_cast<int>(instants.size()));
+  std::vector<mesh::Point> b(instants.size());
+  const mesh::FittedGrid& grid = instants.solution.front()->grid();
+  return levels_of(*instants.solution.front()->problem, [&](int t) {
+    double largest = 0.0;
+    for (std::size_t k = 0; k < b.size(); ++k) {
+      b[k] = cell_flux_density(grid, t, instants.solution[k]->potential.col(0));
+      largest = std::max(largest, norm(b[k]));
+    }
+    return between ? between->peak(b) : largest;
+  });
 }
 
 }  // namespace barwall::solver

@@ -2,6 +2,7 @@
 
 #include <vector>
 
+#include "solver/instants.hpp"
 #include "solver/magnetostatics.hpp"
 
 namespace barwall::solver {
@@ -24,5 +25,10 @@ inline constexpr double steel_saturates_at = 1.5;
 
 /// The level in every part of the section, by index; zeros for one that does not show.
 std::vector<FieldLevel> field_levels(const Solution& solution);
+
+/// The same of the largest magnitude that each place sees: over half a cycle between the instants
+/// too, over another course at them. The saturated share is that of places which saturate at some
+/// instant.
+std::vector<FieldLevel> field_levels(const Instants& instants);
 
 }  // namespace barwall::solver

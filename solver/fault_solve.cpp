@@ -1,0 +1,135 @@
+#include "solver/fault_solve.hpp"
+
+#include <algorithm>
+
+namespace barwall::solver {
+namespace {
+
+using Forces = PartForces<PulsatingVector>;
+
+/// Instants between closing and the end of a series, at least and at most.
+constexpr InstantOptions along_course{12, 48};
+
+std::vector<Forces> forces_at(const Instants& instants, const StressBands& bands) {
+  std::vector<Forces> forces;
+  for (const auto& solution : instants.solution) {
+    forces.push_back(forces_of(PartIntegrals(*solution), bands));
+  }
+  return forces;
+}
+
+/// The closing angle of the largest force on a bar; 0 where any will do.
+double worst_closing(const FaultCurrent& fault, const PartForces<FaultExtremes>& extremes) {
+  double largest = -1.0;
+  double closing = 0.0;
+  for (const int bar : fault.bars) {
+    const auto& found = extremes.part[static_cast<std::size_t>(bar)];
+    // Of forces that symmetry makes equal the first, whatever rounding says.
+    if (!found || found->peak.magnitude <= largest * (1.0 + 1e-9)) continue;
+    largest = found->peak.magnitude;
+    closing = found->peak.closing.value_or(0.0);
+  }
+  return closing;
+}
+
+std::optional<double> given_closing(const FaultCurrent& fault) {
+  const auto* alternating = std::get_if<AlternatingFault>(&fault.course);
+  return alternating != nullptr ? alternating->closing : std::nullopt;
+}
+
+FaultSolution with_constant_permeability(const Problem& problem, const FaultCurrent& fault,
+                                         const StressBands& bands) {
+  Problem sustained = problem;
+  sustained.excitation = sustained_excitation(fault, problem.section.parts.size());
+  sustained.loops.clear();
+  const Solution solution = solve(std::make_shared<const Problem>(std::move(sustained)));
+  const Forces forces = forces_of(PartIntegrals(solution), bands);
+  FaultSolution result;
+  result.extremes = combined(std::span(&forces, 1), [&](const std::vector<PulsatingVector>& force) {
+    return extremes_of(fault, force.front());
+  });
+  result.levels = field_levels(solution);
+  const double scale = largest_scale(fault).scale;
+  for (FieldLevel& level : result.levels) {
+    level.mean *= scale;
+    level.high *= scale;
+  }
+  result.series = fault_series(
+      fault, given_closing(fault).value_or(worst_closing(fault, result.extremes)), forces);
+  return result;
+}
+
+/// Steady solution of direct currents at the largest scale.
+Solution at_largest_direct_current(const Problem& problem, const FaultCurrent& fault) {
+  Problem largest = problem;
+  largest.excitation = sustained_excitation(fault, problem.section.parts.size());
+  for (auto& current : largest.excitation.current) current *= largest_scale(fault).scale;
+  largest.loops.clear();
+  return solve(std::make_shared<const Problem>(std::move(largest)));
+}
+
+/// Half a turn of the sustained currents, scaled.
+Instants half_turn(const Problem& problem, const FaultCurrent& fault, double scale) {
+  return solve_instants(
+      problem, half_cycle_of(sustained_excitation(fault, problem.section.parts.size()), scale));
+}
+
+FaultSolution with_saturable_steel(const Problem& problem, const FaultCurrent& fault,
+                                   const StressBands& bands) {
+  FaultSolution result;
+  const auto* alternating = std::get_if<AlternatingFault>(&fault.course);
+  const auto closing = given_closing(fault);
+  if (closing) {
+    result.course = solve_instants(
+        problem, fault_course(fault, *closing, problem.section.parts.size()), along_course);
+    const auto first_cycle = forces_at(*result.course, bands);
+    const auto later = forces_at(half_turn(problem, fault, 1.0), bands);
+    const Forces sustained = over_half_cycle(std::span<const Forces>(later));
+    // Each force's way through the first cycle, with the sustained one at the end.
+    std::vector<Forces> all = first_cycle;
+    all.push_back(sustained);
+    result.extremes =
+        combined(std::span<const Forces>(all), [&](const std::vector<PulsatingVector>& force) {
+          std::vector<mesh::Point> cycle;
+          for (std::size_t k = 0; k + 1 < force.size(); ++k) {
+            cycle.push_back({force[k].x.mean, force[k].y.mean});
+          }
+          return extremes_over_first_cycle(*alternating, cycle, force.back());
+        });
+    result.levels = field_levels(*result.course);
+    result.series = fault_series(fault, *closing, std::span<const Forces>(first_cycle));
+    return result;
+  }
+  const auto extremes_at_largest = [&](const Forces& forces) {
+    return combined(std::span(&forces, 1), [&](const std::vector<PulsatingVector>& force) {
+      return extremes_at_largest_scale(fault, force.front());
+    });
+  };
+  if (alternating != nullptr) {
+    const Instants largest = half_turn(problem, fault, largest_scale(fault).scale);
+    const auto forces = forces_at(largest, bands);
+    result.extremes = extremes_at_largest(over_half_cycle(std::span<const Forces>(forces)));
+    result.levels = field_levels(largest);
+  } else {
+    const Solution largest = at_largest_direct_current(problem, fault);
+    result.extremes = extremes_at_largest(forces_of(PartIntegrals(largest), bands));
+    result.levels = field_levels(largest);
+  }
+  if (std::holds_alternative<DirectPeak>(fault.course)) return result;
+  const double worst = worst_closing(fault, result.extremes);
+  result.course = solve_instants(problem, fault_course(fault, worst, problem.section.parts.size()),
+                                 along_course);
+  const auto forces = forces_at(*result.course, bands);
+  result.series = fault_series(fault, worst, std::span<const Forces>(forces));
+  return result;
+}
+
+}  // namespace
+
+FaultSolution solve_fault(const Problem& problem, const FaultCurrent& fault,
+                          const StressBands& bands) {
+  return saturable(problem) ? with_saturable_steel(problem, fault, bands)
+                            : with_constant_permeability(problem, fault, bands);
+}
+
+}  // namespace barwall::solver

@@ -1,0 +1,28 @@
+#pragma once
+
+#include <optional>
+#include <vector>
+
+#include "solver/fault_extremes.hpp"
+#include "solver/fault_series.hpp"
+#include "solver/wall_field.hpp"
+
+namespace barwall::solver {
+
+/// What a fault does to a section.
+struct FaultSolution {
+  PartForces<FaultExtremes> extremes;
+  std::vector<FieldLevel> levels;  ///< per part, of the largest field in the fault
+  /// At the given closing angle, else at the one with the largest force on a bar.
+  FaultSeries series;
+  std::optional<Instants> course;  ///< with saturable steel the instants of the series
+};
+
+/// Solves the field of a fault's currents, which own nothing to the problem's own, and finds its
+/// largest forces. Constant permeability needs one solve of the sustained currents; saturable steel
+/// half a turn at the largest scale, and the series' course.
+/// \throws SolveError, NewtonError
+FaultSolution solve_fault(const Problem& problem, const FaultCurrent& fault,
+                          const StressBands& bands);
+
+}  // namespace barwall::solver
