@@ -8,8 +8,8 @@
 #include "io/results.hpp"
 #include "mesh/offset_line.hpp"
 #include "solver/fault_figures.hpp"
-#include "verify/end_effect.hpp"
 #include "verify/hand_figures.hpp"
+#include "verify/notices.hpp"
 #include "verify/run_checks.hpp"
 
 namespace barwall::io {
@@ -193,11 +193,9 @@ Results run_case(Case input, const std::function<void(const std::string&)>& on_s
   results.figures = figures_of(integrals, *results.field, bands, probes, results.input.circuits);
   watch.begin("checks");
   results.checks = verify::run_checks(integrals, *results.field, bands);
-  if (results.input.run_length_m) {
-    const auto notices =
-        verify::end_effect(*results.problem, results.figures, *results.input.run_length_m);
-    auto& all = results.figures.notices;
-    all.insert(all.end(), notices.begin(), notices.end());
+  for (auto& notice : verify::notices_of(*results.problem, results.figures, results.input.circuits,
+                                         results.input.run_length_m)) {
+    results.figures.notices.push_back(std::move(notice));
   }
   const solver::FaultCurrent* fault = nullptr;
   if (results.input.fault) {
