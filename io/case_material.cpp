@@ -19,6 +19,7 @@ namespace {
 namespace fs = std::filesystem;
 
 constexpr Allowed permeability{1.0, 1e9, true, ""};
+constexpr Allowed resistivity{0.0, 1.0, false, " ohm m"};
 constexpr PlainFileKind curve_file{"curve", ".csv", 1'000'000};
 /// Most rows of all B-H tables together.
 constexpr std::size_t most_rows_together = 200'000;
@@ -109,6 +110,8 @@ CaseMaterials read_materials(const CaseTable& root) {
   Materials& materials = result.by_name;
   LawReader laws(text, result.curve_digests);
   const std::vector<std::string> law_keys = {"relative_permeability", "bh_points", "bh_curve"};
+  std::vector<std::string> keys = law_keys;
+  keys.emplace_back("resistivity_ohm_m");
   for (const char* name : {"air", "copper", "aluminium", "brass", "stainless"}) {
     materials[name] = {name, 1.0};
   }
@@ -131,8 +134,12 @@ CaseMaterials read_materials(const CaseTable& root) {
                                             "permeability of 1; choose another name",
                                             material.key));
     }
-    const CaseTable table(text, material.value, "[material." + material.key + "]", law_keys);
-    materials[material.key] = laws.read(material.key, table.exactly_one(law_keys));
+    const CaseTable table(text, material.value, "[material." + material.key + "]", keys);
+    solver::Material& known = materials[material.key];
+    known = laws.read(material.key, table.exactly_one(law_keys));
+    if (const TomlEntry* given = table.find("resistivity_ohm_m")) {
+      known.resistivity = read_number(text, given->value, given->key, resistivity);
+    }
   }
   return result;
 }

@@ -106,8 +106,9 @@ std::string model(const Results& results) {
       "permeability, open air all round. There are no eddy currents, no skin and no proximity "
       "effect";
   text += results.alternating()
-              ? "; the field follows the currents at every instant. Real conducting walls at this "
-                "frequency also shield or heat by eddy currents, which are not computed.</p>\n"
+              ? ", and so no losses: the field follows the currents at every instant, and no heat "
+                "figure is given. Real conducting walls at this frequency shield and heat by eddy "
+                "currents.</p>\n"
               : ".</p>\n";
   text +=
       "<p>Bends, joints, supports, ends of the run and neighbouring equipment are outside the "

@@ -12,6 +12,7 @@
 #include "io/quantity_text.hpp"
 #include "io/report.hpp"
 #include "io/tidy_figures.hpp"
+#include "solver/resistivity.hpp"
 
 namespace barwall::io {
 namespace {
@@ -150,6 +151,12 @@ std::string current_text(const Results& results, const Entry& bar) {
   if (!results.alternating()) return quantity_text(bar.current.real(), "A");
   if (bar.current == 0.0) return size;
   return fmt::format("{}, {:.4g}°", size, std::arg(bar.current) * 180.0 / std::numbers::pi + 0.0);
+}
+
+std::string resistivity_text(const solver::Material& material) {
+  const auto resistivity = resistivity_of(material);
+  if (!resistivity) return "not known";
+  return quantity_text(*resistivity, "ohm m") + (material.resistivity ? "" : ", typical at 20 °C");
 }
 
 }  // namespace
@@ -313,15 +320,19 @@ std::string case_tables(const Results& results) {
                             input.grid.reach, 0.5 * (grid.x_lines.back() - grid.x_lines.front()))});
   HtmlTable given("Given dimensions", {"Name", "Value"});
   for (const auto& [name, value] : input.given) given.row({name, fmt::format("{:.10g}", value)});
-  HtmlTable materials("Materials", {"Part", "Kind", "Material", "Relative permeability"}, {1, 2});
+  std::vector<std::string> columns = {"Part", "Kind", "Material", "Relative permeability"};
+  if (results.alternating()) columns.emplace_back("Resistivity");
+  HtmlTable materials("Materials", columns, {1, 2, 4});
   for (int part : visible_parts(results.problem->outline)) {
     const auto k = static_cast<std::size_t>(part);
     const mesh::Part& p = results.problem->section.parts[k];
-    materials.row({p.name, p.kind == mesh::Part::Kind::bar ? "bar" : "wall",
-                   input.materials[k].name,
-                   input.materials[k].saturable()
-                       ? std::string("B-H table")
-                       : fmt::format("{:.6g}", input.materials[k].relative_permeability)});
+    const solver::Material& material = input.materials[k];
+    std::vector<std::string> cells = {
+        p.name, p.kind == mesh::Part::Kind::bar ? "bar" : "wall", material.name,
+        material.saturable() ? std::string("B-H table")
+                             : fmt::format("{:.6g}", material.relative_permeability)};
+    if (results.alternating()) cells.push_back(resistivity_text(material));
+    materials.row(cells);
   }
   return table.html() + given.html() + materials.html();
 }

@@ -6,8 +6,8 @@
 #include "solver/cycle_recovery.hpp"
 #include "solver/fault_figures.hpp"
 #include "solver/saturation_notices.hpp"
-#include "verify/end_effect.hpp"
 #include "verify/hand_figures.hpp"
+#include "verify/notices.hpp"
 #include "verify/run_checks.hpp"
 
 namespace barwall::io {
@@ -56,9 +56,8 @@ public:
         saturable(problem) && results_.alternating() ? instant_by_instant() : at_once();
     results_.figures =
         figures_of(problem, bands_->bodies(), readings, probes_, results_.input.circuits);
-    if (results_.input.run_length_m) {
-      add_notices(verify::end_effect(problem, results_.figures, *results_.input.run_length_m));
-    }
+    add_notices(verify::notices_of(problem, results_.figures, results_.input.circuits,
+                                   results_.input.run_length_m));
     const solver::FaultCurrent* fault = nullptr;
     if (results_.input.fault) {
       watch_.begin("fault");

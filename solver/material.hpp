@@ -1,6 +1,7 @@
 #pragma once
 
 #include <memory>
+#include <optional>
 #include <string>
 #include <utility>
 
@@ -16,6 +17,8 @@ struct Material {
   double relative_permeability = 1.0;
   /// The magnetising curve of saturable steel, null where the permeability is constant.
   std::shared_ptr<const BhCurve> curve = nullptr;
+  /// As the case gives it [ohm m]; none where it does not (see resistivity_of).
+  std::optional<double> resistivity = {};
 
   bool saturable() const { return curve != nullptr; }
   bool magnetic() const { return saturable() || relative_permeability != 1.0; }

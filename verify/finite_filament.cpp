@@ -35,4 +35,9 @@ double mid_span_deficit(double run_length, double distance) {
   return q / (root * (root + 1.0));
 }
 
+double force_deficit(double run_length, double distance) {
+  const double ratio = distance / run_length;
+  return 2.0 * ratio / (1.0 + ratio + std::sqrt(1.0 + ratio * ratio));
+}
+
 }  // namespace barwall::verify

@@ -20,6 +20,14 @@ TEST_CASE("Numbers out of range are refused with what is allowed") {
         "relative_permeability = 0.5",
         "10:25",
         {"0.5", "at least 1"}},
+       {"relative_permeability = 600",
+        "relative_permeability = 600\nresistivity_ohm_m = 0",
+        "11:21",
+        {"resistivity_ohm_m is 0 ohm m", "greater than 0 ohm m"}},
+       {"relative_permeability = 600",
+        "resistivity_ohm_m = 1.01\nrelative_permeability = 600",
+        "10:21",
+        {"1.01 ohm m", "at most 1 ohm m"}},
        {"size = [8, 80], turn", "size = [8, 0], turn", "14:56", {"size is 0 mm"}},
        {"size = [8, 80], turn",
         "size = [\"10-18\", 80], turn",
@@ -124,7 +132,15 @@ TEST_CASE("Materials are given once, by one law, and none of the built-in ones a
                 {"relative_permeability = 600",
                  "relative_permeability = 600\nbh_curve = \"x.csv\"",
                  "11:1",
-                 {"relative_permeability and bh_curve", "only one"}}});
+                 {"relative_permeability and bh_curve", "only one"}},
+                {"relative_permeability = 600",
+                 "resistivity_ohm_m = 1.5e-7",
+                 "9:1",
+                 {"needs one of relative_permeability"}},
+                {"relative_permeability = 600",
+                 "relative_permeability = 600\nresistivity = 1e-7",
+                 "11:1",
+                 {"unknown key \"resistivity\"", "resistivity_ohm_m"}}});
 }
 
 TEST_CASE("A current given twice, not at all or against the frequency is refused") {

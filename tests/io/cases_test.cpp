@@ -2,8 +2,11 @@
 #include <catch2/catch.hpp>
 #include <filesystem>
 #include <fstream>
+#include <nlohmann/json.hpp>
+#include <regex>
 
 #include "io/results.hpp"
+#include "io/results_json.hpp"
 #include "tests/io/program_support.hpp"
 
 namespace barwall::io {
@@ -22,6 +25,21 @@ std::vector<fs::path> shipped_cases() {
   return cases;
 }
 
+/// The first unit of power of any figure below a node of figures.json, or nothing: watts of losses
+/// are no result of a static field.
+std::string unit_of_power(const nlohmann::json& node) {
+  static const std::regex power(R"((^|[^A-Za-z])[kMGmu]?(W|VA|var)([^A-Za-z]|$)|J/s|N m/s)");
+  if (node.is_object() && node.contains("unit")) {
+    const auto unit = node["unit"].get<std::string>();
+    return std::regex_search(unit, power) ? unit : "";
+  }
+  if (!node.is_structured()) return "";
+  for (const auto& child : node) {
+    if (const std::string found = unit_of_power(child); !found.empty()) return found;
+  }
+  return "";
+}
+
 void expect_sound(const fs::path& file) {
   INFO(file.string());
   const Results results = run_case(read_case(file));
@@ -32,14 +50,30 @@ void expect_sound(const fs::path& file) {
   CHECK(results.verdict() == "sound");
   CHECK(results.exit_code() == 0);
   CHECK(results.problem->grid->node_count() < 150000);
+  CHECK(unit_of_power(nlohmann::json::parse(figures_json(results))).empty());
 }
 
 }  // namespace
 
-TEST_CASE("every shipped case is sound on fewer than 150,000 nodes and keeps its limits") {
+TEST_CASE(
+    "every shipped case is sound on fewer than 150,000 nodes, keeps its limits and gives no "
+    "power") {
   const auto cases = shipped_cases();
   CHECK(cases.size() >= 9);
   for (const fs::path& file : cases) expect_sound(file);
+}
+
+TEST_CASE("a unit of power is found wherever it stands in figures.json, and in no other unit") {
+  const auto found = [](const std::string& unit) {
+    return unit_of_power(
+        {{"bars", {{{"name", "L1"}, {"loss", {{"value", 1.0}, {"unit", unit}}}}}}});
+  };
+  for (const char* unit : {"W", "W/m", "kW", "mW/m", "W/m3", "VA", "kvar", "J/s"}) {
+    CHECK(found(unit) == unit);
+  }
+  for (const char* unit : {"Wb/m", "T", "N/m", "J/m", "H/m", "ohm/m", "A", "deg", "1", "s"}) {
+    CHECK(found(unit).empty());
+  }
 }
 
 TEST_CASE("every shipped case has its line in the list of cases and says that it is invented") {

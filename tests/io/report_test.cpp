@@ -81,6 +81,9 @@ TEST_CASE("The report names the model's limits, the notices and the case's data"
   const io::Results& short_run = test::alternating_plate_results();
   REQUIRE(short_run.validity() == "indicative");
   const std::string page = io::report_html(short_run, "");
+  CHECK(test::count_of(page, "no losses") == 1);
+  CHECK(test::count_of(page, "no heat figure is given") == 1);
+  CHECK(test::count_of(plate_report(), "no heat figure is given") == 0);
   for (const solver::Notice& notice : short_run.figures.notices) {
     CHECK(test::count_of(page, io::escaped(notice.detail)) == 1);
   }

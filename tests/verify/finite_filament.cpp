@@ -56,3 +56,18 @@ TEST_CASE("beyond its end and on its axis a finite wire's field falls to zero wi
   }
   CHECK(field_of_finite_filament(from, from, 1.0, {1, 0, 0}) == Point3{});
 }
+
+TEST_CASE("two wires of one length lose of their force what Biot and Savart's law says") {
+  const QuadratureRule rule = gauss_legendre(80);
+  for (const double d : {0.05, 0.3, 2.0}) {
+    double force = 0.0;  // on 1 m of wire with 1 A, from a wire of 1 m beside it
+    for (std::size_t k = 0; k < rule.nodes.size(); ++k) {
+      const Point3 b =
+          field_of_finite_filament({0, 0, 0}, {0, 0, 1}, 1.0, {d, 0, 0.5 * (1.0 + rule.nodes[k])});
+      force += 0.5 * rule.weights[k] * b.y;
+    }
+    CHECK(1.0 - force / field_of_filament({{}, 1.0}, {d, 0.0}).y ==
+          Approx(force_deficit(1.0, d)).epsilon(1e-4));
+  }
+  CHECK(force_deficit(1.0, 1e-12) == Approx(1e-12).epsilon(1e-10));
+}

@@ -1,0 +1,19 @@
+#pragma once
+
+#include <vector>
+
+#include "solver/figures.hpp"
+
+namespace barwall::verify {
+
+/// Depth [m] at which a field of one frequency [Hz] has fallen to 1/e in a thick conductor:
+/// sqrt(2 rho / (w mu)), with its resistivity [ohm m] and relative permeability.
+double skin_depth(double resistivity, double relative_permeability, double frequency_hz);
+
+/// With a frequency, a notice each of bars, of non-magnetic and of steel walls that are thicker
+/// than their skin depth: which, how thick, and which way static figures err. All make the validity
+/// indicative. Pieces are looked at one by one. Of saturable steel the largest permeability of its
+/// table counts, which gives the least depth. Materials without a known resistivity are left out.
+std::vector<solver::Notice> skin_depth_notices(const solver::Problem& problem);
+
+}  // namespace barwall::verify
