@@ -312,9 +312,9 @@ public:
                      [](const Row& a, const Row& b) { return a.size > b.size; });
     PlainTable table("llrrrr");
     std::vector<std::string> head = alternating_
-                                        ? std::vector<std::string>{"", "", "most", "least"}
+                                        ? std::vector<std::string>{"", "", "largest", "smallest"}
                                         : std::vector<std::string>{"", "", "push", "mean pressure"};
-    if (figures_.fault) head.insert(head.end(), {"most in the fault", "least"});
+    if (figures_.fault) head.insert(head.end(), {"largest in the fault", "smallest"});
     table.add(head);
     for (std::size_t k = 0; k < std::min(rows.size(), most_rows); ++k) table.add(rows[k].cells);
     return section("Push on the sides of the walls, outward positive, per metre of run", table,

@@ -1,3 +1,5 @@
+#include <fmt/format.h>
+
 #include <algorithm>
 #include <catch2/catch.hpp>
 #include <filesystem>
@@ -40,6 +42,30 @@ std::string unit_of_power(const nlohmann::json& node) {
   return "";
 }
 
+/// Newton's method on the finest grid: no more than so many steps.
+void expect_converged(const std::vector<solver::NewtonReport>& reports, int most) {
+  const solver::NewtonReport& finest = reports.back();
+  INFO(fmt::format("residuals {:.2e}", fmt::join(finest.residuals, ", ")));
+  CHECK(finest.converged);
+  CHECK(finest.iterations <= most);
+}
+
+/// Of steady currents, which are solved to the end: few steps from the coarse grid's start, the
+/// last of which squares the error.
+void expect_quadratic(const std::vector<solver::NewtonReport>& reports) {
+  if (reports.empty()) return;
+  expect_converged(reports, 5);
+  const auto& r = reports.back().residuals;
+  REQUIRE(r.size() >= 3);
+  const std::size_t last = r.size() - 1;
+  CHECK(r[last] / r[last - 1] < 0.1 * r[last - 1] / r[last - 2]);
+}
+
+void expect_converged(const std::optional<solver::Instants>& instants) {
+  if (!instants) return;
+  for (const auto& solution : instants->solution) expect_converged(solution->newton, 12);
+}
+
 void expect_sound(const fs::path& file) {
   INFO(file.string());
   const Results results = run_case(read_case(file));
@@ -50,6 +76,12 @@ void expect_sound(const fs::path& file) {
   CHECK(results.verdict() == "sound");
   CHECK(results.exit_code() == 0);
   CHECK(results.problem->grid->node_count() < 150000);
+  expect_quadratic(results.solution->newton);
+  expect_converged(results.instants);
+  if (results.fault) {
+    expect_converged(results.fault->course);
+    for (const auto& reports : results.fault->newton) expect_converged(reports, 12);
+  }
   CHECK(unit_of_power(nlohmann::json::parse(figures_json(results))).empty());
 }
 
