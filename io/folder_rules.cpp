@@ -81,9 +81,10 @@ fs::path without_last_slash(const fs::path& path) {
 
 const std::vector<std::string>& file_names(Contents contents) {
   static const std::vector<std::string> results = {
-      "figures.json",  "figures.csv",  "run.json",       "probes.csv", "field.vtu",
-      "field_far.vtu", "outlines.vtp", "flux_lines.vtp", "forces.vtp", "probes.vtp",
-      "report.html",   "picture.png",  "picture.svg",    "picture.pdf"};
+      "figures.json",     "figures.csv", "run.json",      "probes.csv",   "field.vtu",
+      "fault_forces.csv", "fault.png",   "field_far.vtu", "outlines.vtp", "flux_lines.vtp",
+      "forces.vtp",       "probes.vtp",  "report.html",   "picture.png",  "picture.svg",
+      "picture.pdf",      "fault.svg"};
   static const std::vector<std::string> drawing = {"section.png", "section.svg", "section.pdf"};
   return contents == Contents::results ? results : drawing;
 }
