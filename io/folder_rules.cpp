@@ -11,6 +11,7 @@
 #include "io/input_error.hpp"
 #include "io/run_json.hpp"
 #include "io/write_error.hpp"
+#include "solver/instants.hpp"
 
 namespace barwall::io {
 
@@ -80,13 +81,25 @@ fs::path without_last_slash(const fs::path& path) {
 }
 
 const std::vector<std::string>& file_names(Contents contents) {
-  static const std::vector<std::string> results = {
-      "figures.json",     "figures.csv", "run.json",      "probes.csv",   "field.vtu",
-      "fault_forces.csv", "fault.png",   "field_far.vtu", "outlines.vtp", "flux_lines.vtp",
-      "forces.vtp",       "probes.vtp",  "report.html",   "picture.png",  "picture.svg",
-      "picture.pdf",      "fault.svg"};
+  static const std::vector<std::string> results = [] {
+    std::vector<std::string> names = {
+        "figures.json",  "figures.csv",     "run.json",       "probes.csv",  "field.vtu",
+        "field_far.vtu", "outlines.vtp",    "flux_lines.vtp", "forces.vtp",  "probes.vtp",
+        "report.html",   "picture.png",     "picture.svg",    "picture.pdf", "fault.png",
+        "fault.svg",     "fault_forces.csv"};
+    for (const std::string series : {"cycle", "fault"}) {
+      names.push_back(series + ".pvd");
+      for (std::size_t k = 0; k <= static_cast<std::size_t>(solver::most_instants); ++k)
+        names.push_back(instant_file(series, k));
+    }
+    return names;
+  }();
   static const std::vector<std::string> drawing = {"section.png", "section.svg", "section.pdf"};
   return contents == Contents::results ? results : drawing;
+}
+
+std::string instant_file(const std::string& series, std::size_t k) {
+  return fmt::format("{}_{:02d}.vtu", series, k);
 }
 
 fs::path default_folder(const Case& input) {

@@ -1,5 +1,6 @@
 #pragma once
 
+#include <cstddef>
 #include <filesystem>
 #include <string>
 #include <vector>
@@ -14,6 +15,9 @@ enum class Contents { results, drawing };
 
 /// Names of the files of each, whether or not a run writes all of them.
 const std::vector<std::string>& file_names(Contents contents);
+
+/// Name of the k-th file of a time series: "cycle_03.vtu".
+std::string instant_file(const std::string& series, std::size_t k);
 
 /// Where a case's results go without --out: results/NAME under the current folder.
 std::filesystem::path default_folder(const Case& input);

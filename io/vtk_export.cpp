@@ -20,6 +20,7 @@ mesh::Box near_box(const Results& results) {
 
 void write_vtk(const Results& results, const std::filesystem::path& folder) {
   write_field(results, folder);
+  write_series(results, folder);
   write_outlines(results, folder);
   write_flux_lines(results, folder);
   write_forces(results, folder);

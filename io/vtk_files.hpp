@@ -10,6 +10,11 @@ namespace barwall::io {
 
 /// field.vtu and field_far.vtu.
 void write_field(const Results& results, const std::filesystem::path& folder);
+/// With alternating currents in saturable steel cycle.pvd, the instants of half a cycle as a time
+/// series, with cycle_00.vtu and so on; in a fault the same as fault.pvd, from closing on. They cover
+/// the section's surroundings, as steady fields in single precision: B_T, A_Wb_per_m, J_A_per_m2,
+/// mu_r, part.
+void write_series(const Results& results, const std::filesystem::path& folder);
 /// outlines.vtp: a polyline per outline piece; of a circle no chord is farther than 4e-5 of the
 /// radius from it.
 void write_outlines(const Results& results, const std::filesystem::path& folder);

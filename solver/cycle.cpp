@@ -130,13 +130,4 @@ std::complex<double> fundamental_through(std::span<const double> values) {
   return std::numbers::sqrt2 / n * sum;
 }
 
-double odd_interpolation(int n, int k, double wt) {
-  assert(n > 0 && n % 2 == 0);
-  const double x = wt - std::numbers::pi * k / n;
-  const double sine = std::sin(x);
-  // At a given value itself the quotient's limit; half a cycle away its sign is turned.
-  if (std::abs(sine) < 1e-12) return std::cos(x) > 0.0 ? 1.0 : -1.0;
-  return std::sin(n * x) / (n * sine);
-}
-
 }  // namespace barwall::solver

@@ -92,8 +92,4 @@ double peak_magnitude(mesh::Point in_phase, mesh::Point quadrature);
 /// phasor of sqrt(2) (in_phase cos wt - quadrature sin wt).
 std::complex<double> fundamental_through(std::span<const double> values);
 
-/// The factor that its k-th value has in the value at wt of the interpolation by odd harmonics,
-/// those below n, through values at k pi / n; n is even.
-double odd_interpolation(int n, int k, double wt);
-
 }  // namespace barwall::solver

@@ -43,7 +43,7 @@ RecoveredField CycleRecovery::over_cycle(const Solution& fundamental) {
   const auto places = static_cast<std::size_t>(result.place_count());
   result.rms_.resize(places);
   result.peak_.resize(places);
-  const PeakFinder peaks(instants_);
+  const PeakFinder peaks;
 #pragma omp parallel
   {
     std::vector<mesh::Point> b(b_.size());

@@ -23,13 +23,6 @@ FaultSeries times_of(const FaultCurrent& fault, double closing, double end, int 
   return series;
 }
 
-/// Seconds that a unit of a course's wt stands for.
-double seconds_per_unit(const FaultCurrent& fault) {
-  const auto* alternating = std::get_if<AlternatingFault>(&fault.course);
-  return alternating != nullptr ? 1.0 / (turn * alternating->frequency_hz)
-                                : std::get<DirectRise>(fault.course).time_constant;
-}
-
 }  // namespace
 
 FaultSeries fault_series(const FaultCurrent& fault, double closing,
@@ -57,6 +50,12 @@ FaultSeries fault_series(const FaultCurrent& fault, double closing,
     return values;
   });
   return series;
+}
+
+double seconds_per_unit(const FaultCurrent& fault) {
+  const auto* alternating = std::get_if<AlternatingFault>(&fault.course);
+  return alternating != nullptr ? 1.0 / (turn * alternating->frequency_hz)
+                                : std::get<DirectRise>(fault.course).time_constant;
 }
 
 Course fault_course(const FaultCurrent& fault, double closing, std::size_t parts) {

@@ -29,6 +29,9 @@ FaultSeries fault_series(const FaultCurrent& fault, double closing,
 /// of a direct current, one of them for every unit of wt. The course must be known.
 Course fault_course(const FaultCurrent& fault, double closing, std::size_t parts);
 
+/// Seconds that a unit of that course's wt stands for.
+double seconds_per_unit(const FaultCurrent& fault);
+
 /// The series along that course: a smooth curve through the instants that were solved.
 /// \param instants forces of steady currents at evenly spaced instants, both ends among them
 FaultSeries fault_series(const FaultCurrent& fault, double closing,

@@ -7,8 +7,18 @@ namespace {
 
 using Forces = PartForces<PulsatingVector>;
 
-/// Instants between closing and the end of a series, at least and at most.
-constexpr InstantOptions along_course{12, 48};
+/// Of the course of a series, whose first intervals span a twelfth of a cycle.
+constexpr InstantOptions along_course{12};
+
+/// Solves the course of the series at a closing angle.
+void solve_course(FaultSolution& result, const Problem& problem, const FaultCurrent& fault,
+                  double closing) {
+  const Course course = fault_course(fault, closing, problem.section.parts.size());
+  result.course = solve_instants(problem, course, along_course);
+  for (const double wt : result.course->wt) {
+    result.course_seconds.push_back(seconds_per_unit(fault) * wt);
+  }
+}
 
 std::vector<Forces> forces_at(const Instants& instants, const StressBands& bands) {
   std::vector<Forces> forces;
@@ -80,8 +90,7 @@ FaultSolution with_saturable_steel(const Problem& problem, const FaultCurrent& f
   const auto* alternating = std::get_if<AlternatingFault>(&fault.course);
   const auto closing = given_closing(fault);
   if (closing) {
-    result.course = solve_instants(
-        problem, fault_course(fault, *closing, problem.section.parts.size()), along_course);
+    solve_course(result, problem, fault, *closing);
     const auto first_cycle = forces_at(*result.course, bands);
     const auto later = forces_at(half_turn(problem, fault, 1.0), bands);
     const Forces sustained = over_half_cycle(std::span<const Forces>(later));
@@ -117,8 +126,7 @@ FaultSolution with_saturable_steel(const Problem& problem, const FaultCurrent& f
   }
   if (std::holds_alternative<DirectPeak>(fault.course)) return result;
   const double worst = worst_closing(fault, result.extremes);
-  result.course = solve_instants(problem, fault_course(fault, worst, problem.section.parts.size()),
-                                 along_course);
+  solve_course(result, problem, fault, worst);
   const auto forces = forces_at(*result.course, bands);
   result.series = fault_series(fault, worst, std::span<const Forces>(forces));
   return result;

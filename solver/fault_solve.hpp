@@ -15,7 +15,8 @@ struct FaultSolution {
   std::vector<FieldLevel> levels;  ///< per part, of the largest field in the fault
   /// At the given closing angle, else at the one with the largest force on a bar.
   FaultSeries series;
-  std::optional<Instants> course;  ///< with saturable steel the instants of the series
+  std::optional<Instants> course;       ///< with saturable steel the instants of the series
+  std::vector<double> course_seconds;  ///< their times since closing
 };
 
 /// Solves the field of a fault's currents, which own nothing to the problem's own, and finds its

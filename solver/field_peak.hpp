@@ -1,7 +1,8 @@
 #pragma once
 
-#include <Eigen/Dense>
+#include <array>
 #include <span>
+#include <vector>
 
 #include "mesh/point.hpp"
 
@@ -11,15 +12,14 @@ namespace barwall::solver {
 /// cycle as well as at them.
 class PeakFinder {
 public:
-  /// \param instants at k pi / n, k = 0 to n - 1; n is even
-  explicit PeakFinder(int instants);
+  PeakFinder();
 
-  /// \param values at the instants, as many as those
+  /// \param values at the instants k pi / n, k = 0 to n - 1, n six or more
   double peak(std::span<const mesh::Point> values) const;
 
 private:
-  /// What each instant counts at places eight times as close, those beyond the half cycle too.
-  Eigen::MatrixXd finer_;
+  /// For places on both sides of the third of six values, what each of these counts.
+  std::vector<std::array<double, 6>> between_;
 };
 
 }  // namespace barwall::solver

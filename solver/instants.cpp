@@ -4,9 +4,9 @@
 #include <cmath>
 #include <exception>
 
-#include "solver/cycle.hpp"
 #include "solver/energy.hpp"
 #include "solver/flux_density.hpp"
+#include "solver/local_interpolation.hpp"
 
 namespace barwall::solver {
 namespace {
@@ -18,24 +18,18 @@ constexpr double rounding = 1e-12;
 /// there than to the tolerance of a single solve.
 constexpr double newton_tolerance = 1e-8;
 
-/// The factors of the known instants in the value halfway between the k-th and the next.
+/// The factors of the known instants in the value halfway between the k-th and the next: of the six
+/// nearest.
 Eigen::VectorXd middle_weights(const Course& course, Eigen::Index known, Eigen::Index k) {
   Eigen::VectorXd weights = Eigen::VectorXd::Zero(known);
-  if (course.half_cycle) {
-    const int n = static_cast<int>(known);
-    const double wt = std::numbers::pi * (static_cast<double>(k) + 0.5) / n;
-    for (int i = 0; i < n; ++i) weights[i] = odd_interpolation(n, i, wt);
-    return weights;
-  }
-  // The cubic through the four nearest.
-  const Eigen::Index first = std::clamp<Eigen::Index>(k - 1, 0, known - 4);
-  const double at = static_cast<double>(k - first) + 0.5;
-  for (int i = 0; i < 4; ++i) {
-    double weight = 1.0;
-    for (int j = 0; j < 4; ++j) {
-      if (j != i) weight *= (at - j) / (i - j);
-    }
-    weights[first + i] = weight;
+  const Eigen::Index first =
+      course.half_cycle ? k - 2 : std::clamp<Eigen::Index>(k - 2, 0, known - 6);
+  const auto factor = local_interpolation(static_cast<double>(k - first) + 0.5);
+  for (Eigen::Index i = 0; i < 6; ++i) {
+    // Before and after half a cycle the field is minus its own.
+    const Eigen::Index at = first + i;
+    const bool beyond = at < 0 || at >= known;
+    weights[(at + known) % known] += (beyond ? -1.0 : 1.0) * factor[static_cast<std::size_t>(i)];
   }
   return weights;
 }

@@ -39,9 +39,12 @@ struct Instants {
   std::size_t size() const { return wt.size(); }
 };
 
+/// No course is divided into more intervals than this.
+inline constexpr int most_instants = 48;
+
 struct InstantOptions {
   int first = 6;           ///< intervals to begin with, even for half a cycle
-  int most = 48;           ///< intervals at most
+  int most = most_instants; ///< intervals at most
   double surprise = 1e-2;  ///< no more instants are added once they hold no more surprise than this
 };
 

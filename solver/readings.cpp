@@ -114,7 +114,7 @@ Readings over_half_cycle(std::span<const Readings> instants) {
   }
   result.energy = energy_over(instants, false);
   if (first.coenergy) result.coenergy = energy_over(instants, true);
-  const PeakFinder peaks(static_cast<int>(instants.size()));
+  const PeakFinder peaks;
   for (std::size_t probe = 0; probe < first.probes.size(); ++probe) {
     result.probes.emplace_back();
     for (std::size_t point = 0; point < first.probes[probe].size(); ++point) {

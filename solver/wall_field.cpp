@@ -75,7 +75,7 @@ std::vector<FieldLevel> field_levels(const Solution& solution) {
 
 std::vector<FieldLevel> field_levels(const Instants& instants) {
   std::optional<PeakFinder> between;
-  if (instants.half_cycle) between.emplace(static_cast<int>(instants.size()));
+  if (instants.half_cycle) between.emplace();
   std::vector<mesh::Point> b(instants.size());
   const mesh::FittedGrid& grid = instants.solution.front()->grid();
   return levels_of(*instants.solution.front()->problem, [&](int t) {

@@ -276,7 +276,7 @@ TEST_CASE("Doubling reach changes every figure by less than 0.02 %") {
       const Solved run = solved(problem);
       std::vector<solver::Probe> probes{{"near", {{20 * mm, 70 * mm}}, false, {}, ""},
                                         {"far", {{300 * mm, -100 * mm}}, false, {}, ""}};
-      figures[k] = figures_of(*run.integrals, *run.field, *run.bands, probes, {});
+      figures[k] = run.figures(probes);
     }
     const auto a = addresses(figures[0]);
     const auto b = addresses(figures[1]);

@@ -7,7 +7,7 @@
 #include <tuple>
 #include <utility>
 
-#include "io/results.hpp"
+#include "io/case_problem.hpp"
 #include "solver/constants.hpp"
 #include "tests/io/case_support.hpp"
 #include "tests/io/program_support.hpp"
@@ -352,14 +352,13 @@ TEST_CASE("Every curve file in cases/ is a valid curve and says that it is inven
   CHECK(count == 2);
 }
 
-TEST_CASE(
-    "Saturable steel is refused with a frequency, and has a coarse grid to start from without") {
+TEST_CASE("Saturable steel has a coarse grid to start from, steel of constant permeability none") {
   const ScratchFolder folder;
   folder.write("steel.csv", good_curve);
-  const auto read = [&](const std::string& top) {
-    return io::read_case(folder.write("case.toml", top + case_with("bh_curve = \"steel.csv\"")));
+  const auto grid_of = [&](const std::string& material) {
+    const auto input = io::read_case(folder.write("case.toml", case_with(material)));
+    return io::problem_of(input)->coarse_grid;
   };
-  CHECK_THROWS_WITH(io::problem_of(read("frequency_hz = 50\n")),
-                    Contains("saturable steel is solved for steady currents only"));
-  CHECK(io::problem_of(read(""))->coarse_grid != nullptr);
+  CHECK(grid_of("bh_curve = \"steel.csv\"") != nullptr);
+  CHECK(grid_of("relative_permeability = 500") == nullptr);
 }

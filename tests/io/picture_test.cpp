@@ -1,3 +1,4 @@
+#include "io/case_problem.hpp"
 #include "io/picture.hpp"
 
 #include <catch2/catch.hpp>

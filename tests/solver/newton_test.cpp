@@ -9,55 +9,19 @@
 #include "solver/wall_field.hpp"
 #include "tests/support/sections.hpp"
 #include "tests/support/solved.hpp"
+#include "tests/support/steel.hpp"
 
 namespace barwall {
 namespace {
 
 using mesh::Point;
+using support::flux_density_of;
 using support::mm;
 using support::solved;
 using support::Solved;
-
-/// A steel of our own making: knee near 1.5 T.
-std::shared_ptr<const solver::BhCurve> test_steel() {
-  static const auto curve =
-      std::make_shared<const solver::BhCurve>(solver::make_bh_curve({{0, 0},
-                                                                     {50, 0.05},
-                                                                     {100, 0.16},
-                                                                     {200, 0.45},
-                                                                     {400, 0.85},
-                                                                     {700, 1.12},
-                                                                     {1200, 1.33},
-                                                                     {2500, 1.52},
-                                                                     {5000, 1.66},
-                                                                     {10000, 1.79},
-                                                                     {20000, 1.92},
-                                                                     {40000, 2.03},
-                                                                     {80000, 2.12},
-                                                                     {160000, 2.23}}));
-  return curve;
-}
-
-/// A curve that is a straight line of the given permeability up to 2 T.
-std::shared_ptr<const solver::BhCurve> straight_line(double relative_permeability) {
-  std::vector<solver::BhPoint> points;
-  for (double b : {0.0, 0.4, 0.7, 1.3, 2.0}) {
-    points.push_back({b * solver::nu_0 / relative_permeability, b});
-  }
-  return std::make_shared<const solver::BhCurve>(solver::make_bh_curve(std::move(points)));
-}
-
-/// The problem with the last part of saturable steel, and a coarse grid to start from.
-std::shared_ptr<solver::Problem> with_curve(std::shared_ptr<solver::Problem> problem,
-                                            std::shared_ptr<const solver::BhCurve> curve) {
-  problem->materials.back() = solver::saturable_material("steel", std::move(curve));
-  mesh::GridOptions options;
-  options.cells_across = 2;
-  if (solver::has_net_current(problem->excitation)) options.wide = 42.0;
-  problem->coarse_grid =
-      std::make_shared<mesh::FittedGrid>(make_grid(problem->section, problem->outline, options));
-  return problem;
-}
+using support::straight_line;
+using support::test_steel;
+using support::with_curve;
 
 /// A round bar on the axis of a steel tube, radii 50 and 60 mm: H = I / (2 pi r) for any curve.
 std::shared_ptr<solver::Problem> bar_in_tube(double current) {
@@ -65,16 +29,6 @@ std::shared_ptr<solver::Problem> bar_in_tube(double current) {
   section.parts.push_back(support::bar("bar", {mesh::Round{{0, 0}, 30 * mm}}));
   section.parts.push_back(support::steel_wall("tube", {mesh::Tube{{0, 0}, 120 * mm, 10 * mm}}));
   return with_curve(support::problem_of(section, {1, 1}, {current, 0.0}), test_steel());
-}
-
-double flux_density_of(const solver::BhCurve& curve, double field) {
-  double low = 0.0;
-  double high = 10.0 + solver::mu_0 * field;
-  for (int k = 0; k < 200; ++k) {
-    const double middle = 0.5 * (low + high);
-    (curve.field(middle) < field ? low : high) = middle;
-  }
-  return 0.5 * (low + high);
 }
 
 TEST_CASE("In a steel tube round a centred bar B is that of I / (2 pi r) on the curve") {

@@ -18,7 +18,10 @@ struct Solved {
   mesh::Point b(mesh::Point at, int pattern = 0) const {
     return field->flux_density(locate(*problem->grid, problem->section, at), at, pattern);
   }
-  solver::Figures figures() const { return figures_of(*integrals, *field, *bands, {}, {}); }
+  solver::Figures figures(const std::vector<solver::Probe>& probes = {}) const {
+    return figures_of(*problem, bands->bodies(), readings_of(*integrals, *field, *bands, probes),
+                      probes, {});
+  }
   /// The value at an address; NaN when there is none.
   double value(const solver::Figures& from, const std::string& address) const {
     for (const auto& [name, figure] : addresses(from)) {

@@ -4,6 +4,7 @@
 #include <numbers>
 
 #include "solver/fault_figures.hpp"
+#include "solver/saturation_notices.hpp"
 #include "tests/support/sections.hpp"
 #include "tests/support/solved.hpp"
 #include "verify/hand_figures.hpp"
@@ -33,9 +34,9 @@ std::shared_ptr<solver::Problem> three_rounds() {
 
 solver::FaultFigures fault_of(const solver::Problem& problem, const solver::FaultCurrent& fault,
                               const std::optional<solver::Supports>& supports = {}) {
-  const solver::Solution solution = solve(solver::fault_problem(problem, fault));
-  return fault_figures(fault, solver::PartIntegrals(solution),
-                       solver::StressBands(problem, bodies(problem.outline)), supports);
+  const solver::StressBands bands(problem, bodies(problem.outline));
+  return fault_figures(fault, problem, bands.bodies(), solve_fault(problem, fault, bands),
+                       supports);
 }
 
 double value(const solver::Entry& entry, const std::string& key) {
@@ -116,9 +117,11 @@ TEST_CASE("Steel of constant permeability that a fault drives too high raises a 
   auto problem =
       support::problem_of(support::three_bars_in_trunking(), {1, 1, 1, 600},
                           {{1000.0, 0.0}, {-500.0, -866.0}, {-500.0, 866.0}, 0.0}, {2}, 50.0);
-  const auto levels = field_levels(solve(problem));
-  CHECK(saturation_notices(*problem, levels, 1.0, "under load").empty());
-  const auto notices = saturation_notices(*problem, levels, 40.0, "in the fault");
+  CHECK(saturation_notices(*problem, field_levels(solve(problem)), "under load").empty());
+  const solver::FaultCurrent fault{{0, 1, 2}, solver::AlternatingFault{50.0, 20e3, 0.1, {}}};
+  const solver::StressBands bands(*problem, bodies(problem->outline));
+  const auto notices =
+      saturation_notices(*problem, solve_fault(*problem, fault, bands).levels, "in the fault");
   REQUIRE(notices.size() == 1);
   CHECK(notices[0].indicative);
   CHECK(notices[0].detail.find("trunking") != std::string::npos);
