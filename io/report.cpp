@@ -120,7 +120,8 @@ std::string model(const Results& results) {
   std::string text =
       "<p>The numbers describe a straight, endless run: a two-dimensional magnetostatic field of "
       "the cross-section, every bar's current spread evenly over its area, walls of the stated "
-      "permeability, open air all round. There are no eddy currents, no skin and no proximity "
+      "permeability or magnetising curve, without hysteresis, open air all round. There are no "
+      "eddy currents, no skin and no proximity "
       "effect";
   text += results.alternating()
               ? ", and so no losses: the field follows the currents at every instant, and no heat "
@@ -177,6 +178,7 @@ std::string report_html(const Results& results, const std::string& picture_png,
   page += section("Field and limits", probe_tables(results));
   page += section("Inductance, reactance and energy", circuit_tables(results));
   page += section("Bars, walls and clearances", part_tables(results));
+  page += section("Push on the walls", push_tables(results));
   page += section("Checks", check_table(results));
   page += section("Notices", notice_list(results));
   page += section("Case data", case_tables(results));

@@ -4,6 +4,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <functional>
 #include <map>
 #include <numbers>
 
@@ -74,6 +75,16 @@ std::string in_words(const std::string& key) {
       {"energy_mean", "Field energy, mean"},
       {"energy_peak", "Field energy, peak"},
       {"coenergy", "Field coenergy"},
+      {"coenergy_mean", "Field coenergy, mean"},
+      {"coenergy_peak", "Field coenergy, peak"},
+      {"inductance_at", "at wt"},
+      {"push", "Push outward"},
+      {"push_mean", "Push outward, mean"},
+      {"push_max", "Push outward, most"},
+      {"push_min", "Push outward, least"},
+      {"pressure_mean", "Mean pressure"},
+      {"pressure_mean_max", "Mean pressure, most"},
+      {"pressure_mean_min", "Mean pressure, least"},
       {"gap", "Clearance"},
       {"limit", "Limit"},
       {"of_limit", "Share of the limit"}};
@@ -200,17 +211,19 @@ std::string hand_table(const Results& results) {
   HtmlTable table("Computed and by hand",
                   {"Of", "Figure", "Computed", "By hand", "Ratio", "Formula", "Source"},
                   {1, 2, 6, 7});
-  const auto add = [&](const std::string& what, const std::vector<Entry>& entries) {
-    for (const Entry& entry : entries) {
-      for (const Figure& figure : entry.figures) {
-        if (!std::isfinite(figure.hand)) continue;
-        table.row({entry.name + what, in_words(figure.key), shown(figure),
-                   quantity_text(figure.hand, figure.unit),
-                   fmt::format("{:.3f}", figure.value / figure.hand), entry.hand_formula,
-                   entry.hand_source});
-      }
-    }
-  };
+  const std::function<void(const std::string&, const std::vector<Entry>&)> add =
+      [&](const std::string& what, const std::vector<Entry>& entries) {
+        for (const Entry& entry : entries) {
+          add(what, entry.pieces);
+          for (const Figure& figure : entry.figures) {
+            if (!std::isfinite(figure.hand)) continue;
+            table.row({entry.name + what, in_words(figure.key), shown(figure),
+                       quantity_text(figure.hand, figure.unit),
+                       fmt::format("{:.3f}", figure.value / figure.hand), entry.hand_formula,
+                       entry.hand_source});
+          }
+        }
+      };
   add("", figures.bars);
   add("", figures.loops);
   if (figures.fault) add(", fault", figures.fault->bars);
@@ -272,6 +285,26 @@ std::string part_tables(const Results& results) {
   }
   return entry_table("Bars", "Bar", f.bars, others, currents) +
          entry_table("Walls", "Wall", f.walls, others) + gaps.html();
+}
+
+std::string push_tables(const Results& results) {
+  const auto flat = [](const std::vector<Entry>& walls) {
+    std::vector<Entry> faces;
+    for (const Entry& wall : walls) {
+      for (const Entry& face : wall.faces) {
+        faces.push_back(face);
+        faces.back().name = wall.name + ", " + face.name;
+      }
+    }
+    return faces;
+  };
+  const auto all = [](const Figure&) { return true; };
+  std::string tables = entry_table("Push on the sides of the walls, per metre of run", "Side",
+                                   flat(results.figures.walls), all);
+  if (const auto& fault = results.figures.fault) {
+    tables += entry_table("The same in the short circuit", "Side", flat(fault->walls), all);
+  }
+  return tables.empty() ? "" : fmt::format("<p>{}</p>\n", solver::wall_face_rule) + tables;
 }
 
 std::string check_table(const Results& results) {

@@ -15,6 +15,9 @@ std::string hand_table(const Results& results);
 std::string probe_tables(const Results& results);
 std::string circuit_tables(const Results& results);
 std::string part_tables(const Results& results);
+/// The pushes on the sides of walls, in the fault too, and the rule of what a side is; empty
+/// without any.
+std::string push_tables(const Results& results);
 std::string check_table(const Results& results);
 std::string notice_list(const Results& results);
 std::string case_tables(const Results& results);

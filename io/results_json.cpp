@@ -1,6 +1,7 @@
 #include "io/results_json.hpp"
 
 #include <cmath>
+#include <functional>
 #include <nlohmann/json.hpp>
 #include <numbers>
 
@@ -87,6 +88,11 @@ Json entries_json(const std::vector<solver::Entry>& entries, const char* parts_k
       json[parts_key] = entry.parts;
     }
     add_figures(json, entry.figures);
+    for (const solver::Entry& face : entry.faces) {
+      Json face_json{{"side", face.name}};
+      add_figures(face_json, face.figures);
+      json["faces"].push_back(std::move(face_json));
+    }
     list.push_back(std::move(json));
   }
   return list;
@@ -156,18 +162,20 @@ Json fault_json(const Results& results, const solver::FaultFigures& fault) {
 /// Every figure beside which a handbook's formula has a value, by address.
 Json hand_json(const solver::Figures& figures) {
   Json list = Json::array();
-  const auto add = [&](const std::string& prefix, const std::vector<solver::Entry>& entries) {
-    for (const solver::Entry& entry : entries) {
-      for (const solver::Figure& figure : entry.figures) {
-        if (!std::isfinite(figure.hand)) continue;
-        list.push_back({{"address", prefix + entry.name + "/" + figure.key},
-                        {"hand", figure_json(figure.hand, figure.unit)},
-                        {"ratio", number(figure.value / figure.hand)},
-                        {"formula", entry.hand_formula},
-                        {"source", entry.hand_source}});
-      }
-    }
-  };
+  const std::function<void(const std::string&, const std::vector<solver::Entry>&)> add =
+      [&](const std::string& prefix, const std::vector<solver::Entry>& entries) {
+        for (const solver::Entry& entry : entries) {
+          add(prefix + entry.name + "/pieces/", entry.pieces);
+          for (const solver::Figure& figure : entry.figures) {
+            if (!std::isfinite(figure.hand)) continue;
+            list.push_back({{"address", prefix + entry.name + "/" + figure.key},
+                            {"hand", figure_json(figure.hand, figure.unit)},
+                            {"ratio", number(figure.value / figure.hand)},
+                            {"formula", entry.hand_formula},
+                            {"source", entry.hand_source}});
+          }
+        }
+      };
   add("bars/", figures.bars);
   add("loops/", figures.loops);
   if (figures.fault) add("fault/bars/", figures.fault->bars);
@@ -220,7 +228,8 @@ std::string figures_json(const Results& results) {
   json["checks"] = checks_json(tidy(results.checks));
   json["notices"] = Json::array();
   for (const solver::Notice& notice : figures.notices) {
-    json["notices"].push_back({{"name", notice.name}, {"detail", notice.detail}});
+    json["notices"].push_back(
+        {{"name", notice.name}, {"detail", notice.detail}, {"indicative", notice.indicative}});
   }
   json["verdict"] = results.verdict();
   json["validity"] = results.validity();

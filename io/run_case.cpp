@@ -51,11 +51,10 @@ public:
     results_.problem = problem_of(results_.input);
     probes_ = probes_of(results_.input, results_.problem->outline);
     const Problem& problem = *results_.problem;
-    bands_.emplace(problem, bodies(problem.outline));
+    geometry_.emplace(problem);
     const solver::Readings readings =
         saturable(problem) && results_.alternating() ? instant_by_instant() : at_once();
-    results_.figures =
-        figures_of(problem, bands_->bodies(), readings, probes_, results_.input.circuits);
+    results_.figures = figures_of(problem, *geometry_, readings, probes_, results_.input.circuits);
     add_notices(verify::notices_of(problem, results_.figures, results_.input.circuits,
                                    results_.input.run_length_m));
     const solver::FaultCurrent* fault = nullptr;
@@ -79,9 +78,9 @@ private:
     watch_.begin("figures");
     results_.field = std::make_shared<solver::RecoveredField>(*results_.solution);
     const solver::PartIntegrals integrals(*results_.solution);
-    auto readings = readings_of(integrals, *results_.field, *bands_, probes_);
+    auto readings = readings_of(integrals, *results_.field, *geometry_, probes_);
     watch_.begin("checks");
-    results_.checks = verify::run_checks(integrals, *results_.field, *bands_);
+    results_.checks = verify::run_checks(integrals, *results_.field, geometry_->bands);
     return readings;
   }
 
@@ -101,12 +100,12 @@ private:
     for (std::size_t k = 0; k < instants.size(); ++k) {
       const solver::RecoveredField field(*instants.solution[k]);
       const solver::PartIntegrals integrals(*instants.solution[k]);
-      readings.push_back(readings_at_instant(integrals, field, *bands_, probes_));
-      checks.add(instants.wt[k], integrals, field, *bands_);
+      readings.push_back(readings_at_instant(integrals, field, *geometry_, probes_));
+      checks.add(instants.wt[k], integrals, field, geometry_->bands);
       recovery.add(field);
     }
     results_.field = std::make_shared<solver::RecoveredField>(recovery.over_cycle(*fundamental));
-    results_.checks = checks.checks(problem, bands_->bodies());
+    results_.checks = checks.checks(problem, geometry_->bands.bodies());
     auto cycle = over_half_cycle(std::span<const solver::Readings>(readings));
     cycle.levels = field_levels(instants);
     cycle.loops = loop_inductances(solver::PartIntegrals(*fundamental));
@@ -116,11 +115,10 @@ private:
 
   void add_fault(const solver::FaultCurrent& fault) {
     const Problem& problem = *results_.problem;
-    results_.fault = solve_fault(problem, fault, *bands_);
+    results_.fault = solve_fault(problem, fault, *geometry_);
     std::optional<solver::Supports> supports;
     if (const auto& given = results_.input.supports) supports = {given->span, given->strength};
-    results_.figures.fault =
-        fault_figures(fault, problem, bands_->bodies(), *results_.fault, supports);
+    results_.figures.fault = fault_figures(fault, problem, *geometry_, *results_.fault, supports);
     const auto& levels = results_.fault->levels;
     add_notices(saturation_notices(problem, levels, "in the fault"));
     add_notices(table_notices(problem, levels, "in the fault"));
@@ -134,7 +132,7 @@ private:
   Results results_;
   Stopwatch watch_;
   std::vector<solver::Probe> probes_;
-  std::optional<solver::StressBands> bands_;
+  std::optional<solver::ForceGeometry> geometry_;
 };
 
 }  // namespace

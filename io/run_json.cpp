@@ -83,6 +83,12 @@ std::string run_json(const Results& results, const std::filesystem::path& folder
       {"residuals", solution.report.residuals}};
   if (!solution.newton.empty()) json["newton"] = newton_json(solution.newton);
   if (results.instants) json["instants"] = instants_json(*results.instants);
+  if (results.fault && results.fault->course) {
+    json["fault"]["course"] = instants_json(*results.fault->course);
+    for (const auto& reports : results.fault->newton) {
+      json["fault"]["newton"].push_back(newton_json(reports));
+    }
+  }
   json["threads"] = omp_get_max_threads();
   json["peak_memory_bytes"] = static_cast<std::int64_t>(peak_memory());
   return json.dump(1, ' ', false, Json::error_handler_t::replace) + "\n";

@@ -174,7 +174,10 @@ public:
            std::isfinite(share) ? percent_text(share) : ""});
     };
     for (const auto* entries : {&fault.bars, &fault.walls, &fault.bodies}) {
-      for (const solver::Entry& entry : *entries) add(entry);
+      for (const solver::Entry& entry : *entries) {
+        add(entry);
+        for (const solver::Entry& piece : entry.pieces) add(piece);
+      }
     }
     text += table.text(summary_width) + more_rows(count);
     if (results_.input.supports) {
@@ -222,9 +225,11 @@ public:
   }
 
   std::string inductances() const {
-    PlainTable loops("lrr");
-    const bool both = !figures_.loops.empty() && figures_.loops.front().figures.size() == 2;
-    if (both) loops.add({"", "secant", "differential"});
+    PlainTable loops("lrrr");
+    if (!figures_.loops.empty() && figures_.loops.front().figures.size() > 1) {
+      loops.add(
+          {"", "secant", "differential", figures_.loops.front().figures.size() > 2 ? "at wt" : ""});
+    }
     for (std::size_t k = 0; k < std::min(figures_.loops.size(), most_rows); ++k) {
       const solver::Entry& loop = figures_.loops[k];
       std::vector<std::string> cells{name_of(loop.name)};
@@ -252,22 +257,71 @@ public:
         std::any_of(figures_.walls.begin(), figures_.walls.end(), [](const solver::Entry& wall) {
           return find_figure(wall.figures, "saturated_share") != nullptr;
         });
-    PlainTable table("lrrr");
+    const bool fault = figures_.fault.has_value();
+    PlainTable table("lrrrrr");
     if (!figures_.walls.empty()) {
-      table.add({"", "mean", "exceeded on 1 % of the area", saturable ? "saturated" : ""});
+      table.add({"", "mean", "exceeded on 1 %", saturable ? "saturated" : "",
+                 fault ? "in the fault" : "", fault && saturable ? "saturated" : ""});
     }
+    const auto saturated = [](const solver::Entry& wall) {
+      const double share = value_of(wall.figures, "saturated_share");
+      return std::isfinite(share) ? fmt::format("{:.0f} %", 100.0 * share) : "";
+    };
     for (std::size_t k = 0; k < std::min(figures_.walls.size(), most_rows); ++k) {
       const solver::Entry& wall = figures_.walls[k];
-      const double share = value_of(wall.figures, "saturated_share");
       table.add({name_of(wall.name), text_of(wall.figures, "b_mean"),
-                 text_of(wall.figures, "b_high"),
-                 std::isfinite(share) ? fmt::format("{:.0f} %", 100.0 * share) : ""});
+                 text_of(wall.figures, "b_high"), saturated(wall),
+                 fault ? text_of(figures_.fault->walls[k].figures, "b_high") : "",
+                 fault ? saturated(figures_.fault->walls[k]) : ""});
     }
     std::string text = section(alternating_ ? "Flux density in the walls, largest in the cycle"
                                             : "Flux density in the walls",
                                table, figures_.walls.size());
     if (saturable) text += "  saturated: the share of the area with dB/dH below 10 mu_0\n";
     return text;
+  }
+
+  /// The sides of the walls with the largest pushes, outward positive.
+  std::string pushes() const {
+    struct Row {
+      double size;
+      std::vector<std::string> cells;
+    };
+    std::vector<Row> rows;
+    const auto range = [](Row& row, const solver::Entry& face) {
+      for (const char* key : {"push_max", "push_min"}) {
+        row.size = std::max(row.size, std::abs(value_of(face.figures, key)));
+        row.cells.push_back(text_of(face.figures, key));
+      }
+    };
+    for (std::size_t k = 0; k < figures_.walls.size(); ++k) {
+      const solver::Entry& wall = figures_.walls[k];
+      for (std::size_t f = 0; f < wall.faces.size(); ++f) {
+        const solver::Entry& face = wall.faces[f];
+        Row row{0.0, {name_of(wall.name), face.name}};
+        if (alternating_) {
+          range(row, face);
+        } else {
+          row.size = std::abs(value_of(face.figures, "push"));
+          row.cells.push_back(text_of(face.figures, "push"));
+          row.cells.push_back(text_of(face.figures, "pressure_mean"));
+        }
+        if (figures_.fault) range(row, figures_.fault->walls[k].faces[f]);
+        rows.push_back(std::move(row));
+      }
+    }
+    if (rows.empty()) return "";
+    std::stable_sort(rows.begin(), rows.end(),
+                     [](const Row& a, const Row& b) { return a.size > b.size; });
+    PlainTable table("llrrrr");
+    std::vector<std::string> head = alternating_
+                                        ? std::vector<std::string>{"", "", "most", "least"}
+                                        : std::vector<std::string>{"", "", "push", "mean pressure"};
+    if (figures_.fault) head.insert(head.end(), {"most in the fault", "least"});
+    table.add(head);
+    for (std::size_t k = 0; k < std::min(rows.size(), most_rows); ++k) table.add(rows[k].cells);
+    return section("Push on the sides of the walls, outward positive, per metre of run", table,
+                   rows.size());
   }
 
   std::string notices() const {
@@ -359,8 +413,8 @@ std::string verdict_line(const Results& results, bool colour) {
 std::string summary(const Results& results, const std::filesystem::path& folder, bool colour) {
   const Summary parts(results, colour);
   return parts.head() + parts.forces() + parts.fault() + parts.probes() + parts.inductances() +
-         parts.walls() + "\nChecks\n" + checks_table(results, colour) + parts.notices() + "\n" +
-         verdict_line(results, colour) +
+         parts.walls() + parts.pushes() + "\nChecks\n" + checks_table(results, colour) +
+         parts.notices() + "\n" + verdict_line(results, colour) +
          fmt::format("Results: {}\nReport:  {}\n", folder.string(),
                      (folder / "report.html").string()) +
          wrapped(

@@ -24,7 +24,8 @@ double largest(const std::vector<solver::Figure>& figures, const std::string& un
 double largest(const std::vector<solver::Entry>& entries, const std::string& unit) {
   double result = 0.0;
   for (const solver::Entry& entry : entries) {
-    result = std::max({result, largest(entry.figures, unit), largest(entry.pieces, unit)});
+    result = std::max({result, largest(entry.figures, unit), largest(entry.pieces, unit),
+                       largest(entry.faces, unit)});
   }
   return result;
 }
@@ -56,12 +57,30 @@ struct Floors {
   double linkage = 0.0;
 };
 
+/// A pressure is a push over a length: both are rounding's together.
+void tidy_faces(std::vector<solver::Entry>& faces, const Floors& floors) {
+  for (solver::Entry& face : faces) {
+    for (solver::Figure& figure : face.figures) {
+      if (figure.unit != "N/m" || std::abs(figure.value) >= floors.force) continue;
+      figure.value = 0.0;
+      const std::string pressure = "pressure_mean" + figure.key.substr(std::string("push").size());
+      for (solver::Figure& other : face.figures) {
+        const bool own =
+            other.key == pressure || (figure.key == "push_mean" && other.key == "pressure_mean");
+        if (own && std::isfinite(other.value)) other.value = 0.0;
+      }
+    }
+    round_all(face.figures);
+  }
+}
+
 void tidy_entries(std::vector<solver::Entry>& entries, const Floors& floors) {
   for (solver::Entry& entry : entries) {
     drop_below(entry.figures, "N/m", floors.force);
     drop_below(entry.figures, "Wb/m", floors.linkage);
     round_all(entry.figures);
     tidy_entries(entry.pieces, floors);
+    tidy_faces(entry.faces, floors);
   }
 }
 

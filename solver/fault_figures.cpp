@@ -41,11 +41,32 @@ std::vector<Figure> circuit_figures(const FaultCurrent& fault) {
 }  // namespace
 
 FaultFigures fault_figures(const FaultCurrent& fault, const Problem& problem,
-                           const std::vector<std::vector<int>>& bodies,
-                           const FaultSolution& solution, const std::optional<Supports>& supports) {
+                           const ForceGeometry& geometry, const FaultSolution& solution,
+                           const std::optional<Supports>& supports) {
   const PartForces<FaultExtremes>& forces = solution.extremes;
   const auto figures_of = [&](const std::optional<FaultExtremes>& extremes) {
     return extremes ? extreme_figures(*extremes) : without_values(extreme_figures({}));
+  };
+  const auto faces_of = [&](int part) {
+    std::vector<Entry> entries;
+    const auto& faces = geometry.faces.faces();
+    for (std::size_t k = 0; k < faces.size(); ++k) {
+      if (faces[k].part != part) continue;
+      const double most = forces.push[k].x_max.value;
+      const double least = forces.push[k].x_min.value;
+      const auto pressure = [&](double force) {
+        return faces[k].length > 0.0 ? force / faces[k].length : not_given;
+      };
+      entries.push_back({face_name(problem, faces[k]),
+                         {},
+                         {{"push_max", most, "N/m"},
+                          {"push_min", least, "N/m"},
+                          {"pressure_mean_max", pressure(most), "Pa"},
+                          {"pressure_mean_min", pressure(least), "Pa"}},
+                         {},
+                         0.0});
+    }
+    return entries;
   };
   FaultFigures result;
   result.circuit = circuit_figures(fault);
@@ -60,6 +81,7 @@ FaultFigures fault_figures(const FaultCurrent& fault, const Problem& problem,
       if (problem.materials[index].saturable()) {
         entry.figures.push_back({"saturated_share", level.saturated_share, "1"});
       }
+      entry.faces = faces_of(part);
       result.walls.push_back(std::move(entry));
       continue;
     }
@@ -79,7 +101,7 @@ FaultFigures fault_figures(const FaultCurrent& fault, const Problem& problem,
     result.bars.push_back(std::move(entry));
   }
   auto extremes = forces.body.begin();
-  for (const auto& members : bodies) {
+  for (const auto& members : geometry.bands.bodies()) {
     if (members.size() < 2) continue;
     Entry entry;
     for (int part : members) {

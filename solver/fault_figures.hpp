@@ -20,10 +20,10 @@ struct Supports {
 /// given where any will do or none is known. With supports, for bars "support_force" [N], the peak
 /// force over a span, and "support_share" of their strength [1]: static, no dynamic factor. Of
 /// walls also "b_mean" and "b_high" of each point's largest magnitude in the fault [T], and of
-/// saturable ones "saturated_share" [1].
-/// \param bodies groups of parts in contact (mesh::bodies)
+/// saturable ones "saturated_share" [1]; of their faces "push_max", "push_min" [N/m] and
+/// "pressure_mean_max", "pressure_mean_min" [Pa], outward positive.
 FaultFigures fault_figures(const FaultCurrent& fault, const Problem& problem,
-                           const std::vector<std::vector<int>>& bodies,
-                           const FaultSolution& solution, const std::optional<Supports>& supports);
+                           const ForceGeometry& geometry, const FaultSolution& solution,
+                           const std::optional<Supports>& supports);
 
 }  // namespace barwall::solver

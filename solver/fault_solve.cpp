@@ -7,8 +7,8 @@ namespace {
 
 using Forces = PartForces<PulsatingVector>;
 
-/// Of the course of a series, whose first intervals span a twelfth of a cycle.
-constexpr InstantOptions along_course{12};
+/// Of the course of a series, which is to be looked at: an instant every 15 degrees will do.
+constexpr InstantOptions along_course{12, 24};
 
 /// Solves the course of the series at a closing angle.
 void solve_course(FaultSolution& result, const Problem& problem, const FaultCurrent& fault,
@@ -20,10 +20,17 @@ void solve_course(FaultSolution& result, const Problem& problem, const FaultCurr
   }
 }
 
-std::vector<Forces> forces_at(const Instants& instants, const StressBands& bands) {
+Forces forces_on(const Solution& solution, const ForceGeometry& geometry, bool faces) {
+  std::optional<RecoveredField> field;
+  if (faces && !geometry.faces.faces().empty()) field.emplace(solution);
+  return forces_of(PartIntegrals(solution), geometry, field ? &*field : nullptr);
+}
+
+/// \param faces with the pushes on the walls' faces
+std::vector<Forces> forces_at(const Instants& instants, const ForceGeometry& geometry, bool faces) {
   std::vector<Forces> forces;
   for (const auto& solution : instants.solution) {
-    forces.push_back(forces_of(PartIntegrals(*solution), bands));
+    forces.push_back(forces_on(*solution, geometry, faces));
   }
   return forces;
 }
@@ -48,12 +55,12 @@ std::optional<double> given_closing(const FaultCurrent& fault) {
 }
 
 FaultSolution with_constant_permeability(const Problem& problem, const FaultCurrent& fault,
-                                         const StressBands& bands) {
+                                         const ForceGeometry& geometry) {
   Problem sustained = problem;
   sustained.excitation = sustained_excitation(fault, problem.section.parts.size());
   sustained.loops.clear();
   const Solution solution = solve(std::make_shared<const Problem>(std::move(sustained)));
-  const Forces forces = forces_of(PartIntegrals(solution), bands);
+  const Forces forces = forces_on(solution, geometry, true);
   FaultSolution result;
   result.extremes = combined(std::span(&forces, 1), [&](const std::vector<PulsatingVector>& force) {
     return extremes_of(fault, force.front());
@@ -84,15 +91,21 @@ Instants half_turn(const Problem& problem, const FaultCurrent& fault, double sca
       problem, half_cycle_of(sustained_excitation(fault, problem.section.parts.size()), scale));
 }
 
+void add_histories(FaultSolution& result, const Instants& instants) {
+  for (const auto& solution : instants.solution) result.newton.push_back(solution->newton);
+}
+
 FaultSolution with_saturable_steel(const Problem& problem, const FaultCurrent& fault,
-                                   const StressBands& bands) {
+                                   const ForceGeometry& geometry) {
   FaultSolution result;
   const auto* alternating = std::get_if<AlternatingFault>(&fault.course);
   const auto closing = given_closing(fault);
   if (closing) {
     solve_course(result, problem, fault, *closing);
-    const auto first_cycle = forces_at(*result.course, bands);
-    const auto later = forces_at(half_turn(problem, fault, 1.0), bands);
+    const auto first_cycle = forces_at(*result.course, geometry, true);
+    const Instants sustained_instants = half_turn(problem, fault, 1.0);
+    add_histories(result, sustained_instants);
+    const auto later = forces_at(sustained_instants, geometry, true);
     const Forces sustained = over_half_cycle(std::span<const Forces>(later));
     // Each force's way through the first cycle, with the sustained one at the end.
     std::vector<Forces> all = first_cycle;
@@ -116,18 +129,20 @@ FaultSolution with_saturable_steel(const Problem& problem, const FaultCurrent& f
   };
   if (alternating != nullptr) {
     const Instants largest = half_turn(problem, fault, largest_scale(fault).scale);
-    const auto forces = forces_at(largest, bands);
+    add_histories(result, largest);
+    const auto forces = forces_at(largest, geometry, true);
     result.extremes = extremes_at_largest(over_half_cycle(std::span<const Forces>(forces)));
     result.levels = field_levels(largest);
   } else {
     const Solution largest = at_largest_direct_current(problem, fault);
-    result.extremes = extremes_at_largest(forces_of(PartIntegrals(largest), bands));
+    result.newton.push_back(largest.newton);
+    result.extremes = extremes_at_largest(forces_on(largest, geometry, true));
     result.levels = field_levels(largest);
   }
   if (std::holds_alternative<DirectPeak>(fault.course)) return result;
   const double worst = worst_closing(fault, result.extremes);
   solve_course(result, problem, fault, worst);
-  const auto forces = forces_at(*result.course, bands);
+  const auto forces = forces_at(*result.course, geometry, false);
   result.series = fault_series(fault, worst, std::span<const Forces>(forces));
   return result;
 }
@@ -135,9 +150,9 @@ FaultSolution with_saturable_steel(const Problem& problem, const FaultCurrent& f
 }  // namespace
 
 FaultSolution solve_fault(const Problem& problem, const FaultCurrent& fault,
-                          const StressBands& bands) {
-  return saturable(problem) ? with_saturable_steel(problem, fault, bands)
-                            : with_constant_permeability(problem, fault, bands);
+                          const ForceGeometry& geometry) {
+  return saturable(problem) ? with_saturable_steel(problem, fault, geometry)
+                            : with_constant_permeability(problem, fault, geometry);
 }
 
 }  // namespace barwall::solver

@@ -15,7 +15,9 @@ struct FaultSolution {
   std::vector<FieldLevel> levels;  ///< per part, of the largest field in the fault
   /// At the given closing angle, else at the one with the largest force on a bar.
   FaultSeries series;
-  std::optional<Instants> course;       ///< with saturable steel the instants of the series
+  /// With saturable steel the histories of the solves for the extremes, one after the other.
+  std::vector<std::vector<NewtonReport>> newton;
+  std::optional<Instants> course;      ///< with saturable steel the instants of the series
   std::vector<double> course_seconds;  ///< their times since closing
 };
 
@@ -24,6 +26,6 @@ struct FaultSolution {
 /// half a turn at the largest scale, and the series' course.
 /// \throws SolveError, NewtonError
 FaultSolution solve_fault(const Problem& problem, const FaultCurrent& fault,
-                          const StressBands& bands);
+                          const ForceGeometry& geometry);
 
 }  // namespace barwall::solver

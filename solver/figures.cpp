@@ -24,10 +24,9 @@ void append(std::vector<T>& to, std::vector<T> more) {
 
 class Collector {
 public:
-  Collector(const Problem& problem, const std::vector<std::vector<int>>& bodies,
-            const Readings& readings)
+  Collector(const Problem& problem, const ForceGeometry& geometry, const Readings& readings)
       : problem_(problem),
-        bodies_(bodies),
+        geometry_(geometry),
         readings_(readings),
         alternating_(problem_.excitation.alternating()),
         visible_(visible_parts(problem_.outline)) {}
@@ -51,7 +50,7 @@ public:
     append(figures.notices, table_notices(problem_, readings_.levels, "under load"));
     append(figures.notices, saturation_notices(problem_, readings_.levels, "under load"));
     auto force = readings_.forces.body.begin();
-    for (const auto& members : bodies_) {
+    for (const auto& members : geometry_.bands.bodies()) {
       if (members.size() < 2) continue;
       Entry entry;
       for (int part : members) entry.parts.push_back(name_of(part));
@@ -180,11 +179,38 @@ private:
       }
     } else {
       append<Figure>(entry.figures, {{"b_mean", level.mean, "T"}, {"b_high", level.high, "T"}});
+      entry.faces = faces_of(part);
     }
     if (problem_.materials[static_cast<std::size_t>(part)].saturable()) {
       append<Figure>(entry.figures, {{"saturated_share", level.saturated_share, "1"}});
     }
     return entry;
+  }
+
+  std::vector<Entry> faces_of(int part) const {
+    std::vector<Entry> result;
+    const auto& faces = geometry_.faces.faces();
+    for (std::size_t k = 0; k < faces.size(); ++k) {
+      if (faces[k].part != part) continue;
+      const Pulsation& push = readings_.forces.push[k].x;
+      const double length = faces[k].length;
+      const auto pressure = [length](double force) {
+        return length > 0.0 ? force / length : not_given;
+      };
+      Entry entry{face_name(problem_, faces[k]), {}, {}, {}, 0.0};
+      if (!alternating_) {
+        entry.figures = {{"push", push.mean, "N/m"}, {"pressure_mean", pressure(push.mean), "Pa"}};
+      } else {
+        entry.figures = {{"push_mean", push.mean, "N/m"},
+                         {"push_max", push.largest(), "N/m"},
+                         {"push_min", push.smallest(), "N/m"},
+                         {"pressure_mean", pressure(push.mean), "Pa"},
+                         {"pressure_mean_max", pressure(push.largest()), "Pa"},
+                         {"pressure_mean_min", pressure(push.smallest()), "Pa"}};
+      }
+      result.push_back(std::move(entry));
+    }
+    return result;
   }
 
   std::vector<Figure> field_figures(const FieldReading& reading) const {
@@ -243,7 +269,7 @@ private:
   }
 
   const Problem& problem_;
-  const std::vector<std::vector<int>>& bodies_;
+  const ForceGeometry& geometry_;
   const Readings& readings_;
   bool alternating_;
   std::vector<int> visible_;
@@ -272,6 +298,11 @@ std::vector<Figure> without_values(std::vector<Figure> figures) {
   return figures;
 }
 
+std::string face_name(const Problem& problem, const WallFace& face) {
+  const auto& pieces = problem.section.parts[static_cast<std::size_t>(face.part)].pieces;
+  return pieces.size() > 1 ? fmt::format("{} {}", face.piece + 1, face.side) : face.side;
+}
+
 std::string joined(const std::vector<std::string>& names) {
   std::string result;
   for (const std::string& name : names) result += (result.empty() ? "" : "+") + name;
@@ -294,6 +325,9 @@ std::vector<std::pair<std::string, const Figure*>> addresses(const Figures& figu
       add(kind + "/" + entry.name + "/", entry.figures);
       for (const Entry& piece : entry.pieces) {
         add(kind + "/" + entry.name + "/pieces/" + piece.name + "/", piece.figures);
+      }
+      for (const Entry& face : entry.faces) {
+        add(kind + "/" + entry.name + "/faces/" + face.name + "/", face.figures);
       }
     }
   };
@@ -342,10 +376,9 @@ LimitState limits_of(const Figures& figures) {
   return worst;
 }
 
-Figures figures_of(const Problem& problem, const std::vector<std::vector<int>>& bodies,
-                   const Readings& readings, const std::vector<Probe>& probes,
-                   const std::vector<Circuit>& circuits) {
-  const Collector collector(problem, bodies, readings);
+Figures figures_of(const Problem& problem, const ForceGeometry& geometry, const Readings& readings,
+                   const std::vector<Probe>& probes, const std::vector<Circuit>& circuits) {
+  const Collector collector(problem, geometry, readings);
   Figures figures;
   collector.parts(figures);
   collector.loops(figures);

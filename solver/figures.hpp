@@ -31,6 +31,7 @@ struct Entry {
   std::complex<double> current = 0.0;  ///< of a bar [A]; r.m.s. phasor with a frequency
   std::string hand_formula = {};       ///< name of the formula of its figures' hand values
   std::string hand_source = {};        ///< where that is published
+  std::vector<Entry> faces = {};       ///< of a wall (wall_face_rule), named by their sides
 };
 
 enum class LimitState { none, met, exceeded, undecided };
@@ -95,6 +96,10 @@ std::vector<Figure> force_figures(const PulsatingVector& force, bool alternating
 /// The same figures without their values.
 std::vector<Figure> without_values(std::vector<Figure> figures);
 
+/// The name of a wall's face within the wall: its side, "top", of a wall of several pieces with the
+/// piece's number, "2 top".
+std::string face_name(const Problem& problem, const WallFace& face);
+
 /// Names joined by "+", as a body's and a circuit's.
 std::string joined(const std::vector<std::string>& names);
 
@@ -102,9 +107,7 @@ std::string joined(const std::vector<std::string>& names);
 LimitState limits_of(const Figures& figures);
 
 /// The figures of a problem from what was read off its solution.
-/// \param bodies groups of parts in contact (mesh::bodies)
-Figures figures_of(const Problem& problem, const std::vector<std::vector<int>>& bodies,
-                   const Readings& readings, const std::vector<Probe>& probes,
-                   const std::vector<Circuit>& circuits);
+Figures figures_of(const Problem& problem, const ForceGeometry& geometry, const Readings& readings,
+                   const std::vector<Probe>& probes, const std::vector<Circuit>& circuits);
 
 }  // namespace barwall::solver

@@ -22,7 +22,9 @@ std::optional<PulsatingVector> force_on_part(const PartIntegrals& integrals,
 
 }  // namespace
 
-PartForces<PulsatingVector> forces_of(const PartIntegrals& integrals, const StressBands& bands) {
+PartForces<PulsatingVector> forces_of(const PartIntegrals& integrals, const ForceGeometry& geometry,
+                                      const RecoveredField* field) {
+  const StressBands& bands = geometry.bands;
   const Problem& problem = *integrals.solution().problem;
   PartForces<PulsatingVector> result;
   result.part.resize(problem.section.parts.size());
@@ -39,6 +41,11 @@ PartForces<PulsatingVector> forces_of(const PartIntegrals& integrals, const Stre
   for (std::size_t b = 0; b < bands.bodies().size(); ++b) {
     if (bands.bodies()[b].size() < 2) continue;
     result.body.push_back(bands.force(integrals.solution(), static_cast<int>(b), whole_band));
+  }
+  const auto& faces = geometry.faces.faces();
+  for (std::size_t k = 0; field != nullptr && k < faces.size(); ++k) {
+    const PulsatingVector force = geometry.faces.force(integrals.solution(), *field, k);
+    result.push.push_back({push_of(faces[k], force), {}});
   }
   return result;
 }

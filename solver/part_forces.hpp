@@ -7,8 +7,18 @@
 #include <vector>
 
 #include "solver/force.hpp"
+#include "solver/wall_faces.hpp"
 
 namespace barwall::solver {
+
+/// Where the forces of a problem are read: made once for its grid, used for every solution on it.
+struct ForceGeometry {
+  StressBands bands;
+  WallFaces faces;
+
+  explicit ForceGeometry(const Problem& problem)
+      : bands(problem, mesh::bodies(problem.outline)), faces(problem) {}
+};
 
 /// Something known of the force on every part, every piece and every body of a section: the force
 /// over the cycle, its extremes in a fault.
@@ -20,12 +30,16 @@ struct PartForces {
   /// Per part, per piece of a bar of several and of mu_r = 1; else empty.
   std::vector<std::vector<T>> piece;
   std::vector<T> body;  ///< per body of the stress bands with more than one part, in order
+  /// Per face of the walls its push, as the x component of a force whose y is zero.
+  std::vector<T> push;
 };
 
 /// The forces of a solution over the cycle, per metre of run [N/m]; steady currents have means
 /// alone. On a bar of mu_r = 1 J x B, where that is exact, on any other part the stress in the
 /// whole band round it.
-PartForces<PulsatingVector> forces_of(const PartIntegrals& integrals, const StressBands& bands);
+/// \param field of the solution, for the faces of walls; null: without these
+PartForces<PulsatingVector> forces_of(const PartIntegrals& integrals, const ForceGeometry& geometry,
+                                      const RecoveredField* field);
 
 /// For every part, piece and body something made from what several sets know of it.
 /// \param sets of one section, at least one
@@ -54,6 +68,9 @@ auto combined(std::span<const PartForces<T>> sets, Make make) {
   }
   for (std::size_t b = 0; b < first.body.size(); ++b) {
     result.body.push_back(each([&](const PartForces<T>& set) { return set.body[b]; }));
+  }
+  for (std::size_t k = 0; k < first.push.size(); ++k) {
+    result.push.push_back(each([&](const PartForces<T>& set) { return set.push[k]; }));
   }
   return result;
 }

@@ -66,11 +66,11 @@ std::vector<LoopInductance> loop_inductances(const PartIntegrals& integrals) {
 }
 
 Readings readings_at_instant(const PartIntegrals& integrals, const RecoveredField& field,
-                             const StressBands& bands, const std::vector<Probe>& probes) {
+                             const ForceGeometry& geometry, const std::vector<Probe>& probes) {
   const Solution& solution = integrals.solution();
   const Problem& problem = *solution.problem;
   Readings result;
-  result.forces = forces_of(integrals, bands);
+  result.forces = forces_of(integrals, geometry, &field);
   result.linkage.resize(problem.section.parts.size());
   for (std::size_t k = 0; k < result.linkage.size(); ++k) {
     if (problem.section.parts[k].kind != mesh::Part::Kind::bar) continue;
@@ -95,8 +95,8 @@ Readings readings_at_instant(const PartIntegrals& integrals, const RecoveredFiel
 }
 
 Readings readings_of(const PartIntegrals& integrals, const RecoveredField& field,
-                     const StressBands& bands, const std::vector<Probe>& probes) {
-  Readings result = readings_at_instant(integrals, field, bands, probes);
+                     const ForceGeometry& geometry, const std::vector<Probe>& probes) {
+  Readings result = readings_at_instant(integrals, field, geometry, probes);
   result.levels = field_levels(integrals.solution());
   result.loops = loop_inductances(integrals);
   return result;

@@ -42,11 +42,11 @@ struct Readings {
 
 /// The readings of steady currents, or of alternating ones where fields can be added.
 Readings readings_of(const PartIntegrals& integrals, const RecoveredField& field,
-                     const StressBands& bands, const std::vector<Probe>& probes);
+                     const ForceGeometry& geometry, const std::vector<Probe>& probes);
 
 /// The same without levels and loops, which over a cycle come from all instants or from one.
 Readings readings_at_instant(const PartIntegrals& integrals, const RecoveredField& field,
-                             const StressBands& bands, const std::vector<Probe>& probes);
+                             const ForceGeometry& geometry, const std::vector<Probe>& probes);
 
 /// Inductances of all loops of a solution's problem.
 std::vector<LoopInductance> loop_inductances(const PartIntegrals& integrals);

@@ -21,6 +21,28 @@ void name_formula(solver::Entry& entry, const Hand<Value>& hand) {
   entry.hand_source = hand.source;
 }
 
+/// Sets a hand value beside the peak force.
+void set_peak(solver::Entry& entry, const HandValue& hand) {
+  name_formula(entry, hand);
+  for (solver::Figure& figure : entry.figures) {
+    if (figure.key == "force_peak") figure.hand = hand.value;
+  }
+}
+
+/// True for the pieces at the ends of a row: none is farther from all others together.
+bool outermost(const mesh::Part& bar, std::size_t piece) {
+  const auto from = [&](const mesh::Shape& one) {
+    double sum = 0.0;
+    for (const mesh::Shape& other : bar.pieces) {
+      sum += distance(bounds(one).centre(), bounds(other).centre());
+    }
+    return sum;
+  };
+  const double own = from(bar.pieces[piece]);
+  return std::all_of(bar.pieces.begin(), bar.pieces.end(),
+                     [&](const mesh::Shape& other) { return from(other) <= own * (1.0 + 1e-9); });
+}
+
 }  // namespace
 
 void add_hand_values(solver::Figures& figures, const solver::Problem& problem,
@@ -47,13 +69,17 @@ void add_hand_values(solver::Figures& figures, const solver::Problem& problem,
     for (solver::Figure& figure : figures.loops[k].figures) figure.hand = hand->value;
   }
   if (fault == nullptr || !figures.fault) return;
+  const double peak = standard_peak(*fault);
   for (solver::Entry& bar : figures.fault->bars) {
-    const auto hand = standard_fault_force(problem.section, *fault, standard_peak(*fault),
-                                           part_of(problem.section, bar.name));
-    if (!hand) continue;
-    name_formula(bar, *hand);
-    for (solver::Figure& figure : bar.figures) {
-      if (figure.key == "force_peak") figure.hand = hand->value;
+    const int part = part_of(problem.section, bar.name);
+    if (const auto hand = standard_fault_force(problem.section, *fault, peak, part)) {
+      set_peak(bar, *hand);
+    }
+    const bool in_fault = std::count(fault->bars.begin(), fault->bars.end(), part) > 0;
+    const mesh::Part& whole = problem.section.parts[static_cast<std::size_t>(part)];
+    const auto between = in_fault ? standard_piece_force(whole, peak) : std::nullopt;
+    for (std::size_t k = 0; between && k < bar.pieces.size(); ++k) {
+      if (outermost(whole, k)) set_peak(bar.pieces[k], *between);
     }
   }
 }

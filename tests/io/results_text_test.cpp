@@ -73,7 +73,9 @@ const io::Results& alternating() {
 
 /// The name by which an address knows an entry: its own, or its parts' joined.
 std::string name_of(const Json& entry) {
-  if (entry.contains("name")) return entry["name"].get<std::string>();
+  for (const char* key : {"name", "side"}) {
+    if (entry.contains(key)) return entry[key].get<std::string>();
+  }
   std::string joined;
   for (const char* key : {"parts", "bars", "between"}) {
     if (!entry.contains(key)) continue;
@@ -92,7 +94,8 @@ const Json* named(const Json& list, const std::string& name) {
   return nullptr;
 }
 
-/// The figure at an address: list/name/key, list/name/pieces/piece/key, or key alone.
+/// The figure at an address: list/name/key, list/name/pieces/piece/key, the same of faces, or key
+/// alone.
 Json at_address(const Json& json, const std::string& address) {
   std::vector<std::string> steps;
   std::istringstream text(address);

@@ -170,11 +170,11 @@ TEST_CASE("B at a point of field.vtu is what a probe there reports", "[vtk]") {
   }
   REQUIRE(probes.size() > 50);
   REQUIRE(on_outlines > 5);
-  const solver::StressBands bands(*results.problem, bodies(results.problem->outline));
+  const solver::ForceGeometry geometry(*results.problem);
   const solver::Figures figures = figures_of(
-      *results.problem, bands.bodies(),
-      readings_of(solver::PartIntegrals(*results.solution), *results.field, bands, probes), probes,
-      {});
+      *results.problem, geometry,
+      readings_of(solver::PartIntegrals(*results.solution), *results.field, geometry, probes),
+      probes, {});
   double largest = 0.0;
   for (const Point b : in_file) largest = std::max(largest, norm(b));
   for (std::size_t k = 0; k < probes.size(); ++k) {

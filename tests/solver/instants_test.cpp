@@ -52,12 +52,13 @@ Cycle cycle_of(const std::shared_ptr<solver::Problem>& problem,
   Cycle cycle;
   cycle.instants = solver::solve_instants(*problem, solver::half_cycle_of(problem->excitation));
   auto fundamental = std::make_shared<solver::Solution>(fundamental_of(problem, cycle.instants));
-  const solver::StressBands bands(*problem, mesh::bodies(problem->outline));
+  const solver::ForceGeometry geometry(*problem);
   solver::CycleRecovery recovery(static_cast<int>(cycle.instants.size()));
   std::vector<solver::Readings> readings;
   for (const auto& solution : cycle.instants.solution) {
     const solver::RecoveredField field(*solution);
-    readings.push_back(readings_at_instant(solver::PartIntegrals(*solution), field, bands, probes));
+    readings.push_back(
+        readings_at_instant(solver::PartIntegrals(*solution), field, geometry, probes));
     recovery.add(field);
   }
   cycle.field = std::make_shared<solver::RecoveredField>(recovery.over_cycle(*fundamental));
@@ -108,7 +109,7 @@ TEST_CASE("With a straight line for a curve the cycle is that of a constant perm
   const std::vector<solver::Probe> probes{{"inside", {{20 * mm, 30 * mm}}, false, {}, {}},
                                           {"outside", {{0.0, 0.3}}, false, {}, {}}};
   const support::Solved plain = support::solved(problem);
-  const auto expected = readings_of(*plain.integrals, *plain.field, *plain.bands, probes);
+  const auto expected = readings_of(*plain.integrals, *plain.field, *plain.geometry, probes);
   auto curved_problem = three_phases(1000.0);
   curved_problem->loops = problem->loops;
   const auto found =
@@ -141,7 +142,7 @@ TEST_CASE("A peak between instants in saturated steel is what a solve at its own
   const auto problem = support::with_curve(three_phases(30000.0), support::test_steel());
   const Cycle cycle = cycle_of(problem);
   CHECK(cycle.readings.levels[3].saturated_share > 0.1);
-  const solver::StressBands bands(*problem, mesh::bodies(problem->outline));
+  const solver::ForceGeometry geometry(*problem);
   for (std::size_t bar = 0; bar < 3; ++bar) {
     const solver::Peak peak = peak_of(*cycle.readings.forces.part[bar]);
     auto steady = std::make_shared<solver::Problem>(*problem);
@@ -150,7 +151,8 @@ TEST_CASE("A peak between instants in saturated steel is what a solve at its own
       steady->excitation.current.emplace_back(current);
     }
     const solver::Solution solution = solver::solve(std::shared_ptr<const solver::Problem>(steady));
-    const auto force = forces_of(solver::PartIntegrals(solution), bands).part[bar]->at(0.0);
+    const auto force =
+        forces_of(solver::PartIntegrals(solution), geometry, nullptr).part[bar]->at(0.0);
     CHECK(distance(force, peak.value) < 1e-3 * peak.magnitude);
     // No instant is at it, and none beyond it.
     for (std::size_t k = 0; k < cycle.instants.size(); ++k) {

@@ -185,10 +185,10 @@ TEST_CASE("In saturated steel a force is the change of coenergy with the body's 
                           (2.0 * step);
   const double force = lorentz_force(*run.integrals, 0).x.mean;
   CHECK(force == Approx(quotient).epsilon(5e-3));
-  const double stress = run.bands->force(*run.solution, 0, solver::whole_band).x.mean;
+  const double stress = run.geometry->bands.force(*run.solution, 0, solver::whole_band).x.mean;
   CHECK(stress == Approx(force).epsilon(5e-3));
-  const double inner = run.bands->force(*run.solution, 0, solver::inner_band).x.mean;
-  const double outer = run.bands->force(*run.solution, 0, solver::outer_band).x.mean;
+  const double inner = run.geometry->bands.force(*run.solution, 0, solver::inner_band).x.mean;
+  const double outer = run.geometry->bands.force(*run.solution, 0, solver::outer_band).x.mean;
   CHECK(inner == Approx(outer).epsilon(5e-3));
 }
 

@@ -59,11 +59,11 @@ struct Faces {
   double sum_less_body(const Solved& run, int part) const {
     Point sum;
     for (const auto& f : force) sum += Point{f.x.mean, f.y.mean};
-    const auto& bodies = run.bands->bodies();
+    const auto& bodies = run.geometry->bands.bodies();
     const auto body = std::find(bodies.begin(), bodies.end(), std::vector<int>{part});
     REQUIRE(body != bodies.end());
-    const auto whole = run.bands->force(*run.solution, static_cast<int>(body - bodies.begin()),
-                                        solver::whole_band);
+    const auto whole = run.geometry->bands.force(
+        *run.solution, static_cast<int>(body - bodies.begin()), solver::whole_band);
     return norm(sum - Point{whole.x.mean, whole.y.mean}) / largest_push();
   }
 };
@@ -294,11 +294,11 @@ TEST_CASE("Surface cut away or in contact with another wall is no part of a face
   // Plate and rib together are one body.
   Point sum;
   for (const auto& f : faces.force) sum += Point{f.x.mean, f.y.mean};
-  const auto& bodies = run.bands->bodies();
+  const auto& bodies = run.geometry->bands.bodies();
   const auto body = std::find(bodies.begin(), bodies.end(), std::vector<int>{1, 2});
   REQUIRE(body != bodies.end());
-  const auto whole =
-      run.bands->force(*run.solution, static_cast<int>(body - bodies.begin()), solver::whole_band);
+  const auto whole = run.geometry->bands.force(
+      *run.solution, static_cast<int>(body - bodies.begin()), solver::whole_band);
   CHECK(norm(sum - Point{whole.x.mean, whole.y.mean}) < 5e-3 * faces.largest_push());
 }
 

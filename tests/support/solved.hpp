@@ -13,13 +13,13 @@ struct Solved {
   std::shared_ptr<const solver::Solution> solution;
   std::shared_ptr<const solver::RecoveredField> field;
   std::shared_ptr<const solver::PartIntegrals> integrals;
-  std::shared_ptr<const solver::StressBands> bands;
+  std::shared_ptr<const solver::ForceGeometry> geometry;
 
   mesh::Point b(mesh::Point at, int pattern = 0) const {
     return field->flux_density(locate(*problem->grid, problem->section, at), at, pattern);
   }
   solver::Figures figures(const std::vector<solver::Probe>& probes = {}) const {
-    return figures_of(*problem, bands->bodies(), readings_of(*integrals, *field, *bands, probes),
+    return figures_of(*problem, *geometry, readings_of(*integrals, *field, *geometry, probes),
                       probes, {});
   }
   /// The value at an address; NaN when there is none.
@@ -37,7 +37,7 @@ inline Solved solved(std::shared_ptr<solver::Problem> problem) {
   auto solution = std::make_shared<solver::Solution>(solve(problem));
   result.field = std::make_shared<solver::RecoveredField>(*solution);
   result.integrals = std::make_shared<solver::PartIntegrals>(*solution);
-  result.bands = std::make_shared<solver::StressBands>(*problem, bodies(problem->outline));
+  result.geometry = std::make_shared<solver::ForceGeometry>(*problem);
   result.solution = std::move(solution);
   return result;
 }

@@ -34,9 +34,8 @@ std::shared_ptr<solver::Problem> three_rounds() {
 
 solver::FaultFigures fault_of(const solver::Problem& problem, const solver::FaultCurrent& fault,
                               const std::optional<solver::Supports>& supports = {}) {
-  const solver::StressBands bands(problem, bodies(problem.outline));
-  return fault_figures(fault, problem, bands.bodies(), solve_fault(problem, fault, bands),
-                       supports);
+  const solver::ForceGeometry geometry(problem);
+  return fault_figures(fault, problem, geometry, solve_fault(problem, fault, geometry), supports);
 }
 
 double value(const solver::Entry& entry, const std::string& key) {
@@ -119,9 +118,9 @@ TEST_CASE("Steel of constant permeability that a fault drives too high raises a 
                           {{1000.0, 0.0}, {-500.0, -866.0}, {-500.0, 866.0}, 0.0}, {2}, 50.0);
   CHECK(saturation_notices(*problem, field_levels(solve(problem)), "under load").empty());
   const solver::FaultCurrent fault{{0, 1, 2}, solver::AlternatingFault{50.0, 20e3, 0.1, {}}};
-  const solver::StressBands bands(*problem, bodies(problem->outline));
-  const auto notices =
-      saturation_notices(*problem, solve_fault(*problem, fault, bands).levels, "in the fault");
+  const auto notices = saturation_notices(
+      *problem, solve_fault(*problem, fault, solver::ForceGeometry(*problem)).levels,
+      "in the fault");
   REQUIRE(notices.size() == 1);
   CHECK(notices[0].indicative);
   CHECK(notices[0].detail.find("trunking") != std::string::npos);
