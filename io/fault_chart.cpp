@@ -8,6 +8,7 @@
 
 #include "io/quantity_text.hpp"
 #include "io/scales.hpp"
+#include "io/tidy_figures.hpp"
 
 namespace barwall::io {
 namespace {
@@ -57,8 +58,7 @@ std::vector<std::string> bar_names(const Results& results) {
 }
 
 /// The force on every bar, or on the body that it is in, the body of several bars once.
-LinePanel force_panel(const Results& results) {
-  const solver::FaultSeries& series = results.fault->series;
+LinePanel force_panel(const Results& results, const solver::FaultSeries& series) {
   const std::vector<std::string> names = bar_names(results);
   const std::vector<solver::Entry>& bodies = results.figures.fault->bodies;
   LinePanel panel{"Force", "N/m", series.seconds, {}};
@@ -80,8 +80,7 @@ LinePanel force_panel(const Results& results) {
   return panel;
 }
 
-LinePanel current_panel(const Results& results) {
-  const solver::FaultSeries& series = results.fault->series;
+LinePanel current_panel(const Results& results, const solver::FaultSeries& series) {
   const std::vector<std::string> names = bar_names(results);
   LinePanel panel{"Current", "A", series.seconds, {}};
   for (std::size_t b = 0; b < names.size(); ++b) {
@@ -94,16 +93,17 @@ LinePanel current_panel(const Results& results) {
 
 FaultChart fault_chart(const Results& results) {
   const solver::FaultCurrent& fault = results.input.fault->current;
+  const solver::FaultSeries series = tidy(results.fault->series);
   FaultChart chart;
-  chart.forces = force_panel(results);
-  chart.currents = current_panel(results);
+  chart.forces = force_panel(results, series);
+  chart.currents = current_panel(results, series);
   chart.fault = fmt::format("Short circuit between {}: force per metre of run",
                             fmt::join(bar_names(results), ", "));
   chart.note =
       "Forces are magnitudes and static, without a dynamic factor; positive currents "
       "flow out of the page.";
   if (const auto* alternating = std::get_if<solver::AlternatingFault>(&fault.course)) {
-    const double degrees = *results.fault->series.closing * 180.0 / std::numbers::pi;
+    const double degrees = *series.closing * 180.0 / std::numbers::pi;
     chart.closing = fmt::format("{} symmetrical, R/X {:.3g}; {} {}\u00b0 of {}'s driving voltage",
                                 quantity_text(alternating->symmetrical, "A"), alternating->r_over_x,
                                 alternating->closing ? "closing at" : "worst closing:",

@@ -7,6 +7,7 @@
 #include <fstream>
 #include <future>
 #include <numbers>
+#include <optional>
 
 #include "io/fault_picture.hpp"
 #include "io/field_raster.hpp"

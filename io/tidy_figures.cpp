@@ -102,7 +102,9 @@ void each_force(solver::PartForces<std::vector<mesh::Point>>& forces, const Func
   for (auto& pieces : forces.piece) {
     for (auto& force : pieces) function(force);
   }
-  for (auto& force : forces.body) function(force);
+  for (auto* list : {&forces.body, &forces.push}) {
+    for (auto& force : *list) function(force);
+  }
 }
 
 }  // namespace

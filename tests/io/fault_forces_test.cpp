@@ -144,6 +144,7 @@ TEST_CASE("A fault's course is written to ten digits, and 0 where only rounding 
   series.force.part = {{{{1e3 / 3.0, 1e-9}, {0.0, 2.0}}}, std::nullopt};
   series.force.piece = {{{{-1e-9, 1.0}, {1e-7, 0.0}}}, {}};
   series.force.body = {{{1e-9, 0.0}, {7.0 / 3.0, 0.0}}};
+  series.force.push = {{{200.0 / 3.0, 0.0}, {1e-9, 0.0}}};
   const solver::FaultSeries tidied = io::tidy(series);
   CHECK(tidied.seconds[1] == 0.3333333333);
   CHECK(tidied.current[0][1] == 6666.666667);
@@ -155,6 +156,8 @@ TEST_CASE("A fault's course is written to ten digits, and 0 where only rounding 
   CHECK(tidied.force.piece[0][0][1].x == 1e-7);
   CHECK(tidied.force.body[0][0].x == 0.0);
   CHECK(tidied.force.body[0][1].x == 2.333333333);
+  CHECK(tidied.force.push[0][0].x == 66.66666667);
+  CHECK(tidied.force.push[0][1].x == 0.0);
 }
 
 TEST_CASE("The files of a fault over time are written with it and go with it") {
