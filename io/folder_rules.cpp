@@ -83,12 +83,14 @@ fs::path without_last_slash(const fs::path& path) {
 const std::vector<std::string>& file_names(Contents contents) {
   static const std::vector<std::string> results = [] {
     std::vector<std::string> names = {
-        "figures.json",  "figures.csv",  "run.json",       "probes.csv", "field.vtu",
-        "field_far.vtu", "outlines.vtp", "flux_lines.vtp", "forces.vtp", "probes.vtp",
-        "report.html",   "picture.png",  "picture.svg",    "picture.pdf"};
+        "figures.json",  "figures.csv",     "run.json",       "probes.csv",  "field.vtu",
+        "field_far.vtu", "outlines.vtp",    "flux_lines.vtp", "forces.vtp",  "probes.vtp",
+        "report.html",   "picture.png",     "picture.svg",    "picture.pdf", "fault.png",
+        "fault.svg",     "fault_forces.csv"};
     for (const std::string series : {"cycle", "fault"}) {
       names.push_back(series + ".pvd");
-      for (std::size_t k = 0; k <= static_cast<std::size_t>(solver::most_instants); ++k) names.push_back(instant_file(series, k));
+      for (std::size_t k = 0; k <= static_cast<std::size_t>(solver::most_instants); ++k)
+        names.push_back(instant_file(series, k));
     }
     return names;
   }();

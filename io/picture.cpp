@@ -7,7 +7,9 @@
 #include <fstream>
 #include <future>
 #include <numbers>
+#include <optional>
 
+#include "io/fault_picture.hpp"
 #include "io/field_raster.hpp"
 #include "io/flux_lines.hpp"
 #include "io/force_arrows.hpp"
@@ -16,6 +18,7 @@
 #include "io/page_text.hpp"
 #include "io/picture_key.hpp"
 #include "io/results_folder.hpp"
+#include "io/results_heading.hpp"
 #include "io/section_drawing.hpp"
 
 namespace barwall::io {
@@ -35,6 +38,7 @@ struct Scene {
   double instant = 0.0;  ///< wt of the flux lines and of the currents' signs [rad]
   std::vector<ForceArrow> arrows;
   ArrowScale arrow_scale;
+  std::optional<FaultChart> fault;  ///< below the section
 };
 
 Scene scene_of(const Results& results) {
@@ -47,6 +51,7 @@ Scene scene_of(const Results& results) {
   scene.instant = flux_line_instant(results);
   scene.arrows = force_arrows(results);
   scene.arrow_scale = arrow_scale(scene.arrows, scene.frame.scale());
+  if (results.fault_over_time()) scene.fault = fault_chart(results);
   return scene;
 }
 
@@ -145,17 +150,9 @@ std::string flux_line_note(const Scene& scene, bool alternating) {
     note += fmt::format(
         "; they and the currents' signs at \u03c9t = {:.1f}\u00b0, when the "
         "field's energy is largest",
-        scene.instant * 180.0 / std::numbers::pi);
+        std::round(1800.0 * scene.instant / std::numbers::pi) / 10.0 + 0.0);
   }
   return note + ".";
-}
-
-std::string state_line(const Results& results) {
-  const std::string verdict = results.verdict();
-  std::string line = fmt::format("{}:  verdict {},  validity {},  limits {}", results.input.name,
-                                 verdict, results.validity(), results.limits());
-  if (verdict != "sound") line += "  \u2013  a check failed: do not use the numbers";
-  return line;
 }
 
 std::string drawn(Canvas::Kind kind, const Results& results, const Scene& scene,
@@ -163,10 +160,10 @@ std::string drawn(Canvas::Kind kind, const Results& results, const Scene& scene,
   const bool alternating = results.alternating();
   const Frame& frame = scene.frame;
   const double bottom = frame.box.high.y;
-  Canvas canvas(kind, page_width, static_cast<int>(bottom) + 256);
-  const bool sound = results.verdict() == "sound";
-  draw_heading(canvas, results.input.title, state_line(results),
-               sound ? pale_ink : colour_of(0xb03a00), left_margin, frame_width);
+  const double field_bottom = bottom + 256.0;
+  Canvas canvas(kind, page_width,
+                static_cast<int>(field_bottom + (scene.fault ? fault_forces_height : 0.0)));
+  draw_heading_of(canvas, results);
 
   canvas.image(bitmap, frame.box.low);
   draw_flux_lines(canvas, scene);
@@ -198,6 +195,7 @@ std::string drawn(Canvas::Kind kind, const Results& results, const Scene& scene,
     canvas.text({left_margin, y}, line, small);
     y += 26.0;
   }
+  if (scene.fault) draw_fault_forces(canvas, *scene.fault, field_bottom);
   return canvas.bytes();
 }
 

@@ -18,7 +18,8 @@ struct Pictures {
 Frame picture_frame(const mesh::Section& section);
 
 /// The section with |B| (with a frequency its r.m.s.) in colours on a logarithmic scale, flux
-/// lines, outlines, names, the currents' signs, forces and axes in millimetres.
+/// lines, outlines, names, the currents' signs, forces and axes in millimetres; below it the forces
+/// of a fault over time.
 /// \throws std::runtime_error when drawing fails
 Pictures draw_pictures(const Results& results);
 

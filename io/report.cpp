@@ -7,6 +7,7 @@
 #include <fstream>
 #include <sstream>
 
+#include "io/fault_picture.hpp"
 #include "io/picture.hpp"
 #include "io/printable_text.hpp"
 #include "io/quantity_text.hpp"
@@ -99,6 +100,22 @@ constexpr const char* explanations_of_forces =
     "given, such as that on a single part in contact with another, whose body is listed "
     "instead.</p>\n";
 
+/// A picture within the page itself. \param alt says what it shows, escaped
+std::string figure(const std::string& alt, const std::string& png) {
+  return fmt::format("<figure>\n<img alt=\"{}\" src=\"data:image/png;base64,{}\"/>\n</figure>\n",
+                     alt, base64(png));
+}
+
+std::string fault_section(const Results& results, const std::string& fault_png) {
+  std::string content = fault_tables(results);
+  if (results.fault_over_time()) {
+    content += figure(
+        "Forces on the bars of the short circuit, and their currents, over the time since closing",
+        fault_png);
+  }
+  return content;
+}
+
 std::string model(const Results& results) {
   std::string text =
       "<p>The numbers describe a straight, endless run: a two-dimensional magnetostatic field of "
@@ -138,7 +155,8 @@ std::string shown(const solver::Figure& figure) {
   return quantity_text(figure);
 }
 
-std::string report_html(const Results& results, const std::string& picture_png) {
+std::string report_html(const Results& results, const std::string& picture_png,
+                        const std::string& fault_png) {
   const std::string title = escaped(results.input.title);
   std::string page = fmt::format(
       "<!DOCTYPE html>\n<html lang=\"en\">\n<head>\n<meta charset=\"utf-8\"/>\n"
@@ -149,13 +167,13 @@ std::string report_html(const Results& results, const std::string& picture_png) 
       "<p class=\"of\">Case {}, solved by barwall {}</p>\n</header>\n<main>\n",
       title, style, title, escaped(results.input.name), escaped(version()));
   page += state_boxes(results);
-  page += fmt::format(
-      "<figure>\n<img alt=\"Section of {} with its magnetic flux density in colours, flux lines, "
-      "forces and names\" src=\"data:image/png;base64,{}\"/>\n</figure>\n",
-      title, base64(picture_png));
+  page += figure(fmt::format("Section of {} with its magnetic flux density in colours, flux lines, "
+                             "forces and names",
+                             title),
+                 picture_png);
   const std::string forces = force_tables(results);
   page += section("Forces", forces.empty() ? "" : explanations_of_forces + forces);
-  page += section("Short circuit", fault_tables(results));
+  page += section("Short circuit", fault_section(results, fault_png));
   page += section("Hand values", hand_table(results));
   page += section("Field and limits", probe_tables(results));
   page += section("Inductance, reactance and energy", circuit_tables(results));
@@ -170,10 +188,14 @@ std::string report_html(const Results& results, const std::string& picture_png) 
 }
 
 void write_report(const Results& results, const std::filesystem::path& folder) {
-  const std::filesystem::path picture = folder / "picture.png";
-  const bool drawn = std::filesystem::is_regular_file(picture);
-  const std::string png = drawn ? file_bytes(picture) : draw_pictures(results).png;
-  write_text(folder / "report.html", report_html(results, png));
+  const auto drawn = [&](const char* name, Pictures (*draw)(const Results&)) {
+    const std::filesystem::path file = folder / name;
+    return std::filesystem::is_regular_file(file) ? file_bytes(file) : draw(results).png;
+  };
+  const std::string fault =
+      results.fault_over_time() ? drawn("fault.png", draw_fault_pictures) : std::string();
+  write_text(folder / "report.html",
+             report_html(results, drawn("picture.png", draw_pictures), fault));
 }
 
 }  // namespace barwall::io

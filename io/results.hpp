@@ -33,6 +33,8 @@ struct Results {
   StageTimes stages;
 
   bool alternating() const { return problem->excitation.alternating(); }
+  /// True with a fault whose course over time is known.
+  bool fault_over_time() const { return fault && !fault->series.seconds.empty(); }
   /// "sound" or "unsound", from the checks alone.
   std::string verdict() const;
   /// "full" or "indicative", from the notices.

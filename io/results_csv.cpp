@@ -42,6 +42,39 @@ std::unordered_map<std::string, Limit> limits_by_address(const solver::Figures& 
   return limits;
 }
 
+/// Columns of a table of numbers, each as long as the first.
+struct Columns {
+  std::string head;
+  std::vector<std::vector<double>> values;
+
+  void add(const std::string& name, const std::vector<double>& column) {
+    if (!head.empty()) head += ',';
+    head += csv_field(name);
+    values.push_back(column);
+  }
+  void add_force(const std::string& address, const std::vector<mesh::Point>& force) {
+    std::vector<double> x;
+    std::vector<double> y;
+    for (const mesh::Point value : force) {
+      x.push_back(value.x);
+      y.push_back(value.y);
+    }
+    add(address + "/force_x_n_per_m", x);
+    add(address + "/force_y_n_per_m", y);
+  }
+  std::string text() const {
+    std::string text = head + "\n";
+    for (std::size_t k = 0; k < values.front().size(); ++k) {
+      for (const auto& column : values) {
+        if (&column != &values.front()) text += ',';
+        text += number_text(column[k]);
+      }
+      text += '\n';
+    }
+    return text;
+  }
+};
+
 }  // namespace
 
 std::string csv_field(const std::string& text) {
@@ -87,6 +120,35 @@ std::string probes_csv(const Results& results) {
     }
   }
   return text;
+}
+
+std::string fault_forces_csv(const Results& results) {
+  const solver::FaultSeries series = tidy(results.fault->series);
+  const std::vector<mesh::Part>& parts = results.problem->section.parts;
+  const std::vector<int>& bars = results.input.fault->current.bars;
+  Columns columns;
+  columns.add("time_s", series.seconds);
+  for (std::size_t b = 0; b < bars.size(); ++b) {
+    columns.add("bars/" + parts[static_cast<std::size_t>(bars[b])].name + "/current_a",
+                series.current[b]);
+  }
+  for (const auto kind : {mesh::Part::Kind::bar, mesh::Part::Kind::wall}) {
+    for (std::size_t k = 0; k < parts.size(); ++k) {
+      if (parts[k].kind != kind) continue;
+      const std::string& name = parts[k].name;
+      const std::string address =
+          fmt::format("{}/{}", kind == mesh::Part::Kind::bar ? "bars" : "walls", name);
+      if (series.force.part[k]) columns.add_force(address, *series.force.part[k]);
+      for (std::size_t p = 0; p < series.force.piece[k].size(); ++p) {
+        columns.add_force(fmt::format("{}/pieces/{}.{}", address, name, p + 1),
+                          series.force.piece[k][p]);
+      }
+    }
+  }
+  for (std::size_t b = 0; b < series.force.body.size(); ++b) {
+    columns.add_force("bodies/" + results.figures.fault->bodies[b].name, series.force.body[b]);
+  }
+  return columns.text();
 }
 
 }  // namespace barwall::io

@@ -3,6 +3,7 @@
 #include <chrono>
 #include <fstream>
 
+#include "io/fault_picture.hpp"
 #include "io/memory.hpp"
 #include "io/picture.hpp"
 #include "io/report.hpp"
@@ -34,8 +35,11 @@ void write_results(Results& results, const fs::path& folder, bool replace) {
     write_text(to / "figures.json", figures_json(results));
     write_text(to / "figures.csv", figures_csv(results));
     write_text(to / "probes.csv", probes_csv(results));
+    if (results.fault_over_time()) {
+      write_text(to / "fault_forces.csv", fault_forces_csv(results));
+    }
   });
-  for (const auto write : {write_vtk, write_pictures, write_report}) {
+  for (const auto write : {write_vtk, write_pictures, write_fault_pictures, write_report}) {
     writers.emplace_back([&results, write](const fs::path& to) {
       require_room_to_write(*results.problem->grid);
       write(results, to);

@@ -141,7 +141,9 @@ public:
                results_.input.section.parts[static_cast<std::size_t>(bar)].name;
     }
     const auto given = [&](const char* key) { return value_of(fault.circuit, key); };
-    std::string text = "\nFault between " + names + ", largest forces per metre of run\n";
+    std::string text = "\n";
+    text +=
+        wrapped("Fault between " + names + ", largest forces per metre of run", 0, summary_width);
     if (std::isfinite(given("r_over_x"))) {
       text += wrapped(
           fmt::format("{} symmetrical, R/X {:.3g}, power factor {:.3g}, kappa {:.4g}, peak over "
@@ -181,6 +183,7 @@ public:
     if (results_.input.supports) {
       text += wrapped("a support: force times span, static, no dynamic factor", 2, summary_width);
     }
+    if (results_.fault_over_time()) text += "  over time: fault_forces.csv, fault.png\n";
     return text;
   }
 

@@ -93,6 +93,20 @@ void tidy_fault(solver::FaultFigures& fault) {
   round_all(fault.circuit);
 }
 
+/// Tells a function of every course of a force.
+template <class Function>
+void each_force(solver::PartForces<std::vector<mesh::Point>>& forces, const Function& function) {
+  for (auto& force : forces.part) {
+    if (force) function(*force);
+  }
+  for (auto& pieces : forces.piece) {
+    for (auto& force : pieces) function(force);
+  }
+  for (auto* list : {&forces.body, &forces.push}) {
+    for (auto& force : *list) function(force);
+  }
+}
+
 }  // namespace
 
 double to_digits(double value, int digits) {
@@ -139,6 +153,31 @@ std::vector<verify::Check> tidy(std::vector<verify::Check> checks) {
     check.measured = check.measured < 1e-6 * check.limit ? 0.0 : to_digits(check.measured, 4);
   }
   return checks;
+}
+
+solver::FaultSeries tidy(solver::FaultSeries series) {
+  const auto tidied = [](double value, double floor) {
+    return std::abs(value) < floor ? 0.0 : to_ten_digits(value);
+  };
+  for (double& seconds : series.seconds) seconds = to_ten_digits(seconds);
+  double current = 0.0;
+  for (const auto& course : series.current) {
+    for (double value : course) current = std::max(current, std::abs(value));
+  }
+  for (auto& course : series.current) {
+    for (double& value : course) value = tidied(value, smallest_share * current);
+  }
+  double force = 0.0;
+  each_force(series.force, [&](const std::vector<mesh::Point>& course) {
+    for (mesh::Point value : course)
+      force = std::max({force, std::abs(value.x), std::abs(value.y)});
+  });
+  each_force(series.force, [&](std::vector<mesh::Point>& course) {
+    for (mesh::Point& value : course) {
+      value = {tidied(value.x, smallest_share * force), tidied(value.y, smallest_share * force)};
+    }
+  });
+  return series;
 }
 
 }  // namespace barwall::io

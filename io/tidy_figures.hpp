@@ -3,6 +3,7 @@
 #include <string>
 #include <vector>
 
+#include "solver/fault_series.hpp"
 #include "solver/figures.hpp"
 #include "verify/check.hpp"
 
@@ -27,5 +28,9 @@ solver::Figures tidy(solver::Figures figures);
 /// The checks as they are written: the measured error to 4 significant digits, and 0 where it is
 /// less than a millionth of its limit, which is the rounding error of an identity.
 std::vector<verify::Check> tidy(std::vector<verify::Check> checks);
+
+/// The course of a fault as it is written: to 10 significant digits, and 0 where a current or a
+/// force is less than 1e-11 of the largest of its kind.
+solver::FaultSeries tidy(solver::FaultSeries series);
 
 }  // namespace barwall::io

@@ -23,6 +23,19 @@ FaultSeries times_of(const FaultCurrent& fault, double closing, double end, int 
   return series;
 }
 
+using Spline = boost::math::interpolators::cardinal_cubic_b_spline<double>;
+
+/// A smooth curve through evenly spaced values from t = 0 on, level there.
+Spline curve_through(const std::vector<double>& values, double step) {
+  // The slope at the end by the backward difference of fourth order: the library would take that
+  // of the fifth value from the end.
+  const double* end = &values.back();
+  const double slope =
+      (25.0 * end[0] - 48.0 * end[-1] + 36.0 * end[-2] - 16.0 * end[-3] + 3.0 * end[-4]) /
+      (12.0 * step);
+  return {values.begin(), values.end(), 0.0, step, 0.0, slope};
+}
+
 }  // namespace
 
 FaultSeries fault_series(const FaultCurrent& fault, double closing,
@@ -86,9 +99,8 @@ FaultSeries fault_series(const FaultCurrent& fault, double closing,
       y.push_back(value.y.mean);
     }
     // At closing nothing flows, and the force, as the square of the currents, does not rise yet.
-    using Spline = boost::math::interpolators::cardinal_cubic_b_spline<double>;
-    const Spline along_x(x.begin(), x.end(), 0.0, step, 0.0);
-    const Spline along_y(y.begin(), y.end(), 0.0, step, 0.0);
+    const Spline along_x = curve_through(x, step);
+    const Spline along_y = curve_through(y, step);
     std::vector<mesh::Point> values;
     for (const double t : series.seconds) values.push_back({along_x(t), along_y(t)});
     return values;

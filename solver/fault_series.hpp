@@ -33,7 +33,8 @@ Course fault_course(const FaultCurrent& fault, double closing, std::size_t parts
 double seconds_per_unit(const FaultCurrent& fault);
 
 /// The series along that course: a smooth curve through the instants that were solved.
-/// \param instants forces of steady currents at evenly spaced instants, both ends among them
+/// \param instants forces of steady currents at five or more evenly spaced instants, both ends
+/// among them
 FaultSeries fault_series(const FaultCurrent& fault, double closing,
                          std::span<const PartForces<PulsatingVector>> instants);
 

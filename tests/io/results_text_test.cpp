@@ -9,6 +9,7 @@
 #include "io/tidy_figures.hpp"
 #include "io/version.hpp"
 #include "tests/io/case_support.hpp"
+#include "tests/io/csv_support.hpp"
 #include "tests/io/program_support.hpp"
 
 using namespace barwall;
@@ -106,28 +107,6 @@ Json at_address(const Json& json, const std::string& address) {
     if (here == nullptr) return nullptr;
   }
   return here->contains(steps.back()) ? (*here)[steps.back()] : Json(nullptr);
-}
-
-/// Rows and fields of a CSV text.
-std::vector<std::vector<std::string>> csv_rows(const std::string& text) {
-  std::vector<std::vector<std::string>> rows(1, {""});
-  bool quoted = false;
-  for (std::size_t k = 0; k < text.size(); ++k) {
-    const char c = text[k];
-    if (quoted && c == '"' && k + 1 < text.size() && text[k + 1] == '"') {
-      rows.back().back() += text[++k];
-    } else if (c == '"') {
-      quoted = !quoted;
-    } else if (!quoted && c == ',') {
-      rows.back().emplace_back();
-    } else if (!quoted && c == '\n') {
-      rows.push_back({""});
-    } else {
-      rows.back().back() += c;
-    }
-  }
-  rows.pop_back();
-  return rows;
 }
 
 /// Every figure object anywhere has exactly a value, a unit and an uncertainty.
@@ -231,7 +210,7 @@ TEST_CASE("The same case gives the same bytes") {
 TEST_CASE("figures.csv holds the values of figures.json, address by address") {
   for (const io::Results* results : {&steady(), &alternating()}) {
     const Json json = Json::parse(io::figures_json(*results));
-    const auto rows = csv_rows(io::figures_csv(*results));
+    const auto rows = test::csv_rows(io::figures_csv(*results));
     REQUIRE(rows.front() == std::vector<std::string>{"address", "value", "unit", "plus_minus",
                                                      "hand", "ratio", "limit", "of_limit"});
     CHECK(rows.size() == 1 + addresses(results->figures).size() + 2 * results->checks.size());
@@ -251,7 +230,7 @@ TEST_CASE("figures.csv holds the values of figures.json, address by address") {
 }
 
 TEST_CASE("figures.csv sets a probe's limit beside its field") {
-  const auto rows = csv_rows(io::figures_csv(alternating()));
+  const auto rows = test::csv_rows(io::figures_csv(alternating()));
   int seen = 0;
   for (const auto& row : rows) {
     if (row[0] != "probes/sensor/b_rms" && row[0] != "probes/line/b_rms_max") continue;
@@ -262,7 +241,7 @@ TEST_CASE("figures.csv sets a probe's limit beside its field") {
 }
 
 TEST_CASE("probes.csv has a line for every point of every probe") {
-  const auto direct = csv_rows(io::probes_csv(steady()));
+  const auto direct = test::csv_rows(io::probes_csv(steady()));
   REQUIRE(direct.size() == 7);
   CHECK(direct[0] == std::vector<std::string>{"probe", "x_mm", "y_mm", "b_x_t", "b_y_t", "b_t"});
   CHECK(direct[1][0] == "sensor");
@@ -271,7 +250,7 @@ TEST_CASE("probes.csv has a line for every point of every probe") {
     CHECK(std::hypot(std::stod(direct[k][3]), std::stod(direct[k][4])) ==
           Approx(std::stod(direct[k][5])).epsilon(1e-9));
   }
-  const auto cycle = csv_rows(io::probes_csv(alternating()));
+  const auto cycle = test::csv_rows(io::probes_csv(alternating()));
   CHECK(cycle[0] == std::vector<std::string>{"probe", "x_mm", "y_mm", "b_rms_t", "b_peak_t"});
   CHECK(
       std::stod(cycle[1][3]) ==

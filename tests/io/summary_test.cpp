@@ -5,6 +5,7 @@
 #include "io/quantity_text.hpp"
 #include "io/summary.hpp"
 #include "tests/io/case_support.hpp"
+#include "tests/io/fault_support.hpp"
 #include "tests/io/program_support.hpp"
 
 using namespace barwall;
@@ -61,6 +62,18 @@ TEST_CASE("No line of a summary exceeds its columns or ends in a blank, however 
       }
     }
   }
+}
+
+TEST_CASE("A fault between bars with long names keeps to the summary's columns") {
+  const std::string long_name(60, 'N');
+  const std::string text =
+      test::edited(test::edited(test::two_round_bars("", "direct_ka = 20\ntime_constant_ms = 12\n"),
+                                "\"minus\"]", "\"" + long_name + "\"]"),
+                   "\"minus\"", "\"" + long_name + "\"");
+  const io::Results results = io::run_case(test::read_text(text));
+  const std::string shown = io::summary(results, "results/case", false);
+  CHECK(shown.find("Fault between plus, " + long_name) != std::string::npos);
+  for (const std::string& line : lines_of(shown)) CHECK(io::text_width(line) <= io::summary_width);
 }
 
 TEST_CASE("A summary shows what is exceeded first and says how much is left out") {
