@@ -1,6 +1,7 @@
 #include "verify/notices.hpp"
 
 #include "verify/closed_steel_loop.hpp"
+#include "verify/conducting_shell.hpp"
 #include "verify/end_effect.hpp"
 #include "verify/force_end_effect.hpp"
 #include "verify/net_current.hpp"
@@ -21,6 +22,7 @@ std::vector<solver::Notice> notices_of(const solver::Problem& problem,
   add(net_current(problem.excitation));
   add(closed_steel_loops(problem));
   add(skin_depth_notices(problem));
+  add(conducting_shells(problem));
   if (run_length) {
     add(force_end_effect(problem.section, problem.excitation, *run_length));
     add(end_effect(problem, figures, *run_length));

@@ -15,17 +15,6 @@
 namespace barwall::verify {
 namespace {
 
-/// How thick a conductor is [m]. A polygon's narrowest place may be a mere notch; twice the area
-/// over the perimeter is the thickness of a strip and never more than that of its widest place.
-double thickness_of(const mesh::Shape& shape) {
-  const double narrowest = mesh::thickness(shape);
-  if (!std::holds_alternative<mesh::Polygon>(shape)) return narrowest;
-  double perimeter = 0.0;
-  const auto chains = boundary(shape);
-  for (const mesh::Curve& side : chains.front()) perimeter += length(side);
-  return std::max(narrowest, 2.0 * area(shape) / perimeter);
-}
-
 double largest_permeability(const solver::Material& material) {
   double largest = material.relative_permeability;
   if (!material.saturable()) return largest;
@@ -85,6 +74,17 @@ solver::Notice notice_of(const std::vector<Thick>& parts, double frequency, cons
 
 }  // namespace
 
+double conductor_thickness(const mesh::Shape& shape) {
+  // A polygon's narrowest place may be a mere notch; twice the area over the perimeter is the
+  // thickness of a strip and never more than that of its widest place.
+  const double narrowest = mesh::thickness(shape);
+  if (!std::holds_alternative<mesh::Polygon>(shape)) return narrowest;
+  double perimeter = 0.0;
+  const auto chains = boundary(shape);
+  for (const mesh::Curve& side : chains.front()) perimeter += length(side);
+  return std::max(narrowest, 2.0 * area(shape) / perimeter);
+}
+
 double skin_depth(double resistivity, double relative_permeability, double frequency_hz) {
   const double w = 2.0 * std::numbers::pi * frequency_hz;
   return std::sqrt(2.0 * resistivity / (w * solver::mu_0 * relative_permeability));
@@ -102,7 +102,8 @@ std::vector<solver::Notice> skin_depth_notices(const solver::Problem& problem) {
     if (!resistivity) continue;
     const double depth = skin_depth(*resistivity, largest_permeability(material), frequency);
     double thickest = 0.0;
-    for (const mesh::Shape& piece : part.pieces) thickest = std::max(thickest, thickness_of(piece));
+    for (const mesh::Shape& piece : part.pieces)
+      thickest = std::max(thickest, conductor_thickness(piece));
     if (thickest <= depth) continue;
     const bool bar = part.kind == mesh::Part::Kind::bar;
     kinds[bar                   ? 0
