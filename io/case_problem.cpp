@@ -1,6 +1,7 @@
 #include "io/case_problem.hpp"
 
 #include <fmt/format.h>
+#include <omp.h>
 #include <sys/sysinfo.h>
 
 #include <algorithm>
@@ -8,6 +9,7 @@
 
 #include "io/input_error.hpp"
 #include "mesh/offset_line.hpp"
+#include "solver/instants.hpp"
 
 namespace barwall::io {
 namespace {
@@ -18,13 +20,25 @@ double bytes_needed(double nodes) {
   return nodes * (31.0 * std::log2(nodes) + 700.0);
 }
 
+/// What the instants of a cycle and of a fault in saturable steel take beside: each thread a factor
+/// of its own, each instant its potential, its reluctivity and its field while that is gathered.
+double bytes_of_instants(double nodes) {
+  constexpr double an_instant = 8.0 + 2.0 * 8.0 + 16.0;
+  return nodes * (31.0 * std::log2(nodes) * (omp_get_max_threads() - 1) +
+                  2.0 * solver::most_instants * an_instant);
+}
+
 /// Largest number of nodes that three quarters of the free memory hold.
-double nodes_that_fit() {
+/// \param instants whether the problem is solved instant by instant
+double nodes_that_fit(bool instants) {
   struct sysinfo info {};
   sysinfo(&info);
   const double free = 0.75 * static_cast<double>(info.freeram + info.bufferram) * info.mem_unit;
+  const auto fits = [&](double nodes) {
+    return bytes_needed(nodes) + (instants ? bytes_of_instants(nodes) : 0.0) < free;
+  };
   double nodes = 1e4;
-  while (nodes < 2e8 && bytes_needed(1.1 * nodes) < free) nodes *= 1.1;
+  while (nodes < 2e8 && fits(1.1 * nodes)) nodes *= 1.1;
   return nodes;
 }
 
@@ -80,7 +94,8 @@ void set_grids(solver::Problem& problem, const Case& input,
   options.cells_across = input.grid.cells_across;
   options.reach = input.grid.reach;
   if (has_net_current(input.excitation)) options.wide = net_current_zone;
-  options.max_nodes = nodes_that_fit();
+  options.max_nodes =
+      nodes_that_fit(saturable(problem) && (input.excitation.alternating() || input.fault));
   for (const solver::Probe& probe : probes) {
     for (mesh::Point point : probe.points) options.fine.include(point);
   }

@@ -52,6 +52,15 @@ TEST_CASE("In a steel tube round a centred bar B is that of I / (2 pi r) on the 
                     << worst);
     CHECK(std::sqrt(square) < 4e-3);
     CHECK(worst < 4e-3);
+    // The wall's mean, as the figures give it.
+    double flux = 0.0;
+    constexpr int rings = 1000;
+    for (int k = 0; k < rings; ++k) {
+      const double r = (50.0 + 10.0 * (k + 0.5) / rings) * mm;
+      flux += flux_density_of(*test_steel(), current / (2.0 * std::numbers::pi * r)) * r;
+    }
+    const double mean = flux * 10.0 * mm / rings * 2.0 / ((60.0 * 60.0 - 50.0 * 50.0) * mm * mm);
+    CHECK(field_levels(*run.solution)[1].mean == Approx(mean).epsilon(2e-3));
     const auto& newton = run.solution->newton;
     REQUIRE(newton.size() == 2);
     INFO("iterations " << newton[0].iterations << ", " << newton[1].iterations);
