@@ -1,7 +1,8 @@
 #include "solver/fault_series.hpp"
 
-#include <boost/math/interpolators/cardinal_cubic_b_spline.hpp>
 #include <numbers>
+
+#include "solver/curve_since_closing.hpp"
 
 namespace barwall::solver {
 namespace {
@@ -85,10 +86,8 @@ FaultSeries fault_series(const FaultCurrent& fault, double closing,
       x.push_back(value.x.mean);
       y.push_back(value.y.mean);
     }
-    // At closing nothing flows, and the force, as the square of the currents, does not rise yet.
-    using Spline = boost::math::interpolators::cardinal_cubic_b_spline<double>;
-    const Spline along_x(x.begin(), x.end(), 0.0, step, 0.0);
-    const Spline along_y(y.begin(), y.end(), 0.0, step, 0.0);
+    const CurveSinceClosing along_x = curve_since_closing(x, step);
+    const CurveSinceClosing along_y = curve_since_closing(y, step);
     std::vector<mesh::Point> values;
     for (const double t : series.seconds) values.push_back({along_x(t), along_y(t)});
     return values;
