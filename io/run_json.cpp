@@ -83,8 +83,8 @@ std::string run_json(const Results& results, const std::filesystem::path& folder
       {"residuals", solution.report.residuals}};
   if (!solution.newton.empty()) json["newton"] = newton_json(solution.newton);
   if (results.instants) json["instants"] = instants_json(*results.instants);
-  if (results.fault && results.fault->course) {
-    json["fault"]["course"] = instants_json(*results.fault->course);
+  if (results.fault) {
+    if (results.fault->course) json["fault"]["course"] = instants_json(*results.fault->course);
     for (const auto& reports : results.fault->newton) {
       json["fault"]["newton"].push_back(newton_json(reports));
     }

@@ -1,11 +1,11 @@
 #include "solver/fault_extremes.hpp"
 
 #include <algorithm>
-#include <boost/math/interpolators/cardinal_cubic_b_spline.hpp>
 #include <cassert>
 #include <cmath>
 #include <numbers>
 
+#include "solver/curve_since_closing.hpp"
 #include "solver/largest_value.hpp"
 
 namespace barwall::solver {
@@ -127,17 +127,15 @@ FaultExtremes extremes_over_first_cycle(const AlternatingFault& fault,
     y.push_back(force.y);
     size = std::max(size, norm(force));
   }
-  // Without current there is no force, and none that changes.
-  using Spline = boost::math::interpolators::cardinal_cubic_b_spline<double>;
-  const Spline along_x(x.begin(), x.end(), 0.0, step, 0.0);
-  const Spline along_y(y.begin(), y.end(), 0.0, step, 0.0);
+  const CurveSinceClosing along_x = curve_since_closing(x, step);
+  const CurveSinceClosing along_y = curve_since_closing(y, step);
   const int steps = 8 * intervals;
   const auto seconds = [&](double wt) { return wt / (2.0 * pi * fault.frequency_hz); };
   const bool approached = fault.r_over_x > 0.0;
-  const auto component = [&](const Spline& spline, double sign,
+  const auto component = [&](const CurveSinceClosing& curve, double sign,
                              const Pulsation& later) -> FaultExtreme {
     const LargestValue found =
-        largest_value([&](double wt) { return sign * spline(wt); }, 0.0, 2.0 * pi, steps);
+        largest_value([&](double wt) { return sign * curve(wt); }, 0.0, 2.0 * pi, steps);
     const double approach = later.largest();
     if (approached && approach > found.value + rounding * size) {
       return {sign * approach, {}, fault.closing};

@@ -1,7 +1,8 @@
 #include "solver/fault_series.hpp"
 
-#include <boost/math/interpolators/cardinal_cubic_b_spline.hpp>
 #include <numbers>
+
+#include "solver/curve_since_closing.hpp"
 
 namespace barwall::solver {
 namespace {
@@ -21,19 +22,6 @@ FaultSeries times_of(const FaultCurrent& fault, double closing, double end, int 
     for (std::size_t b = 0; b < now.size(); ++b) series.current[b].push_back(now[b]);
   }
   return series;
-}
-
-using Spline = boost::math::interpolators::cardinal_cubic_b_spline<double>;
-
-/// A smooth curve through evenly spaced values from t = 0 on, level there.
-Spline curve_through(const std::vector<double>& values, double step) {
-  // The slope at the end by the backward difference of fourth order: the library would take that
-  // of the fifth value from the end.
-  const double* end = &values.back();
-  const double slope =
-      (25.0 * end[0] - 48.0 * end[-1] + 36.0 * end[-2] - 16.0 * end[-3] + 3.0 * end[-4]) /
-      (12.0 * step);
-  return {values.begin(), values.end(), 0.0, step, 0.0, slope};
 }
 
 }  // namespace
@@ -98,9 +86,8 @@ FaultSeries fault_series(const FaultCurrent& fault, double closing,
       x.push_back(value.x.mean);
       y.push_back(value.y.mean);
     }
-    // At closing nothing flows, and the force, as the square of the currents, does not rise yet.
-    const Spline along_x = curve_through(x, step);
-    const Spline along_y = curve_through(y, step);
+    const CurveSinceClosing along_x = curve_since_closing(x, step);
+    const CurveSinceClosing along_y = curve_since_closing(y, step);
     std::vector<mesh::Point> values;
     for (const double t : series.seconds) values.push_back({along_x(t), along_y(t)});
     return values;

@@ -1,6 +1,7 @@
 #include "solver/fault_solve.hpp"
 
 #include <algorithm>
+#include <numbers>
 
 namespace barwall::solver {
 namespace {
@@ -54,6 +55,29 @@ std::optional<double> given_closing(const FaultCurrent& fault) {
   return alternating != nullptr ? alternating->closing : std::nullopt;
 }
 
+/// Levels in a fault from the field of its sustained currents.
+std::vector<FieldLevel> levels_of(const FaultCurrent& fault, const Solution& sustained) {
+  if (const auto closing = given_closing(fault)) {
+    // Of every two opposite crests of a place's sustained field the offset raises one, less and
+    // less: the largest comes in the first cycle.
+    constexpr int steps = 120;
+    std::vector<std::complex<double>> factors;
+    for (int k = 0; k <= steps; ++k) {
+      const FaultInstant now = fault_instant(std::get<AlternatingFault>(fault.course),
+                                             2.0 * std::numbers::pi * k / steps, *closing);
+      factors.push_back(std::polar(now.scale, now.angle));
+    }
+    return field_levels(sustained, factors);
+  }
+  std::vector<FieldLevel> levels = field_levels(sustained);
+  const double scale = largest_scale(fault).scale;
+  for (FieldLevel& level : levels) {
+    level.mean *= scale;
+    level.high *= scale;
+  }
+  return levels;
+}
+
 FaultSolution with_constant_permeability(const Problem& problem, const FaultCurrent& fault,
                                          const ForceGeometry& geometry) {
   Problem sustained = problem;
@@ -65,12 +89,7 @@ FaultSolution with_constant_permeability(const Problem& problem, const FaultCurr
   result.extremes = combined(std::span(&forces, 1), [&](const std::vector<PulsatingVector>& force) {
     return extremes_of(fault, force.front());
   });
-  result.levels = field_levels(solution);
-  const double scale = largest_scale(fault).scale;
-  for (FieldLevel& level : result.levels) {
-    level.mean *= scale;
-    level.high *= scale;
-  }
+  result.levels = levels_of(fault, solution);
   result.series = fault_series(
       fault, given_closing(fault).value_or(worst_closing(fault, result.extremes)), forces);
   return result;

@@ -1,6 +1,7 @@
 #include "solver/wall_field.hpp"
 
 #include <algorithm>
+#include <numbers>
 #include <optional>
 
 #include "solver/constants.hpp"
@@ -70,6 +71,19 @@ std::vector<FieldLevel> field_levels(const Solution& solution) {
     const mesh::Point b = cell_flux_density(solution.grid(), t, solution.potential.col(0));
     if (solution.pattern_count() == 1) return norm(b);
     return peak_magnitude(b, cell_flux_density(solution.grid(), t, solution.potential.col(1)));
+  });
+}
+
+std::vector<FieldLevel> field_levels(const Solution& solution,
+                                     std::span<const std::complex<double>> factors) {
+  return levels_of(*solution.problem, [&](int t) {
+    const mesh::Point b = cell_flux_density(solution.grid(), t, solution.potential.col(0));
+    const mesh::Point q = cell_flux_density(solution.grid(), t, solution.potential.col(1));
+    double largest = 0.0;
+    for (const std::complex<double> factor : factors) {
+      largest = std::max(largest, norm(factor.real() * b - factor.imag() * q));
+    }
+    return std::numbers::sqrt2 * largest;
   });
 }
 

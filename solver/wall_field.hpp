@@ -1,5 +1,7 @@
 #pragma once
 
+#include <complex>
+#include <span>
 #include <vector>
 
 #include "solver/instants.hpp"
@@ -25,6 +27,11 @@ inline constexpr double steel_saturates_at = 1.5;
 
 /// The level in every part of the section, by index; zeros for one that does not show.
 std::vector<FieldLevel> field_levels(const Solution& solution);
+
+/// The same of a field that is at every instant the solution's, r.m.s. phasors, times a factor:
+/// sqrt(2) Re(factor B), over the instants given.
+std::vector<FieldLevel> field_levels(const Solution& solution,
+                                     std::span<const std::complex<double>> factors);
 
 /// The same of the largest magnitude that each place sees: over half a cycle between the instants
 /// too, over another course at them. The saturated share is that of places which saturate at some

@@ -85,7 +85,7 @@ private:
     double error = 0.0;
     std::string place = "none";
     void take(double e, const std::string& where) {
-      if (e <= error && place != "none") return;
+      if (place != "none" && !worse(e, error)) return;
       error = e;
       place = where;
     }

@@ -89,13 +89,13 @@ std::vector<Check> BiotSavartCheck::checks() const {
       const double scale = std::max({mean(square_[i]), 0.1 * level, 0.02 * bars_alone(i)});
       const double relative = scale > 0.0 ? error / scale : error;
       squares += relative * relative;
-      if (!(relative <= worst)) {  // a NaN becomes the worst
+      if (worse(relative, worst)) {
         worst = relative;
         worst_at = at_[i];
       }
     }
     const double rms = std::sqrt(squares / static_cast<double>(count));
-    if (!(rms <= worst_rms)) worst_rms = rms;
+    if (worse(rms, worst_rms)) worst_rms = rms;
     listed += fmt::format("{}{}: {:.3f} %", listed.empty() ? "" : "; ", group.name, 100.0 * rms);
     first += count;
   }

@@ -1,5 +1,6 @@
 #pragma once
 
+#include <cmath>
 #include <string>
 #include <vector>
 
@@ -18,6 +19,11 @@ struct Check {
 /// Builds a check; a measured value that is not a number fails.
 inline Check make_check(std::string name, double measured, double limit, std::string detail) {
   return {std::move(name), measured, limit, "1", measured <= limit, std::move(detail)};
+}
+
+/// True when an error is worse than the worst so far; what is not a number is worse than any.
+inline bool worse(double error, double worst) {
+  return !std::isnan(worst) && !(error <= worst);
 }
 
 /// True when every check passed and there is at least one.

@@ -27,7 +27,7 @@ struct Worst {
   std::string name;
 
   void take(double value, const std::string& of) {
-    if (value <= error && !name.empty()) return;  // NaN is worse than any
+    if (!name.empty() && !worse(value, error)) return;
     error = value;
     name = of;
   }

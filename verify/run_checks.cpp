@@ -2,7 +2,6 @@
 
 #include <fmt/format.h>
 
-#include <cmath>
 #include <iterator>
 #include <numbers>
 
@@ -43,8 +42,8 @@ void CycleChecks::add(double wt, const solver::PartIntegrals& integrals,
                                 wt * 180.0 / std::numbers::pi, now[k].detail);
     if (forces_.size() == 1) {
       worst_.push_back(std::move(now[k]));
-    } else if (std::isnan(now[k].measured) || now[k].measured > worst_[k].measured) {
-      worst_[k] = std::move(now[k]);  // what is not a number stays the worst
+    } else if (worse(now[k].measured, worst_[k].measured)) {
+      worst_[k] = std::move(now[k]);
     }
   }
 }

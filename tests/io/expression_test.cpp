@@ -81,7 +81,10 @@ TEST_CASE("An expression has at most 200 characters") {
   const std::string ones = "1" + std::string(199, ' ');
   CHECK(evaluate(ones, names) == 1.0);
   CHECK_THAT(fault(ones + " "), Catch::Contains("at most 200 characters, this one has 201"));
-  CHECK(evaluate(std::string(99, '(') + "1" + std::string(99, ')'), names) == 1.0);
+  std::string nested(99, '(');
+  nested += '1';
+  nested.append(99, ')');
+  CHECK(evaluate(nested, names) == 1.0);
 }
 
 TEST_CASE("Names of values are words of their own") {

@@ -29,6 +29,20 @@ inline mesh::Section three_bars_in_trunking() {
   return section;
 }
 
+/// Three square bars of 20 mm at 40 mm pitch over a steel plate, 120 x 10 mm, 10 mm below them: few
+/// nodes.
+inline mesh::Section three_bars_over_plate() {
+  mesh::Section section;
+  const char* names[] = {"L1", "L2", "L3"};
+  for (int k = 0; k < 3; ++k) {
+    section.parts.push_back(
+        bar(names[k], {mesh::Rectangle{{(k - 1) * 40 * mm, 0.0}, 20 * mm, 20 * mm, 0.0}}));
+  }
+  section.parts.push_back(
+      steel_wall("plate", {mesh::Rectangle{{0.0, -25 * mm}, 120 * mm, 10 * mm, 0.0}}));
+  return section;
+}
+
 /// Three round bars in trefoil inside a steel pipe: inner radius 60 mm, wall 5 mm.
 inline mesh::Section trefoil_in_pipe() {
   mesh::Section section;

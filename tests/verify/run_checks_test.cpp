@@ -6,6 +6,7 @@
 
 #include "tests/support/problems.hpp"
 #include "tests/support/sections.hpp"
+#include "verify/air_samples.hpp"
 
 namespace barwall::verify {
 namespace {
@@ -145,6 +146,24 @@ TEST_CASE("A potential that is not a number fails every check") {
     INFO(check.name);
     CHECK_FALSE(check.passed);
   }
+}
+
+TEST_CASE("A potential that is not a number at one place fails the checks that look there") {
+  const auto spoiled_at = [](int triangle) {
+    Spoiled spoiled;
+    spoiled.solution.potential(spoiled.solution.grid().triangle(triangle)[0], 0) = NAN;
+    return checks_of(spoiled.solution);
+  };
+  // Among the first of the samples in air, and on the first of the circles.
+  const solver::Problem& problem = *solved_once().problem;
+  const auto by_sample =
+      spoiled_at(air_samples(problem).groups.front().samples.front().location.triangle);
+  CHECK_FALSE(passed(by_sample, "biot-savart-rms"));
+  CHECK_FALSE(passed(by_sample, "biot-savart-worst"));
+  const mesh::Point on_circle =
+      bounds(problem.section).centre() + mesh::Point{4.0 * half_size(problem.section), 0.0};
+  const auto by_circle = spoiled_at(locate(*problem.grid, problem.section, on_circle).triangle);
+  CHECK_FALSE(passed(by_circle, "long-wire"));
 }
 
 TEST_CASE("No checks at all are not soundness") {
