@@ -181,7 +181,7 @@ const double instant_room = 1.0 - std::cos(7.5 * pi / 180.0);
 const double crest = std::numbers::sqrt2;
 
 /// Saturates the plate over which three bars lie.
-constexpr double saturating = 40e3;
+constexpr double saturating = 32e3;
 
 const Problem& saturable_problem() {
   static const auto problem = support::with_curve(
