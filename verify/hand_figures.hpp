@@ -7,7 +7,8 @@ namespace barwall::verify {
 
 /// Sets beside the figures of bars and loops what a handbook's formula gives for them, with its
 /// name and source: hand_force and hand_inductance, and for a fault standard_fault_force beside the
-/// peak force. Where no formula applies the hand value stays not given.
+/// peak force of a bar and standard_piece_force beside that of its outer pieces. Where no formula
+/// applies the hand value stays not given.
 void add_hand_values(solver::Figures& figures, const solver::Problem& problem,
                      const solver::FaultCurrent* fault);
 
