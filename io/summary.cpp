@@ -142,12 +142,12 @@ public:
     }
     const auto given = [&](const char* key) { return value_of(fault.circuit, key); };
     std::string text = "\n";
-    text +=
-        wrapped("Fault between " + names + ", largest forces per metre of run", 0, summary_width);
+    text += wrapped("Fault between " + names + ", largest forces per metre of run" + closing_text(),
+                    0, summary_width);
     if (std::isfinite(given("r_over_x"))) {
       text += wrapped(
           fmt::format("{} symmetrical, R/X {:.3g}, power factor {:.3g}, kappa {:.4g}, peak over "
-                      "r.m.s. {:.4g}; the waveform's own crest {}",
+                      "r.m.s. {:.4g}; the waveform's own crest, worst closing, {}",
                       text_of(fault.circuit, "symmetrical_current"), given("r_over_x"),
                       given("power_factor"), given("kappa"), given("peak_over_rms"),
                       text_of(fault.circuit, "crest_current")),
@@ -314,10 +314,10 @@ public:
     std::stable_sort(rows.begin(), rows.end(),
                      [](const Row& a, const Row& b) { return a.size > b.size; });
     PlainTable table("llrrrr");
-    std::vector<std::string> head = alternating_
-                                        ? std::vector<std::string>{"", "", "largest", "smallest"}
-                                        : std::vector<std::string>{"", "", "push", "mean pressure"};
-    if (figures_.fault) head.insert(head.end(), {"largest in the fault", "smallest"});
+    std::vector<std::string> head =
+        alternating_ ? std::vector<std::string>{"", "", "most outward", "most inward"}
+                     : std::vector<std::string>{"", "", "push", "mean pressure"};
+    if (figures_.fault) head.insert(head.end(), {"outward in the fault", "inward"});
     table.add(head);
     for (std::size_t k = 0; k < std::min(rows.size(), most_rows); ++k) table.add(rows[k].cells);
     return section("Push on the sides of the walls, outward positive, per metre of run", table,
@@ -337,6 +337,16 @@ private:
   static std::string section(const std::string& title, const PlainTable& table, std::size_t all) {
     if (table.empty()) return "";
     return "\n" + title + "\n" + table.text(summary_width) + more_rows(all);
+  }
+
+  /// For which closing of an alternating fault the forces are.
+  std::string closing_text() const {
+    const auto& course = results_.input.fault->current.course;
+    const auto* alternating = std::get_if<solver::AlternatingFault>(&course);
+    if (alternating == nullptr) return "";
+    return alternating->closing ? fmt::format(", closing at {:g}° of the first bar's voltage",
+                                              to_ten_digits(*alternating->closing / degree))
+                                : ", each at its worst closing";
   }
 
   /// Magnitude of an entry's force by a handbook's formula, of the peak with a frequency [N/m].

@@ -69,6 +69,8 @@ public:
     for (std::size_t b = 0; b < bodies.size(); ++b) {
       const double gap = gap_round[b];
       for (const auto& line : offset_lines(problem_.outline, bodies[b], 0.5 * gap)) {
+        // A body more than twice as thick as that holds a line as well.
+        if (!in_air(line.front())) continue;
         ++count;
         worst.take(
             error_of(along(line), enclosed_by(line)),
@@ -93,6 +95,11 @@ private:
 
   double error_of(Complex found, Complex expected) const {
     return largest_ > 0.0 ? std::abs(found - expected) / largest_ : std::abs(found);
+  }
+
+  bool in_air(mesh::Point at) const {
+    const mesh::Location location = locate(solution_.grid(), problem_.section, at);
+    return solution_.grid().occupant(location.triangle).part < 0;
   }
 
   /// H in air times a step, both load patterns [A].

@@ -66,7 +66,9 @@ void add_hand_values(solver::Figures& figures, const solver::Problem& problem,
     const auto hand = hand_inductance(problem.section, loop.go, loop.back);
     if (!hand) continue;
     name_formula(figures.loops[k], *hand);
-    for (solver::Figure& figure : figures.loops[k].figures) figure.hand = hand->value;
+    for (solver::Figure& figure : figures.loops[k].figures) {
+      if (figure.unit == "H/m") figure.hand = hand->value;
+    }
   }
   if (fault == nullptr || !figures.fault) return;
   const double peak = standard_peak(*fault);

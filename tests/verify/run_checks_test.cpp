@@ -170,4 +170,12 @@ TEST_CASE("No checks at all are not soundness") {
   CHECK_FALSE(sound({}));
 }
 
+TEST_CASE("Loops in air pass round a wall thicker than its clearance") {
+  mesh::Section thick;
+  thick.parts.push_back(support::bar("bar", {mesh::Round{{0.0, 0.0}, 20 * mm}}));
+  thick.parts.push_back(support::steel_wall("tube", {mesh::Tube{{0.0, 0.0}, 90 * mm, 20 * mm}}));
+  CHECK(passed(checks_of(solve(support::problem_of(thick, {1.0, 500.0}, {800.0, 0.0}))),
+               "ampere-loops"));
+}
+
 }  // namespace barwall::verify
