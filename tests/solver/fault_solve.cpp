@@ -76,7 +76,7 @@ void side_by_side(const PartForces<T>& a, const PartForces<T>& b, Take take) {
   REQUIRE(a.push.size() == b.push.size());
   std::vector<std::pair<const T*, const T*>> pushes;
   for (std::size_t k = 0; k < a.push.size(); ++k) pushes.emplace_back(&a.push[k], &b.push[k]);
-  CHECK(pushes.size() == 4);  // the sides of the plate, uppermost of the two walls
+  CHECK(pushes.size() == 4);  // the sides of the plate; the foot is not magnetic
   take(pushes);
 }
 
