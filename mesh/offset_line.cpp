@@ -7,7 +7,9 @@
 #include <boost/geometry/geometries/multi_polygon.hpp>
 #include <boost/geometry/geometries/point_xy.hpp>
 #include <boost/geometry/geometries/polygon.hpp>
+#include <map>
 #include <set>
+#include <utility>
 
 namespace barwall::mesh {
 namespace {
@@ -46,6 +48,40 @@ Rings grown_by_one(const std::vector<Line>& lines, std::size_t first, std::size_
   return grown;
 }
 
+/// Lines joined end to start as far as they go. Growing many short lines that share their ends, the
+/// library has been seen to leave parts of one region apart, or out.
+std::vector<Line> joined(const std::vector<Line>& lines) {
+  const auto key = [](const Vertex& v) { return std::pair(v.x(), v.y()); };
+  std::multimap<std::pair<double, double>, std::size_t> starting_at;
+  std::multiset<std::pair<double, double>> ends;
+  for (std::size_t k = 0; k < lines.size(); ++k) {
+    starting_at.emplace(key(lines[k].front()), k);
+    ends.insert(key(lines[k].back()));
+  }
+  std::vector<Line> result;
+  std::vector<bool> used(lines.size(), false);
+  const auto follow_from = [&](std::size_t k) {
+    if (used[k]) return;
+    used[k] = true;
+    Line line = lines[k];
+    for (auto next = starting_at.find(key(line.back())); next != starting_at.end();
+         next = starting_at.find(key(line.back()))) {
+      const Line& more = lines[next->second];
+      const bool taken = used[next->second];
+      used[next->second] = true;
+      starting_at.erase(next);
+      if (!taken) line.insert(line.end(), more.begin() + 1, more.end());
+    }
+    result.push_back(std::move(line));
+  };
+  // First from where no other line ends, then what is left: closed ones.
+  for (std::size_t k = 0; k < lines.size(); ++k) {
+    if (!ends.contains(key(lines[k].front()))) follow_from(k);
+  }
+  for (std::size_t k = 0; k < lines.size(); ++k) follow_from(k);
+  return result;
+}
+
 }  // namespace
 
 std::vector<std::vector<Point>> offset_lines(const Outline& outline, const std::vector<int>& parts,
@@ -69,6 +105,7 @@ std::vector<std::vector<Point>> offset_lines(const Outline& outline, const std::
     lines.push_back(std::move(line));
   }
   std::vector<std::pair<double, std::vector<Point>>> found;
+  lines = joined(lines);
   for (const Ring& ring : grown_by_one(lines, 0, lines.size())) {
     std::vector<Point> line;
     for (const Vertex& v : ring.outer()) {

@@ -178,4 +178,17 @@ TEST_CASE("Loops in air pass round a wall thicker than its clearance") {
                "ampere-loops"));
 }
 
+TEST_CASE("Loops in air pass round bars in contact") {
+  mesh::Section touching;
+  const double x[] = {0.0, 0.0, 40 * mm};
+  const double y[] = {0.0, 60 * mm, 60 * mm};
+  for (std::size_t k = 0; k < 3; ++k) {
+    touching.parts.push_back(support::bar(std::string(1, static_cast<char>('A' + k)),
+                                          {mesh::Rectangle{{x[k], y[k]}, 40 * mm, 10 * mm, 0.0}}));
+  }
+  CHECK(passed(
+      checks_of(solve(support::problem_of(touching, {1.0, 1.0, 1.0}, {600.0, -300.0, -300.0}))),
+      "ampere-loops"));
+}
+
 }  // namespace barwall::verify
