@@ -119,6 +119,14 @@ private:
     std::optional<solver::Supports> supports;
     if (const auto& given = results_.input.supports) supports = {given->span, given->strength};
     results_.figures.fault = fault_figures(fault, problem, *geometry_, *results_.fault, supports);
+    if (const auto& course = results_.fault->course) {
+      const solver::Solution& strongest = *course->solution[course->strongest];
+      const solver::RecoveredField field(strongest);
+      verify::keep_worse(
+          results_.checks,
+          verify::run_checks(solver::PartIntegrals(strongest), field, geometry_->bands),
+          "in the fault");
+    }
     const auto& levels = results_.fault->levels;
     add_notices(saturation_notices(problem, levels, "in the fault"));
     add_notices(table_notices(problem, levels, "in the fault"));

@@ -31,6 +31,15 @@ std::vector<Check> run_checks(const solver::PartIntegrals& integrals,
   return checks;
 }
 
+void keep_worse(std::vector<Check>& checks, std::vector<Check> others, const std::string& where) {
+  for (std::size_t k = 0; k < checks.size(); ++k) {
+    if (others[k].measured <= checks[k].measured) continue;  // what is not a number is worse
+    if (std::isnan(checks[k].measured)) continue;
+    others[k].detail = where + ": " + others[k].detail;
+    checks[k] = std::move(others[k]);
+  }
+}
+
 void CycleChecks::add(double wt, const solver::PartIntegrals& integrals,
                       const solver::RecoveredField& field, const solver::StressBands& bands) {
   biot_savart_.add(integrals.solution(), field);

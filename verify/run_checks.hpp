@@ -14,6 +14,10 @@ std::vector<Check> run_checks(const solver::PartIntegrals& integrals,
                               const solver::RecoveredField& field,
                               const solver::StressBands& bands);
 
+/// Puts each of other checks of the same section in the place of its own where it measured more,
+/// and says in its detail where that was.
+void keep_worse(std::vector<Check>& checks, std::vector<Check> others, const std::string& where);
+
 /// The self-checks of alternating currents that were solved instant by instant: those of forces and
 /// of Biot-Savart fields over the cycle; of the others the worst instant counts.
 class CycleChecks {

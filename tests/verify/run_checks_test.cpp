@@ -191,4 +191,18 @@ TEST_CASE("Loops in air pass round bars in contact") {
       "ampere-loops"));
 }
 
+TEST_CASE("Of two sets of checks the worse of each is kept, with where it was") {
+  std::vector<Check> checks{make_check("a", 0.1, 1.0, "load"), make_check("b", 0.3, 1.0, "load"),
+                            make_check("c", 0.1, 1.0, "load"), make_check("d", NAN, 1.0, "load")};
+  keep_worse(checks,
+             {make_check("a", 2.0, 1.0, "bar"), make_check("b", 0.2, 1.0, "bar"),
+              make_check("c", NAN, 1.0, "bar"), make_check("d", 0.1, 1.0, "bar")},
+             "in the fault");
+  CHECK(checks[0].detail == "in the fault: bar");
+  CHECK_FALSE(checks[0].passed);
+  CHECK(checks[1].detail == "load");
+  CHECK_FALSE(checks[2].passed);
+  CHECK_FALSE(checks[3].passed);
+}
+
 }  // namespace barwall::verify
