@@ -114,8 +114,7 @@ void set_grids(solver::Problem& problem, const Case& input,
   }
 }
 
-}  // namespace
-
+/// Probe places with their points.
 std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& outline) {
   std::vector<solver::Probe> probes;
   for (const ProbeRequest& request : input.probes) {
@@ -143,10 +142,17 @@ std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& out
   return probes;
 }
 
-std::shared_ptr<const solver::Problem> problem_of(const Case& input) {
+}  // namespace
+
+ProbedProblem probed_problem_of(const Case& input) {
   auto problem = problem_without_grid(input);
-  set_grids(*problem, input, probes_of(input, problem->outline));
-  return problem;
+  auto probes = probes_of(input, problem->outline);
+  set_grids(*problem, input, probes);
+  return {std::move(problem), std::move(probes)};
+}
+
+std::shared_ptr<const solver::Problem> problem_of(const Case& input) {
+  return probed_problem_of(input).problem;
 }
 
 }  // namespace barwall::io

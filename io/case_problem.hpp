@@ -9,11 +9,18 @@
 
 namespace barwall::io {
 
-/// Case -> Section -> FittedGrid -> Problem, ready to solve.
-/// \throws InputError when no grid fits or it is larger than memory allows
-std::shared_ptr<const solver::Problem> problem_of(const Case& input);
+/// A case ready to solve, and the places where its field is wanted.
+struct ProbedProblem {
+  std::shared_ptr<const solver::Problem> problem;
+  std::vector<solver::Probe> probes;
+};
 
-/// Probe places with their points.
-std::vector<solver::Probe> probes_of(const Case& input, const mesh::Outline& outline);
+/// Case -> Section -> FittedGrid -> Problem, fine out to every probe.
+/// \throws InputError when no grid fits or it is larger than memory allows
+ProbedProblem probed_problem_of(const Case& input);
+
+/// Its problem alone.
+/// \throws InputError
+std::shared_ptr<const solver::Problem> problem_of(const Case& input);
 
 }  // namespace barwall::io

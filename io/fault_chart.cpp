@@ -48,18 +48,9 @@ PanelLine force_line(const std::string& name, int pen, const std::vector<double>
   return line;
 }
 
-/// Names of the fault's bars, in its order.
-std::vector<std::string> bar_names(const Results& results) {
-  std::vector<std::string> names;
-  for (int bar : results.input.fault->current.bars) {
-    names.push_back(results.problem->section.parts[static_cast<std::size_t>(bar)].name);
-  }
-  return names;
-}
-
 /// The force on every bar, or on the body that it is in, the body of several bars once.
 LinePanel force_panel(const Results& results, const solver::FaultSeries& series) {
-  const std::vector<std::string> names = bar_names(results);
+  const std::vector<std::string> names = results.fault_bars();
   const std::vector<solver::Entry>& bodies = results.figures.fault->bodies;
   LinePanel panel{"Force", "N/m", series.seconds, {}};
   std::vector<bool> shown(bodies.size(), false);
@@ -81,7 +72,7 @@ LinePanel force_panel(const Results& results, const solver::FaultSeries& series)
 }
 
 LinePanel current_panel(const Results& results, const solver::FaultSeries& series) {
-  const std::vector<std::string> names = bar_names(results);
+  const std::vector<std::string> names = results.fault_bars();
   LinePanel panel{"Current", "A", series.seconds, {}};
   for (std::size_t b = 0; b < names.size(); ++b) {
     panel.lines.push_back({names[b], static_cast<int>(b), series.current[b]});
@@ -98,7 +89,7 @@ FaultChart fault_chart(const Results& results) {
   chart.forces = force_panel(results, series);
   chart.currents = current_panel(results, series);
   chart.fault = fmt::format("Short circuit between {}: force per metre of run",
-                            fmt::join(bar_names(results), ", "));
+                            fmt::join(results.fault_bars(), ", "));
   chart.note =
       "Forces are magnitudes and static, without a dynamic factor; positive currents "
       "flow out of the page.";

@@ -1,7 +1,6 @@
 #include "io/fault_picture.hpp"
 
 #include <algorithm>
-#include <future>
 
 #include "io/page.hpp"
 #include "io/page_text.hpp"
@@ -66,10 +65,7 @@ void draw_fault_forces(Canvas& canvas, const FaultChart& chart, double top) {
 Pictures draw_fault_pictures(const Results& results) {
   require_memory_for_drawing();
   const FaultChart chart = fault_chart(results);
-  auto svg = std::async(std::launch::async | std::launch::deferred,
-                        [&] { return drawn(Canvas::Kind::svg, results, chart); });
-  std::string png = drawn(Canvas::Kind::png, results, chart);
-  return {std::move(png), svg.get()};
+  return in_both_formats([&](Canvas::Kind kind) { return drawn(kind, results, chart); });
 }
 
 void write_fault_pictures(const Results& results, const std::filesystem::path& folder) {

@@ -3,7 +3,7 @@
 #include <algorithm>
 #include <cmath>
 
-#include "io/grid_window.hpp"
+#include "mesh/grid_window.hpp"
 
 namespace barwall::io {
 namespace {
@@ -19,7 +19,7 @@ public:
   /// Rows `from` to `to` (excluded); bands of rows may be painted in parallel.
   void paint(int from, int to) const {
     const mesh::Box& w = raster_.window;
-    const GridWindow cells = window_covering(
+    const mesh::GridWindow cells = window_covering(
         grid_, {{w.low.x, w.high.y - to * pixel_.y}, {w.high.x, w.high.y - from * pixel_.y}});
     for (int j = cells.first_row; j < cells.last_row; ++j) {
       for (int i = cells.first_column; i < cells.last_column; ++i) {

@@ -6,7 +6,7 @@
 #include <numbers>
 #include <optional>
 
-#include "io/grid_window.hpp"
+#include "mesh/grid_window.hpp"
 #include "mesh/sampling.hpp"
 #include "solver/energy.hpp"
 
@@ -46,7 +46,7 @@ Eigen::VectorXd potential_of(const Results& results) {
 
 /// Smallest and largest A in a window: at its nodes and its four corners.
 std::pair<double, double> range_of(const Results& results, const Eigen::VectorXd& a,
-                                   const mesh::Box& window, const GridWindow& cells) {
+                                   const mesh::Box& window, const mesh::GridWindow& cells) {
   const mesh::FittedGrid& grid = results.solution->grid();
   double low = HUGE_VAL;
   double high = -HUGE_VAL;
@@ -192,7 +192,7 @@ void add_clipped(std::vector<FluxLine>& lines, double level, std::vector<Point> 
 std::vector<FluxLine> flux_lines(const Results& results, const mesh::Box& window, int count) {
   const mesh::FittedGrid& grid = results.solution->grid();
   const Eigen::VectorXd a = potential_of(results);
-  const GridWindow cells = window_covering(grid, window);
+  const mesh::GridWindow cells = window_covering(grid, window);
   const auto [low, high] = range_of(results, a, window, cells);
   if (count < 1 || !(high > low)) return {};
   // Half a step from either end: the same flux between neighbours, none shrunk to a point.

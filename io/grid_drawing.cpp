@@ -3,7 +3,7 @@
 #include <algorithm>
 #include <cmath>
 
-#include "io/grid_window.hpp"
+#include "mesh/grid_window.hpp"
 #include "mesh/spacing.hpp"
 
 namespace barwall::io {
@@ -47,7 +47,7 @@ void draw_grid(Canvas& canvas, const mesh::FittedGrid& grid, const Frame& frame,
   const Pen pen{grid_ink, 0.6, {}};
   const double gap = least_gap / frame.scale();
   const mesh::Box& w = frame.window;
-  const GridWindow cells = window_covering(grid, w);
+  const mesh::GridWindow cells = window_covering(grid, w);
   const auto node = [&](int i, int j) {
     return frame.page(grid.nodes[static_cast<std::size_t>(grid.node(i, j))]);
   };

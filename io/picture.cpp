@@ -206,14 +206,18 @@ Frame picture_frame(const mesh::Section& section) {
                      largest_height);
 }
 
+Pictures in_both_formats(const std::function<std::string(Canvas::Kind)>& drawn) {
+  auto svg = std::async(std::launch::async | std::launch::deferred,
+                        [&] { return drawn(Canvas::Kind::svg); });
+  std::string png = drawn(Canvas::Kind::png);
+  return {std::move(png), svg.get()};
+}
+
 Pictures draw_pictures(const Results& results) {
   require_memory_for_drawing();
   const Scene scene = scene_of(results);
   const Bitmap bitmap = coloured(scene.raster, scene.scale);
-  auto svg = std::async(std::launch::async | std::launch::deferred,
-                        [&] { return drawn(Canvas::Kind::svg, results, scene, bitmap); });
-  std::string png = drawn(Canvas::Kind::png, results, scene, bitmap);
-  return {std::move(png), svg.get()};
+  return in_both_formats([&](Canvas::Kind kind) { return drawn(kind, results, scene, bitmap); });
 }
 
 void write_pictures(const Results& results, const std::filesystem::path& folder) {

@@ -1,8 +1,10 @@
 #pragma once
 
 #include <filesystem>
+#include <functional>
 #include <string>
 
+#include "io/canvas.hpp"
 #include "io/frame.hpp"
 #include "io/results.hpp"
 
@@ -13,6 +15,9 @@ struct Pictures {
   std::string png;
   std::string svg;
 };
+
+/// The same drawing in both, at once where the system gives a thread.
+Pictures in_both_formats(const std::function<std::string(Canvas::Kind)>& drawn);
 
 /// Where on its page a picture of results shows the section.
 Frame picture_frame(const mesh::Section& section);

@@ -8,6 +8,14 @@ std::string Results::verdict() const {
   return verify::sound(checks) ? "sound" : "unsound";
 }
 
+std::vector<std::string> Results::fault_bars() const {
+  std::vector<std::string> names;
+  for (const int bar : input.fault->current.bars) {
+    names.push_back(input.section.parts[static_cast<std::size_t>(bar)].name);
+  }
+  return names;
+}
+
 std::string Results::validity() const {
   const bool indicative = std::any_of(figures.notices.begin(), figures.notices.end(),
                                       [](const solver::Notice& n) { return n.indicative; });

@@ -33,6 +33,8 @@ struct Results {
   StageTimes stages;
 
   bool alternating() const { return problem->excitation.alternating(); }
+  /// Names of the fault's bars, in its order; only with a fault.
+  std::vector<std::string> fault_bars() const;
   /// True with a fault whose course over time is known.
   bool fault_over_time() const { return fault && !fault->series.seconds.empty(); }
   /// "sound" or "unsound", from the checks alone.

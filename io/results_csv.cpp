@@ -53,12 +53,7 @@ struct Columns {
     values.push_back(column);
   }
   void add_force(const std::string& address, const std::vector<mesh::Point>& force) {
-    std::vector<double> x;
-    std::vector<double> y;
-    for (const mesh::Point value : force) {
-      x.push_back(value.x);
-      y.push_back(value.y);
-    }
+    const auto [x, y] = mesh::components(force);
     add(address + "/force_x_n_per_m", x);
     add(address + "/force_y_n_per_m", y);
   }

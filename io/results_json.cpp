@@ -133,10 +133,7 @@ Json probe_json(const solver::ProbeFigures& probe) {
 }
 
 Json fault_json(const Results& results, const solver::FaultFigures& fault) {
-  Json json;
-  for (int bar : results.input.fault->current.bars) {
-    json["between"].push_back(results.input.section.parts[static_cast<std::size_t>(bar)].name);
-  }
+  Json json{{"between", results.fault_bars()}};
   add_figures(json, fault.circuit);
   json["bars"] = Json::array();
   for (const solver::Entry& bar : fault.bars) {

@@ -48,8 +48,9 @@ public:
 
   Results complete() {
     watch_.begin("grid");
-    results_.problem = problem_of(results_.input);
-    probes_ = probes_of(results_.input, results_.problem->outline);
+    ProbedProblem probed = probed_problem_of(results_.input);
+    results_.problem = std::move(probed.problem);
+    probes_ = std::move(probed.probes);
     const Problem& problem = *results_.problem;
     geometry_.emplace(problem);
     const solver::Readings readings =

@@ -3,7 +3,6 @@
 #include <algorithm>
 #include <array>
 #include <cmath>
-#include <future>
 #include <numbers>
 
 #include "io/frame.hpp"
@@ -218,10 +217,7 @@ std::string drawn(Canvas::Kind kind, const Case& input, const solver::Problem& p
 
 Pictures draw_section(const Case& input, const solver::Problem& problem) {
   require_memory_for_drawing();
-  auto svg = std::async(std::launch::async | std::launch::deferred,
-                        [&] { return drawn(Canvas::Kind::svg, input, problem); });
-  std::string png = drawn(Canvas::Kind::png, input, problem);
-  return {std::move(png), svg.get()};
+  return in_both_formats([&](Canvas::Kind kind) { return drawn(kind, input, problem); });
 }
 
 void draw_section(const Case& input, const solver::Problem& problem,

@@ -135,11 +135,7 @@ public:
   std::string fault() const {
     if (!figures_.fault) return "";
     const solver::FaultFigures& fault = *figures_.fault;
-    std::string names;
-    for (int bar : results_.input.fault->current.bars) {
-      names += (names.empty() ? "" : ", ") +
-               results_.input.section.parts[static_cast<std::size_t>(bar)].name;
-    }
+    const std::string names = fmt::format("{}", fmt::join(results_.fault_bars(), ", "));
     const auto given = [&](const char* key) { return value_of(fault.circuit, key); };
     std::string text = "\n";
     text += wrapped("Fault between " + names + ", largest forces per metre of run" + closing_text(),

@@ -9,7 +9,7 @@ namespace barwall::io {
 
 void write_field(const Results& results, const std::filesystem::path& folder) {
   const mesh::FittedGrid& grid = results.solution->grid();
-  const GridWindow window = window_covering(grid, near_box(results));
+  const mesh::GridWindow window = window_covering(grid, near_box(results));
   for (const bool near : {true, false}) {
     vtkNew<vtkUnstructuredGrid> data;
     add_solution(data, *results.solution, *results.field, triangles_of(grid, window, near));

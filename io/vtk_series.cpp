@@ -34,8 +34,7 @@ void write_instants(const Results& results, const solver::Instants& instants,
     try {
       const solver::Solution& solution = *instants.solution[k];
       vtkNew<vtkUnstructuredGrid> data;
-      add_solution(data, solution, solver::RecoveredField(solution), triangles);
-      thin_out(data);
+      add_instant(data, solution, solver::RecoveredField(solution), triangles);
       add_labels(data, results);
       add_scalars(data->GetFieldData(), "time_s", {seconds[k]});
       write(data, folder / instant_file(name, k));

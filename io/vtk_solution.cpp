@@ -58,19 +58,17 @@ Places add_mesh(vtkUnstructuredGrid* data, const mesh::FittedGrid& grid,
   return used;
 }
 
+/// How much of a solution is told.
+enum class Detail { all, without_h_and_cells };
+
 /// B and H as recovered in the place's own occupant, and A.
 void add_point_data(vtkUnstructuredGrid* data, const solver::Solution& solution,
-                    const solver::RecoveredField& field, const Places& used) {
+                    const solver::RecoveredField& field, const Places& used, Detail detail) {
   FluxDensityArrays arrays;
   arrays.b.resize(static_cast<std::size_t>(solution.pattern_count()));
-  std::vector<std::vector<Point>> h(arrays.b.size());
-  std::vector<std::vector<double>> a(arrays.b.size());
   for (std::size_t pattern = 0; pattern < arrays.b.size(); ++pattern) {
-    const int column = static_cast<int>(pattern);
     for (const int place : used.place) {
-      arrays.b[pattern].push_back(field.flux_density(place, column));
-      h[pattern].push_back(field.field_strength(place, column));
-      a[pattern].push_back(solution.potential(field.node_of_place(place), column));
+      arrays.b[pattern].push_back(field.flux_density(place, static_cast<int>(pattern)));
     }
   }
   for (const int place : used.place) {
@@ -81,14 +79,21 @@ void add_point_data(vtkUnstructuredGrid* data, const solver::Solution& solution,
   vtkFieldData* to = data->GetPointData();
   add_flux_density(to, arrays);
   for (int k = 0; k < solution.pattern_count(); ++k) {
-    const auto pattern = static_cast<std::size_t>(k);
-    add_vectors(to, quantity_name("H", "A_per_m", k, alternating), h[pattern]);
-    add_scalars(to, quantity_name("A", "Wb_per_m", k, alternating), a[pattern]);
+    if (detail == Detail::all) {
+      std::vector<Point> h;
+      for (const int place : used.place) h.push_back(field.field_strength(place, k));
+      add_vectors(to, quantity_name("H", "A_per_m", k, alternating), h);
+    }
+    std::vector<double> a;
+    for (const int place : used.place) {
+      a.push_back(solution.potential(field.node_of_place(place), k));
+    }
+    add_scalars(to, quantity_name("A", "Wb_per_m", k, alternating), a);
   }
 }
 
 void add_cell_data(vtkUnstructuredGrid* data, const solver::Solution& solution,
-                   const std::vector<int>& chosen) {
+                   const std::vector<int>& chosen, Detail detail) {
   const bool alternating = solution.problem->excitation.alternating();
   const mesh::FittedGrid& grid = solution.grid();
   vtkFieldData* to = data->GetCellData();
@@ -104,34 +109,29 @@ void add_cell_data(vtkUnstructuredGrid* data, const solver::Solution& solution,
     const auto density = density_by_region(
         *solution.problem, solution.patterns[static_cast<std::size_t>(k)].part_current);
     std::vector<double> j;
-    std::vector<Point> b;
     for (const int t : chosen) {
       j.push_back(density[static_cast<std::size_t>(grid.region[static_cast<std::size_t>(t)])]);
-      b.push_back(solver::cell_flux_density(grid, t, solution.potential.col(k)));
     }
     add_scalars(to, quantity_name("J", "A_per_m2", k, alternating), j);
+    if (detail != Detail::all) continue;
+    std::vector<Point> b;
+    for (const int t : chosen) {
+      b.push_back(solver::cell_flux_density(grid, t, solution.potential.col(k)));
+    }
     add_vectors(to, quantity_name("B_cell", "T", k, alternating), b);
   }
 }
 
-}  // namespace
-
-std::vector<int> triangles_of(const mesh::FittedGrid& grid, const GridWindow& window, bool inside) {
-  std::vector<int> result;
-  for (int j = 0; j < grid.rows - 1; ++j) {
-    for (int i = 0; i < grid.columns - 1; ++i) {
-      if (window.contains(i, j) != inside) continue;
-      const int cell = j * (grid.columns - 1) + i;
-      result.push_back(2 * cell);
-      result.push_back(2 * cell + 1);
-    }
-  }
-  return result;
+void add_told(vtkUnstructuredGrid* data, const solver::Solution& solution,
+              const solver::RecoveredField& field, const std::vector<int>& triangles,
+              Detail detail) {
+  const Places used = add_mesh(data, solution.grid(), field, triangles);
+  add_point_data(data, solution, field, used, detail);
+  add_cell_data(data, solution, triangles, detail);
 }
 
-void thin_out(vtkUnstructuredGrid* data) {
-  data->GetPointData()->RemoveArray("H_A_per_m");
-  data->GetCellData()->RemoveArray("B_cell_T");
+/// Turns points and arrays of doubles into floats.
+void make_single(vtkUnstructuredGrid* data) {
   vtkNew<vtkPoints> points;
   points->SetDataTypeToFloat();
   points->DeepCopy(data->GetPoints());
@@ -148,11 +148,31 @@ void thin_out(vtkUnstructuredGrid* data) {
   }
 }
 
+}  // namespace
+
+std::vector<int> triangles_of(const mesh::FittedGrid& grid, const mesh::GridWindow& window,
+                              bool inside) {
+  std::vector<int> result;
+  for (int j = 0; j < grid.rows - 1; ++j) {
+    for (int i = 0; i < grid.columns - 1; ++i) {
+      if (window.contains(i, j) != inside) continue;
+      const int cell = j * (grid.columns - 1) + i;
+      result.push_back(2 * cell);
+      result.push_back(2 * cell + 1);
+    }
+  }
+  return result;
+}
+
 void add_solution(vtkUnstructuredGrid* data, const solver::Solution& solution,
                   const solver::RecoveredField& field, const std::vector<int>& triangles) {
-  const Places used = add_mesh(data, solution.grid(), field, triangles);
-  add_point_data(data, solution, field, used);
-  add_cell_data(data, solution, triangles);
+  add_told(data, solution, field, triangles, Detail::all);
+}
+
+void add_instant(vtkUnstructuredGrid* data, const solver::Solution& solution,
+                 const solver::RecoveredField& field, const std::vector<int>& triangles) {
+  add_told(data, solution, field, triangles, Detail::without_h_and_cells);
+  make_single(data);
 }
 
 }  // namespace barwall::io

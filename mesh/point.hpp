@@ -2,6 +2,9 @@
 
 #include <algorithm>
 #include <cmath>
+#include <span>
+#include <utility>
+#include <vector>
 
 namespace barwall::mesh {
 
@@ -65,6 +68,17 @@ constexpr Point between(Point a, Point b, double t) {
   return a + t * (b - a);
 }
 
+/// All x, and all y, of points or vectors.
+inline std::pair<std::vector<double>, std::vector<double>> components(
+    std::span<const Point> points) {
+  std::pair<std::vector<double>, std::vector<double>> result;
+  for (const Point p : points) {
+    result.first.push_back(p.x);
+    result.second.push_back(p.y);
+  }
+  return result;
+}
+
 /// An axis-parallel box [m]; empty while low > high.
 struct Box {
   Point low{HUGE_VAL, HUGE_VAL};
@@ -86,6 +100,12 @@ struct Box {
   double height() const { return high.y - low.y; }
   Point centre() const { return between(low, high, 0.5); }
 };
+
+/// A box with so much more on every side.
+inline Box grown(const Box& box, double margin) {
+  const Point more{margin, margin};
+  return {box.low - more, box.high + more};
+}
 
 /// Shortest way between two boxes [m], 0 where they meet.
 inline double distance(const Box& a, const Box& b) {

@@ -4,7 +4,6 @@
 #include <cassert>
 #include <cmath>
 #include <numbers>
-#include <tuple>
 
 #include "solver/largest_value.hpp"
 
@@ -77,18 +76,21 @@ Pulsation pulsation_through(std::span<const double> values) {
   };
   Pulsation result;
   for (double value : values) result.mean += value / n;
-  std::tie(result.cosine, result.sine) = std::tuple{harmonic(1)[0], harmonic(1)[1]};
+  const auto [cosine, sine] = harmonic(1);
+  result.cosine = cosine;
+  result.sine = sine;
   for (std::size_t h = 2; 2 * h <= values.size(); ++h) result.higher.push_back(harmonic(h));
   return result;
 }
 
-PulsatingVector pulsation_through(std::span<const mesh::Point> values) {
-  std::vector<double> x;
-  std::vector<double> y;
-  for (mesh::Point value : values) {
-    x.push_back(value.x);
-    y.push_back(value.y);
-  }
+std::vector<mesh::Point> means_of(std::span<const PulsatingVector> vectors) {
+  std::vector<mesh::Point> means;
+  for (const PulsatingVector& vector : vectors) means.push_back(vector.mean());
+  return means;
+}
+
+PulsatingVector over_half_cycle(std::span<const PulsatingVector> instants) {
+  const auto [x, y] = mesh::components(means_of(instants));
   return {pulsation_through(x), pulsation_through(y)};
 }
 

@@ -51,10 +51,16 @@ struct PulsatingVector {
   Pulsation y;
 
   mesh::Point at(double wt) const { return {x.at(wt), y.at(wt)}; }
+  /// Over the cycle; of steady currents the vector itself.
+  mesh::Point mean() const { return {x.mean, y.mean}; }
 };
 
 PulsatingVector sum_of(const PulsatingVector& a, const PulsatingVector& b, double factor = 1.0);
-PulsatingVector pulsation_through(std::span<const mesh::Point> values);
+/// The vector over the cycle from those of steady currents at wt = k pi / n, k = 0 to n - 1; n is
+/// even.
+PulsatingVector over_half_cycle(std::span<const PulsatingVector> instants);
+/// The steady vectors themselves.
+std::vector<mesh::Point> means_of(std::span<const PulsatingVector> vectors);
 
 /// A figure over the cycle from its products q(j, k), bilinear in load patterns j and k, a number
 /// or a vector. Steady currents, with one pattern, have a mean alone.

@@ -17,15 +17,25 @@ struct Excitation {
   bool alternating() const { return frequency_hz > 0.0; }
 };
 
+/// What all currents sum to [A].
+struct NetCurrent {
+  std::complex<double> sum = 0.0;
+  double magnitudes = 0.0;  ///< the sum of their magnitudes
+};
+
+inline NetCurrent net_current_of(const Excitation& excitation) {
+  NetCurrent net;
+  for (const std::complex<double>& value : excitation.current) {
+    net.sum += value;
+    net.magnitudes += std::abs(value);
+  }
+  return net;
+}
+
 /// True when the currents do not sum to zero, at any instant.
 inline bool has_net_current(const Excitation& excitation) {
-  std::complex<double> sum = 0.0;
-  double magnitude = 0.0;
-  for (const std::complex<double>& value : excitation.current) {
-    sum += value;
-    magnitude += std::abs(value);
-  }
-  return std::abs(sum) > 1e-12 * magnitude;
+  const NetCurrent net = net_current_of(excitation);
+  return std::abs(net.sum) > 1e-12 * net.magnitudes;
 }
 
 /// Go and return conductors of a loop, as indices of parts. Each side shares the loop's current

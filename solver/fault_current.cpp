@@ -104,20 +104,22 @@ std::vector<double> fault_currents(const FaultCurrent& fault, const FaultInstant
   return currents;
 }
 
+FaultInstant fault_instant(const FaultCurrent& fault, double t, double closing) {
+  return std::visit(Overloaded{[&](const AlternatingFault& alternating) {
+                                 return fault_instant(
+                                     alternating, 2.0 * pi * alternating.frequency_hz * t, closing);
+                               },
+                               [&](const DirectRise& rise) {
+                                 return FaultInstant{-std::expm1(-t / rise.time_constant), 0.0};
+                               },
+                               [](const DirectPeak& peak) {
+                                 return FaultInstant{peak.peak / peak.steady, 0.0};
+                               }},
+                    fault.course);
+}
+
 std::vector<double> fault_currents(const FaultCurrent& fault, double t, double closing) {
-  const FaultInstant instant =
-      std::visit(Overloaded{[&](const AlternatingFault& alternating) {
-                              return fault_instant(
-                                  alternating, 2.0 * pi * alternating.frequency_hz * t, closing);
-                            },
-                            [&](const DirectRise& rise) {
-                              return FaultInstant{-std::expm1(-t / rise.time_constant), 0.0};
-                            },
-                            [](const DirectPeak& peak) {
-                              return FaultInstant{peak.peak / peak.steady, 0.0};
-                            }},
-                 fault.course);
-  return fault_currents(fault, instant);
+  return fault_currents(fault, fault_instant(fault, t, closing));
 }
 
 LargestScale largest_scale(const FaultCurrent& fault) {

@@ -72,11 +72,14 @@ struct FaultInstant {
 /// \param closing the angle of the first bar's driving voltage at closing [rad]
 FaultInstant fault_instant(const AlternatingFault& fault, double wt, double closing);
 
+/// The same of any fault at the time t [s]; `closing` [rad] counts for alternating current alone. A
+/// DirectPeak has no known course: its peak stands for every time.
+FaultInstant fault_instant(const FaultCurrent& fault, double t, double closing);
+
 /// Currents of the bars named [A] at an instant.
 std::vector<double> fault_currents(const FaultCurrent& fault, const FaultInstant& instant);
 
-/// Currents of the bars named [A] at the time t [s]; `closing` [rad] counts for alternating current
-/// alone. A DirectPeak has no known course: its peak stands for every time.
+/// Currents of the bars named [A] at the time t [s].
 std::vector<double> fault_currents(const FaultCurrent& fault, double t, double closing = 0.0);
 
 /// The largest scale that the course reaches, and when.

@@ -119,16 +119,9 @@ FaultExtremes extremes_over_first_cycle(const AlternatingFault& fault,
                                         const PulsatingVector& sustained) {
   const int intervals = static_cast<int>(first_cycle.size()) - 1;
   const double step = 2.0 * pi / intervals;
-  std::vector<double> x;
-  std::vector<double> y;
   double size = size_of(sustained);
-  for (const mesh::Point force : first_cycle) {
-    x.push_back(force.x);
-    y.push_back(force.y);
-    size = std::max(size, norm(force));
-  }
-  const CurveSinceClosing along_x = curve_since_closing(x, step);
-  const CurveSinceClosing along_y = curve_since_closing(y, step);
+  for (const mesh::Point value : first_cycle) size = std::max(size, norm(value));
+  const ForceSinceClosing force = force_since_closing(first_cycle, step);
   const int steps = 8 * intervals;
   const auto seconds = [&](double wt) { return wt / (2.0 * pi * fault.frequency_hz); };
   const bool approached = fault.r_over_x > 0.0;
@@ -143,7 +136,6 @@ FaultExtremes extremes_over_first_cycle(const AlternatingFault& fault,
     if (found.value <= rounding * size) return {0.0, 0.0, fault.closing};
     return {sign * found.value, seconds(found.at), fault.closing};
   };
-  const auto force = [&](double wt) { return mesh::Point{along_x(wt), along_y(wt)}; };
   const LargestValue found =
       largest_value([&](double wt) { return norm(force(wt)); }, 0.0, 2.0 * pi, steps);
   FaultPeak peak{found.value, force(found.at), seconds(found.at), fault.closing};
@@ -151,9 +143,9 @@ FaultExtremes extremes_over_first_cycle(const AlternatingFault& fault,
   if (approached && later.magnitude > found.value + rounding * size) {
     peak = {later.magnitude, later.value, {}, fault.closing};
   }
-  return {component(along_x, 1.0, sustained.x), component(along_x, -1.0, scaled(sustained, -1.0).x),
-          component(along_y, 1.0, sustained.y), component(along_y, -1.0, scaled(sustained, -1.0).y),
-          peak};
+  const PulsatingVector reversed = scaled(sustained, -1.0);
+  return {component(force.x, 1.0, sustained.x), component(force.x, -1.0, reversed.x),
+          component(force.y, 1.0, sustained.y), component(force.y, -1.0, reversed.y), peak};
 }
 
 PulsatingVector sustained_force(const FaultCurrent& fault, const QuadraticForce& force) {

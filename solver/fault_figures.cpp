@@ -47,26 +47,9 @@ FaultFigures fault_figures(const FaultCurrent& fault, const Problem& problem,
   const auto figures_of = [&](const std::optional<FaultExtremes>& extremes) {
     return extremes ? extreme_figures(*extremes) : without_values(extreme_figures({}));
   };
-  const auto faces_of = [&](int part) {
-    std::vector<Entry> entries;
-    const auto& faces = geometry.faces.faces();
-    for (std::size_t k = 0; k < faces.size(); ++k) {
-      if (faces[k].part != part) continue;
-      const double most = forces.push[k].x_max.value;
-      const double least = forces.push[k].x_min.value;
-      const auto pressure = [&](double force) {
-        return faces[k].length > 0.0 ? force / faces[k].length : not_given;
-      };
-      entries.push_back({face_name(problem, faces[k]),
-                         {},
-                         {{"push_max", most, "N/m"},
-                          {"push_min", least, "N/m"},
-                          {"pressure_mean_max", pressure(most), "Pa"},
-                          {"pressure_mean_min", pressure(least), "Pa"}},
-                         {},
-                         0.0});
-    }
-    return entries;
+  const auto pushes_on = [&](std::size_t face) -> std::vector<FacePush> {
+    return {{"push_max", "pressure_mean_max", forces.push[face].x_max.value},
+            {"push_min", "pressure_mean_min", forces.push[face].x_min.value}};
   };
   FaultFigures result;
   result.circuit = circuit_figures(fault);
@@ -81,7 +64,7 @@ FaultFigures fault_figures(const FaultCurrent& fault, const Problem& problem,
       if (problem.materials[index].saturable()) {
         entry.figures.push_back({"saturated_share", level.saturated_share, "1"});
       }
-      entry.faces = faces_of(part);
+      entry.faces = face_entries(problem, geometry.faces, part, pushes_on);
       result.walls.push_back(std::move(entry));
       continue;
     }

@@ -24,29 +24,29 @@ FaultSeries times_of(const FaultCurrent& fault, double closing, double end, int 
   return series;
 }
 
+/// Where a course ends, in wt.
+double end_of_course(const FaultCurrent& fault) {
+  return fault.alternating() ? turn : time_constants;
+}
+
 }  // namespace
 
 FaultSeries fault_series(const FaultCurrent& fault, double closing,
                          const PartForces<PulsatingVector>& sustained) {
   FaultSeries series;
-  std::function<FaultInstant(double)> instant;
   if (const auto* alternating = std::get_if<AlternatingFault>(&fault.course)) {
     series = times_of(fault, closing, cycles / alternating->frequency_hz, cycles * times_per_cycle);
-    instant = [=](double t) {
-      return fault_instant(*alternating, turn * alternating->frequency_hz * t, closing);
-    };
   } else if (const auto* rise = std::get_if<DirectRise>(&fault.course)) {
     series = times_of(fault, closing, time_constants * rise->time_constant,
                       time_constants * times_per_cycle / 2);
-    instant = [=](double t) { return FaultInstant{-std::expm1(-t / rise->time_constant), 0.0}; };
   } else {
     return series;
   }
-  series.force = combined(std::span(&sustained, 1), [&](const std::vector<PulsatingVector>& force) {
+  series.force = transformed(sustained, [&](const PulsatingVector& force) {
     std::vector<mesh::Point> values;
     for (const double t : series.seconds) {
-      const FaultInstant now = instant(t);
-      values.push_back(now.scale * now.scale * force.front().at(now.angle));
+      const FaultInstant now = fault_instant(fault, t, closing);
+      values.push_back(now.scale * now.scale * force.at(now.angle));
     }
     return values;
   });
@@ -61,7 +61,7 @@ double seconds_per_unit(const FaultCurrent& fault) {
 
 Course fault_course(const FaultCurrent& fault, double closing, std::size_t parts) {
   Course course;
-  course.end = fault.alternating() ? turn : time_constants;
+  course.end = end_of_course(fault);
   course.half_cycle = false;
   course.currents = [=, unit = seconds_per_unit(fault)](double wt) {
     std::vector<double> all(parts, 0.0);
@@ -76,20 +76,13 @@ Course fault_course(const FaultCurrent& fault, double closing, std::size_t parts
 
 FaultSeries fault_series(const FaultCurrent& fault, double closing,
                          std::span<const PartForces<PulsatingVector>> instants) {
-  const double end = seconds_per_unit(fault) * (fault.alternating() ? turn : 1.0 * time_constants);
+  const double end = seconds_per_unit(fault) * end_of_course(fault);
   FaultSeries series = times_of(fault, closing, end, times_per_cycle);
   const double step = end / static_cast<double>(instants.size() - 1);
   series.force = combined(instants, [&](const std::vector<PulsatingVector>& force) {
-    std::vector<double> x;
-    std::vector<double> y;
-    for (const PulsatingVector& value : force) {
-      x.push_back(value.x.mean);
-      y.push_back(value.y.mean);
-    }
-    const CurveSinceClosing along_x = curve_since_closing(x, step);
-    const CurveSinceClosing along_y = curve_since_closing(y, step);
+    const ForceSinceClosing along = force_since_closing(means_of(force), step);
     std::vector<mesh::Point> values;
-    for (const double t : series.seconds) values.push_back({along_x(t), along_y(t)});
+    for (const double t : series.seconds) values.push_back(along(t));
     return values;
   });
   return series;

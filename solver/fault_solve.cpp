@@ -78,30 +78,25 @@ std::vector<FieldLevel> levels_of(const FaultCurrent& fault, const Solution& sus
   return levels;
 }
 
+/// The problem's solution with the sustained currents in place of its own, scaled.
+Solution solve_sustained(Problem problem, const FaultCurrent& fault, double scale = 1.0) {
+  problem.excitation = sustained_excitation(fault, problem.section.parts.size());
+  for (auto& current : problem.excitation.current) current *= scale;
+  problem.loops.clear();
+  return solve(std::make_shared<const Problem>(std::move(problem)));
+}
+
 FaultSolution with_constant_permeability(const Problem& problem, const FaultCurrent& fault,
                                          const ForceGeometry& geometry) {
-  Problem sustained = problem;
-  sustained.excitation = sustained_excitation(fault, problem.section.parts.size());
-  sustained.loops.clear();
-  const Solution solution = solve(std::make_shared<const Problem>(std::move(sustained)));
+  const Solution solution = solve_sustained(problem, fault);
   const Forces forces = forces_on(solution, geometry, true);
   FaultSolution result;
-  result.extremes = combined(std::span(&forces, 1), [&](const std::vector<PulsatingVector>& force) {
-    return extremes_of(fault, force.front());
-  });
+  result.extremes =
+      transformed(forces, [&](const PulsatingVector& force) { return extremes_of(fault, force); });
   result.levels = levels_of(fault, solution);
   result.series = fault_series(
       fault, given_closing(fault).value_or(worst_closing(fault, result.extremes)), forces);
   return result;
-}
-
-/// Steady solution of direct currents at the largest scale.
-Solution at_largest_direct_current(const Problem& problem, const FaultCurrent& fault) {
-  Problem largest = problem;
-  largest.excitation = sustained_excitation(fault, problem.section.parts.size());
-  for (auto& current : largest.excitation.current) current *= largest_scale(fault).scale;
-  largest.loops.clear();
-  return solve(std::make_shared<const Problem>(std::move(largest)));
 }
 
 /// Half a turn of the sustained currents, scaled.
@@ -131,10 +126,7 @@ FaultSolution with_saturable_steel(const Problem& problem, const FaultCurrent& f
     all.push_back(sustained);
     result.extremes =
         combined(std::span<const Forces>(all), [&](const std::vector<PulsatingVector>& force) {
-          std::vector<mesh::Point> cycle;
-          for (std::size_t k = 0; k + 1 < force.size(); ++k) {
-            cycle.push_back({force[k].x.mean, force[k].y.mean});
-          }
+          const auto cycle = means_of(std::span(force).first(force.size() - 1));
           return extremes_over_first_cycle(*alternating, cycle, force.back());
         });
     result.levels = field_levels(*result.course);
@@ -142,8 +134,8 @@ FaultSolution with_saturable_steel(const Problem& problem, const FaultCurrent& f
     return result;
   }
   const auto extremes_at_largest = [&](const Forces& forces) {
-    return combined(std::span(&forces, 1), [&](const std::vector<PulsatingVector>& force) {
-      return extremes_at_largest_scale(fault, force.front());
+    return transformed(forces, [&](const PulsatingVector& force) {
+      return extremes_at_largest_scale(fault, force);
     });
   };
   if (alternating != nullptr) {
@@ -153,7 +145,7 @@ FaultSolution with_saturable_steel(const Problem& problem, const FaultCurrent& f
     result.extremes = extremes_at_largest(over_half_cycle(std::span<const Forces>(forces)));
     result.levels = field_levels(largest);
   } else {
-    const Solution largest = at_largest_direct_current(problem, fault);
+    const Solution largest = solve_sustained(problem, fault, largest_scale(fault).scale);
     result.newton.push_back(largest.newton);
     result.extremes = extremes_at_largest(forces_on(largest, geometry, true));
     result.levels = field_levels(largest);

@@ -188,29 +188,14 @@ private:
   }
 
   std::vector<Entry> faces_of(int part) const {
-    std::vector<Entry> result;
-    const auto& faces = geometry_.faces.faces();
-    for (std::size_t k = 0; k < faces.size(); ++k) {
-      if (faces[k].part != part) continue;
-      const Pulsation& push = readings_.forces.push[k].x;
-      const double length = faces[k].length;
-      const auto pressure = [length](double force) {
-        return length > 0.0 ? force / length : not_given;
-      };
-      Entry entry{face_name(problem_, faces[k]), {}, {}, {}, 0.0};
-      if (!alternating_) {
-        entry.figures = {{"push", push.mean, "N/m"}, {"pressure_mean", pressure(push.mean), "Pa"}};
-      } else {
-        entry.figures = {{"push_mean", push.mean, "N/m"},
-                         {"push_max", push.largest(), "N/m"},
-                         {"push_min", push.smallest(), "N/m"},
-                         {"pressure_mean", pressure(push.mean), "Pa"},
-                         {"pressure_mean_max", pressure(push.largest()), "Pa"},
-                         {"pressure_mean_min", pressure(push.smallest()), "Pa"}};
-      }
-      result.push_back(std::move(entry));
-    }
-    return result;
+    return face_entries(problem_, geometry_.faces, part,
+                        [&](std::size_t k) -> std::vector<FacePush> {
+                          const Pulsation& push = readings_.forces.push[k].x;
+                          if (!alternating_) return {{"push", "pressure_mean", push.mean}};
+                          return {{"push_mean", "pressure_mean", push.mean},
+                                  {"push_max", "pressure_mean_max", push.largest()},
+                                  {"push_min", "pressure_mean_min", push.smallest()}};
+                        });
   }
 
   std::vector<Figure> field_figures(const FieldReading& reading) const {
@@ -298,9 +283,25 @@ std::vector<Figure> without_values(std::vector<Figure> figures) {
   return figures;
 }
 
-std::string face_name(const Problem& problem, const WallFace& face) {
-  const auto& pieces = problem.section.parts[static_cast<std::size_t>(face.part)].pieces;
-  return pieces.size() > 1 ? fmt::format("{} {}", face.piece + 1, face.side) : face.side;
+std::vector<Entry> face_entries(
+    const Problem& problem, const WallFaces& faces, int part,
+    const std::function<std::vector<FacePush>(std::size_t k)>& pushes_on) {
+  const auto& pieces = problem.section.parts[static_cast<std::size_t>(part)].pieces;
+  std::vector<Entry> entries;
+  for (std::size_t k = 0; k < faces.faces().size(); ++k) {
+    const WallFace& face = faces.faces()[k];
+    if (face.part != part) continue;
+    Entry entry;
+    entry.name = pieces.size() > 1 ? fmt::format("{} {}", face.piece + 1, face.side) : face.side;
+    const std::vector<FacePush> pushes = pushes_on(k);
+    for (const FacePush& of : pushes) entry.figures.push_back({of.push_key, of.push, "N/m"});
+    for (const FacePush& of : pushes) {
+      entry.figures.push_back(
+          {of.pressure_key, face.length > 0.0 ? of.push / face.length : not_given, "Pa"});
+    }
+    entries.push_back(std::move(entry));
+  }
+  return entries;
 }
 
 std::string joined(const std::vector<std::string>& names) {

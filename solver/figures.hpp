@@ -2,6 +2,7 @@
 
 #include <array>
 #include <complex>
+#include <functional>
 #include <limits>
 #include <optional>
 #include <string>
@@ -96,9 +97,19 @@ std::vector<Figure> force_figures(const PulsatingVector& force, bool alternating
 /// The same figures without their values.
 std::vector<Figure> without_values(std::vector<Figure> figures);
 
-/// The name of a wall's face within the wall: its side, "top", of a wall of several pieces with the
-/// piece's number, "2 top".
-std::string face_name(const Problem& problem, const WallFace& face);
+/// A push on a face, with the keys of its figure and of that of the mean pressure.
+struct FacePush {
+  std::string push_key;
+  std::string pressure_key;
+  double push = 0.0;  ///< [N/m]
+};
+
+/// Entries of a wall's faces: pushes [N/m], then mean pressures [Pa]. They are named by their
+/// sides, "top", in a wall of several pieces with the piece's number, "2 top". \param pushes_on the
+/// pushes on the k-th of all faces
+std::vector<Entry> face_entries(
+    const Problem& problem, const WallFaces& faces, int part,
+    const std::function<std::vector<FacePush>(std::size_t k)>& pushes_on);
 
 /// Names joined by "+", as a body's and a circuit's.
 std::string joined(const std::vector<std::string>& names);

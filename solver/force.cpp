@@ -5,7 +5,7 @@
 #include <cmath>
 #include <numeric>
 
-#include "solver/constants.hpp"
+#include "mesh/grid_window.hpp"
 #include "solver/flux_density.hpp"
 
 namespace barwall::solver {
@@ -118,20 +118,17 @@ std::vector<Nearest> nearest_bodies(const Problem& problem, const std::vector<Bo
   return nearest;
 }
 
-/// First and last line of the grid that a stretch can reach.
-std::pair<int, int> window(const std::vector<double>& lines, double low, double high) {
-  const auto first = std::lower_bound(lines.begin(), lines.end(), low) - lines.begin();
-  const auto last = std::upper_bound(lines.begin(), lines.end(), high) - lines.begin();
-  return {std::max(0, static_cast<int>(first) - 2),
-          std::min(static_cast<int>(lines.size()) - 1, static_cast<int>(last) + 2)};
-}
-
 }  // namespace
 
 PulsatingVector lorentz_force(const PartIntegrals& integrals, int part, int piece) {
   return over_cycle(integrals.solution().pattern_count(), [&](int current, int field) {
     return integrals.lorentz_force(part, piece, current, field);
   });
+}
+
+bool lorentz_alone(const Problem& problem, int part) {
+  const auto k = static_cast<std::size_t>(part);
+  return problem.section.parts[k].kind == mesh::Part::Kind::bar && !problem.materials[k].magnetic();
 }
 
 StressBands::StressBands(const Problem& problem, std::vector<std::vector<int>> groups)
@@ -143,10 +140,7 @@ StressBands::StressBands(const Problem& problem, std::vector<std::vector<int>> g
   for (std::size_t b = 0; b < outlines.size(); ++b) {
     const Body& body = outlines[b];
     const double margin = farthest_ratio * body.cap;
-    const auto [left, right] =
-        window(grid.x_lines, body.box.low.x - margin, body.box.high.x + margin);
-    const auto [bottom, top] =
-        window(grid.y_lines, body.box.low.y - margin, body.box.high.y + margin);
+    const mesh::GridWindow cells = window_covering(grid, grown(body.box, margin));
     // First the nodes that any band reaches, then the smallest window that holds them and the
     // ring of triangles about them.
     struct Reached {
@@ -155,9 +149,9 @@ StressBands::StressBands(const Problem& problem, std::vector<std::vector<int>> g
     };
     std::vector<Reached> reached;
     Surroundings& around = around_[b];
-    around = {right, left, top, bottom, {}};
-    for (int j = bottom; j <= top; ++j) {
-      for (int i = left; i <= right; ++i) {
+    around = {cells.last_column, cells.first_column, cells.last_row, cells.first_row, {}};
+    for (int j = cells.first_row; j <= cells.last_row; ++j) {
+      for (int i = cells.first_column; i <= cells.last_column; ++i) {
         const auto n = static_cast<std::size_t>(grid.node(i, j));
         const double other = std::min(body.cap, nearest[n].other_than(static_cast<int>(b)));
         const double limit = farthest_ratio * other;
@@ -218,7 +212,7 @@ PulsatingVector StressBands::force(const Solution& solution, int body, const Ban
           b[static_cast<std::size_t>(k)] = cell_flux_density(grid, t, solution.potential.col(k));
         }
         const auto add = [&](mesh::Point& total, mesh::Point f, mesh::Point g) {
-          total += (0.5 * nu_0) * (dot(g, slope) * f + dot(f, slope) * g - dot(f, g) * slope);
+          total += maxwell_stress(f, g, slope);
         };
         add(sum[0], b[0], b[0]);
         if (patterns == 2) {

@@ -2,14 +2,24 @@
 
 #include <vector>
 
+#include "solver/constants.hpp"
 #include "solver/cycle.hpp"
 #include "solver/part_integrals.hpp"
 
 namespace barwall::solver {
 
+/// Maxwell's stress in air through a surface: its vector area [m], or its unit normal for the
+/// stress itself [Pa], bilinear in two fields [T].
+inline mesh::Point maxwell_stress(mesh::Point f, mesh::Point g, mesh::Point surface) {
+  return (0.5 * nu_0) * (dot(g, surface) * f + dot(f, surface) * g - dot(f, g) * surface);
+}
+
 /// J x B over a part, or over one of its pieces (piece >= 0), over the cycle, per metre of run
 /// [N/m]; steady currents have a mean alone.
 PulsatingVector lorentz_force(const PartIntegrals& integrals, int part, int piece = -1);
+
+/// True for a bar of mu_r = 1: J x B is then all the force on it, and exact.
+bool lorentz_alone(const Problem& problem, int part);
 
 /// Where the stress round a body is taken: the band of air in which the weight falls from 1 at
 /// share `from` of the way to the next body to 0 at share `to`. Shares are of the distances,

@@ -143,16 +143,17 @@ Instants solve_instants(const Problem& problem, const Course& course,
     const auto known = static_cast<Eigen::Index>(result.size());
     std::vector<double> middle;
     for (int k = 0; k < intervals; ++k) middle.push_back(course.end * (k + 0.5) / intervals);
-    const auto foretold = [&](std::size_t k) {
-      const Eigen::VectorXd weight = middle_weights(course, known, static_cast<Eigen::Index>(k));
-      Eigen::VectorXd guess = Eigen::VectorXd::Zero(problem.grid->node_count());
+    std::vector<Eigen::VectorXd> foretold;
+    for (Eigen::Index k = 0; k < intervals; ++k) {
+      const Eigen::VectorXd weight = middle_weights(course, known, k);
+      foretold.emplace_back(Eigen::VectorXd::Zero(problem.grid->node_count()));
       for (Eigen::Index i = 0; i < known; ++i) {
         if (weight[i] == 0.0) continue;
-        guess += weight[i] * result.solution[static_cast<std::size_t>(i)]->potential.col(0);
+        foretold.back() +=
+            weight[i] * result.solution[static_cast<std::size_t>(i)]->potential.col(0);
       }
-      return guess;
-    };
-    const auto added = solver.solve_all(middle, foretold);
+    }
+    const auto added = solver.solve_all(middle, [&](std::size_t k) { return foretold[k]; });
     double difference = 0.0;
     double energy = 0.0;
     Instants finer;
@@ -164,7 +165,7 @@ Instants solve_instants(const Problem& problem, const Course& course,
       finer.wt.push_back(middle[k]);
       finer.solution.push_back(added[k]);
       energy = std::max(energy, field_energy(*added[k]).mean);
-      difference = std::max(difference, energy_of_difference(*added[k], foretold(k)));
+      difference = std::max(difference, energy_of_difference(*added[k], foretold[k]));
     }
     finer.surprise = energy > 0.0 ? std::sqrt(difference / energy) : 0.0;
     result = std::move(finer);

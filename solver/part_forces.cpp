@@ -7,11 +7,7 @@ namespace {
 std::optional<PulsatingVector> force_on_part(const PartIntegrals& integrals,
                                              const StressBands& bands, int part) {
   const Solution& solution = integrals.solution();
-  const auto k = static_cast<std::size_t>(part);
-  if (solution.problem->section.parts[k].kind == mesh::Part::Kind::bar &&
-      !solution.problem->materials[k].magnetic()) {
-    return lorentz_force(integrals, part);
-  }
+  if (lorentz_alone(*solution.problem, part)) return lorentz_force(integrals, part);
   const auto& bodies = bands.bodies();
   for (std::size_t b = 0; b < bodies.size(); ++b) {
     if (bodies[b].size() > 1 || bodies[b].front() != part) continue;
@@ -33,7 +29,7 @@ PartForces<PulsatingVector> forces_of(const PartIntegrals& integrals, const Forc
     const auto k = static_cast<std::size_t>(part);
     result.part[k] = force_on_part(integrals, bands, part);
     const mesh::Part& p = problem.section.parts[k];
-    if (p.kind == mesh::Part::Kind::wall || problem.materials[k].magnetic()) continue;
+    if (!lorentz_alone(problem, part)) continue;
     for (std::size_t piece = 0; p.pieces.size() > 1 && piece < p.pieces.size(); ++piece) {
       result.piece[k].push_back(lorentz_force(integrals, part, static_cast<int>(piece)));
     }
@@ -52,9 +48,7 @@ PartForces<PulsatingVector> forces_of(const PartIntegrals& integrals, const Forc
 
 PartForces<PulsatingVector> over_half_cycle(std::span<const PartForces<PulsatingVector>> instants) {
   return combined(instants, [](const std::vector<PulsatingVector>& forces) {
-    std::vector<mesh::Point> values;
-    for (const PulsatingVector& force : forces) values.push_back({force.x.mean, force.y.mean});
-    return pulsation_through(std::span<const mesh::Point>(values));
+    return over_half_cycle(std::span<const PulsatingVector>(forces));
   });
 }
 

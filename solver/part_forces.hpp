@@ -75,6 +75,14 @@ auto combined(std::span<const PartForces<T>> sets, Make make) {
   return result;
 }
 
+/// The same made from what a single set knows.
+/// \param make from a T
+template <class T, class Make>
+auto transformed(const PartForces<T>& forces, Make make) {
+  return combined(std::span(&forces, 1),
+                  [&](const std::vector<T>& only) { return make(only.front()); });
+}
+
 /// The forces over the cycle from those at the instants k pi / n of its half, k = 0 to n - 1.
 PartForces<PulsatingVector> over_half_cycle(std::span<const PartForces<PulsatingVector>> instants);
 

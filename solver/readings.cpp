@@ -35,14 +35,9 @@ FieldReading reading_over(std::span<const Readings> instants, const PeakFinder& 
                           std::size_t probe, std::size_t point) {
   const auto b = series<mesh::Point>(
       instants, [&](const Readings& readings) { return readings.probes[probe][point].in_phase; });
-  std::vector<double> x;
-  std::vector<double> y;
   double square = 0.0;
-  for (const mesh::Point value : b) {
-    x.push_back(value.x);
-    y.push_back(value.y);
-    square += dot(value, value);
-  }
+  for (const mesh::Point value : b) square += dot(value, value);
+  const auto [x, y] = mesh::components(b);
   const auto fundamental_x = fundamental_through(x);
   const auto fundamental_y = fundamental_through(y);
   return {{fundamental_x.real(), fundamental_y.real()},

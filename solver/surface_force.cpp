@@ -4,8 +4,9 @@
 #include <cmath>
 #include <map>
 
+#include "mesh/grid_window.hpp"
 #include "mesh/triangle_edges.hpp"
-#include "solver/constants.hpp"
+#include "solver/force.hpp"
 
 namespace barwall::solver {
 namespace {
@@ -25,19 +26,6 @@ bool faces_air(const mesh::OutlinePiece& piece) {
 mesh::Point into_air(const mesh::OutlinePiece& piece, double t) {
   const mesh::Point left = left_normal(piece.curve, t);
   return piece.left.part < 0 ? left : -left;
-}
-
-/// Maxwell's stress on a surface of unit normal n [Pa], bilinear in two fields [T].
-mesh::Point stress(mesh::Point f, mesh::Point g, mesh::Point n) {
-  return (0.5 * nu_0) * (dot(g, n) * f + dot(f, n) * g - dot(f, g) * n);
-}
-
-/// First and last of the grid's intervals that a stretch can reach, moved nodes included.
-std::pair<int, int> intervals(const std::vector<double>& lines, double low, double high) {
-  const auto first = std::lower_bound(lines.begin(), lines.end(), low) - lines.begin();
-  const auto last = std::upper_bound(lines.begin(), lines.end(), high) - lines.begin();
-  return {std::max(0, static_cast<int>(first) - 2),
-          std::min(static_cast<int>(lines.size()) - 2, static_cast<int>(last) + 1)};
 }
 
 }  // namespace
@@ -178,12 +166,10 @@ std::vector<SurfaceForces::Moved> SurfaceForces::band_of(const Problem& problem,
                                                          const Displacement& displacement) {
   std::vector<Moved> band;
   const mesh::FittedGrid& grid = *problem.grid;
-  const mesh::Box box = bounds(displacement.curve());
-  const double width = displacement.width();
-  const auto [left, right] = intervals(grid.x_lines, box.low.x - width, box.high.x + width);
-  const auto [bottom, top] = intervals(grid.y_lines, box.low.y - width, box.high.y + width);
-  for (int j = bottom; j <= top; ++j) {
-    for (int i = left; i <= right; ++i) {
+  const mesh::GridWindow cells =
+      window_covering(grid, grown(bounds(displacement.curve()), displacement.width()));
+  for (int j = cells.first_row; j < cells.last_row; ++j) {
+    for (int i = cells.first_column; i < cells.last_column; ++i) {
       const int cell = j * (grid.columns - 1) + i;
       for (int t = 2 * cell; t <= 2 * cell + 1; ++t) {
         if (grid.region[static_cast<std::size_t>(t)] != 0) continue;
@@ -217,7 +203,7 @@ PulsatingVector SurfaceForces::force(const Solution& solution, const RecoveredFi
   };
   const auto on_edges = [&](const std::vector<Edge>& edges, int f, int g, auto take) {
     for (const Edge& edge : edges) {
-      take(edge, edge.length * stress(on_edge(edge, f), on_edge(edge, g), edge.normal));
+      take(edge, edge.length * maxwell_stress(on_edge(edge, f), on_edge(edge, g), edge.normal));
     }
   };
   return over_cycle(solution.pattern_count(), [&](int f, int g) {
@@ -232,7 +218,7 @@ PulsatingVector SurfaceForces::force(const Solution& solution, const RecoveredFi
       for (std::size_t n = 0; n < 3; ++n) {
         // Area times the slope of the corner's own linear function.
         const mesh::Point slope = 0.5 * quarter_turn(p[(n + 2) % 3] - p[(n + 1) % 3]);
-        push -= dot(moved.by[n], stress(b, c, slope));
+        push -= dot(moved.by[n], maxwell_stress(b, c, slope));
       }
     }
     on_edges(surface.slid, f, g,

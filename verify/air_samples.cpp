@@ -6,6 +6,7 @@
 #include <cmath>
 #include <numbers>
 
+#include "mesh/components.hpp"
 #include "mesh/triangle_edges.hpp"
 
 namespace barwall::verify {
@@ -14,31 +15,19 @@ namespace {
 /// Connected stretches of air: per triangle its number, -1 in parts; stretch 0 is the open air.
 std::vector<int> air_stretches(const mesh::FittedGrid& grid) {
   const auto n = static_cast<std::size_t>(grid.triangle_count());
-  std::vector<int> root(n);
-  for (std::size_t t = 0; t < n; ++t) root[t] = static_cast<int>(t);
-  const auto find = [&root](int t) {
-    while (root[static_cast<std::size_t>(t)] != t) {
-      auto& up = root[static_cast<std::size_t>(t)];
-      up = root[static_cast<std::size_t>(up)];
-      t = up;
-    }
-    return t;
-  };
+  mesh::Components components(grid.triangle_count());
   const auto air = [&](int t) { return grid.region[static_cast<std::size_t>(t)] == 0; };
   each_inner_edge(grid, [&](int, int, int left, int right) {
-    if (!air(left) || !air(right)) return;
-    const int a = find(left);
-    const int b = find(right);
-    if (a != b) root[static_cast<std::size_t>(std::max(a, b))] = std::min(a, b);
+    if (air(left) && air(right)) components.join(left, right);
   });
-  // Triangle 0 lies at the outer boundary: the open air's root.
+  // Triangle 0 lies at the outer boundary, in the open air.
   std::vector<int> number(n, -1);
-  std::vector<int> of_root(n, -1);
-  of_root[static_cast<std::size_t>(find(0))] = 0;
+  std::vector<int> of_component(n, -1);
+  of_component[static_cast<std::size_t>(components.of(0))] = 0;
   int next = 1;
   for (int t = 0; t < grid.triangle_count(); ++t) {
     if (!air(t)) continue;
-    int& stretch = of_root[static_cast<std::size_t>(find(t))];
+    int& stretch = of_component[static_cast<std::size_t>(components.of(t))];
     if (stretch < 0) stretch = next++;
     number[static_cast<std::size_t>(t)] = stretch;
   }

@@ -15,101 +15,62 @@ namespace {
 
 using Complex = std::complex<double>;
 
-class AmpereLoops {
+struct Worst {
+  double error = 0.0;
+  std::string place = "none";
+  void take(double e, const std::string& where) {
+    if (place != "none" && !worse(e, error)) return;
+    error = e;
+    place = where;
+  }
+};
+
+mesh::Point middle_of(const mesh::Part& part) {
+  mesh::Box box;
+  for (const mesh::Shape& piece : part.pieces) box.include(bounds(piece));
+  return box.centre();
+}
+
+/// Radius of a circle round a bar's middle that runs in air alone, 0 where none fits.
+double circle_round(const solver::Problem& problem, int part) {
+  const mesh::Part& p = problem.section.parts[static_cast<std::size_t>(part)];
+  const mesh::Point middle = middle_of(p);
+  double own = 0.0;
+  double other = 4.0 * half_size(problem.section);
+  for (const mesh::OutlinePiece& piece : problem.outline.pieces) {
+    const bool is_own = piece.left.part == part || piece.right.part == part;
+    if (is_own) {
+      for (mesh::Point q : polyline(piece.curve, 1e-4 * length(piece.curve))) {
+        own = std::max(own, distance(middle, q));
+      }
+    } else {
+      other = std::min(other, distance(piece.curve, middle));
+    }
+  }
+  // Room for a few cells on both sides.
+  if (other < 1.1 * own) return 0.0;
+  const double radius = std::sqrt(own * other);
+  // The nearest other part must not lie within the bar's own hollow.
+  for (std::size_t k = 0; k < problem.section.parts.size(); ++k) {
+    if (static_cast<int>(k) == part) continue;
+    for (const mesh::Shape& piece : problem.section.parts[k].pieces) {
+      const auto chains = boundary(piece);
+      if (distance(middle, at(chains.front().front(), 0.5)) < radius) return 0.0;
+    }
+  }
+  return radius;
+}
+
+bool in_air(const solver::Problem& problem, mesh::Point at) {
+  const mesh::Location location = locate(*problem.grid, problem.section, at);
+  return problem.grid->occupant(location.triangle).part < 0;
+}
+
+/// Work of H along closed paths in air, both load patterns [A].
+class Work {
 public:
-  AmpereLoops(const solver::Solution& solution, const solver::RecoveredField& field)
-      : solution_(solution), problem_(*solution.problem), field_(field) {
-    for (Complex current : problem_.excitation.current) {
-      largest_ = std::max(largest_, std::abs(current));
-      net_ += current;
-    }
-  }
-
-  Check long_wire() const {
-    Worst worst;
-    const double size = 2.0 * half_size(problem_.section);
-    const mesh::Point centre = bounds(problem_.section).centre();
-    const auto& grid = solution_.grid();
-    for (double sizes : {2.0, 5.0, 20.0}) {
-      if (sizes * size >= 0.5 * (grid.x_lines.back() - grid.x_lines.front())) continue;
-      worst.take(error_of(on_circle(centre, sizes * size), net_),
-                 fmt::format("the circle at {:g} section sizes", sizes));
-    }
-    std::string without;
-    for (std::size_t k = 0; k < problem_.section.parts.size(); ++k) {
-      const mesh::Part& part = problem_.section.parts[k];
-      if (part.kind != mesh::Part::Kind::bar) continue;
-      const double radius = circle_round(static_cast<int>(k));
-      if (radius == 0.0) {
-        without += (without.empty() ? "" : ", ") + part.name;
-        continue;
-      }
-      worst.take(error_of(on_circle(middle_of(part), radius), problem_.excitation.current[k]),
-                 fmt::format("the circle of {:.4g} mm round {}", 1e3 * radius, part.name));
-    }
-    std::string detail = "worst: " + worst.place;
-    if (!without.empty()) detail += "; no circle in air fits round " + without;
-    return make_check("long-wire", worst.error, 0.005, detail);
-  }
-
-  Check loops(const std::vector<std::vector<int>>& bodies) const {
-    Worst worst;
-    int count = 0;
-    std::vector<std::size_t> body_of(problem_.section.parts.size());
-    for (std::size_t b = 0; b < bodies.size(); ++b) {
-      for (int part : bodies[b]) body_of[static_cast<std::size_t>(part)] = b;
-    }
-    std::vector<double> gap_round(bodies.size(), half_size(problem_.section));
-    for (const mesh::PartGap& pair : gaps(problem_.outline)) {
-      const std::size_t first = body_of[static_cast<std::size_t>(pair.first)];
-      const std::size_t second = body_of[static_cast<std::size_t>(pair.second)];
-      if (first == second) continue;
-      for (std::size_t b : {first, second}) gap_round[b] = std::min(gap_round[b], pair.gap.width);
-    }
-    for (std::size_t b = 0; b < bodies.size(); ++b) {
-      const double gap = gap_round[b];
-      for (const auto& line : offset_lines(problem_.outline, bodies[b], 0.5 * gap)) {
-        // A body more than twice as thick as that holds a line as well.
-        if (!in_air(line.front())) continue;
-        ++count;
-        worst.take(
-            error_of(along(line), enclosed_by(line)),
-            fmt::format("{:.4g} mm round {}", 500.0 * gap,
-                        problem_.section.parts[static_cast<std::size_t>(bodies[b].front())].name));
-      }
-    }
-    return make_check("ampere-loops", worst.error, 0.005,
-                      fmt::format("{} loops; worst: {}", count, worst.place));
-  }
-
-private:
-  struct Worst {
-    double error = 0.0;
-    std::string place = "none";
-    void take(double e, const std::string& where) {
-      if (place != "none" && !worse(e, error)) return;
-      error = e;
-      place = where;
-    }
-  };
-
-  double error_of(Complex found, Complex expected) const {
-    return largest_ > 0.0 ? std::abs(found - expected) / largest_ : std::abs(found);
-  }
-
-  bool in_air(mesh::Point at) const {
-    const mesh::Location location = locate(solution_.grid(), problem_.section, at);
-    return solution_.grid().occupant(location.triangle).part < 0;
-  }
-
-  /// H in air times a step, both load patterns [A].
-  Complex step_work(mesh::Point at, mesh::Point step) const {
-    const mesh::Location location = locate(solution_.grid(), problem_.section, at);
-    const auto work = [&](int pattern) {
-      return solver::nu_0 * dot(field_.flux_density(location, at, pattern), step);
-    };
-    return {work(0), solution_.pattern_count() == 2 ? work(1) : 0.0};
-  }
+  Work(const solver::Solution& solution, const solver::RecoveredField& field)
+      : solution_(solution), field_(field) {}
 
   Complex on_circle(mesh::Point centre, double radius) const {
     constexpr int steps = 720;
@@ -145,73 +106,105 @@ private:
     return sum;
   }
 
-  Complex enclosed_by(const std::vector<mesh::Point>& line) const {
-    const mesh::Polygon inside{line};
-    Complex sum = 0.0;
-    for (std::size_t k = 0; k < problem_.section.parts.size(); ++k) {
-      const mesh::Part& part = problem_.section.parts[k];
-      const double whole = area(part);
-      for (const mesh::Shape& piece : part.pieces) {
-        // The line crosses no part: one point of a piece's outline stands for the piece.
-        const auto chains = boundary(piece);
-        if (contains(inside, at(chains.front().front(), 0.5))) {
-          sum += problem_.excitation.current[k] * (area(piece) / whole);
-        }
-      }
-    }
-    return sum;
-  }
-
-  static mesh::Point middle_of(const mesh::Part& part) {
-    mesh::Box box;
-    for (const mesh::Shape& piece : part.pieces) box.include(bounds(piece));
-    return box.centre();
-  }
-
-  /// Radius of a circle round a bar's middle that runs in air alone, 0 where none fits.
-  double circle_round(int part) const {
-    const mesh::Part& p = problem_.section.parts[static_cast<std::size_t>(part)];
-    const mesh::Point middle = middle_of(p);
-    double own = 0.0;
-    double other = 4.0 * half_size(problem_.section);
-    for (const mesh::OutlinePiece& piece : problem_.outline.pieces) {
-      const bool is_own = piece.left.part == part || piece.right.part == part;
-      if (is_own) {
-        for (mesh::Point q : polyline(piece.curve, 1e-4 * length(piece.curve))) {
-          own = std::max(own, distance(middle, q));
-        }
-      } else {
-        other = std::min(other, distance(piece.curve, middle));
-      }
-    }
-    // Room for a few cells on both sides.
-    if (other < 1.1 * own) return 0.0;
-    const double radius = std::sqrt(own * other);
-    // The nearest other part must not lie within the bar's own hollow.
-    for (std::size_t k = 0; k < problem_.section.parts.size(); ++k) {
-      if (static_cast<int>(k) == part) continue;
-      for (const mesh::Shape& piece : problem_.section.parts[k].pieces) {
-        const auto chains = boundary(piece);
-        if (distance(middle, at(chains.front().front(), 0.5)) < radius) return 0.0;
-      }
-    }
-    return radius;
+private:
+  /// H times a step.
+  Complex step_work(mesh::Point at, mesh::Point step) const {
+    const mesh::Location location = locate(solution_.grid(), solution_.problem->section, at);
+    const auto work = [&](int pattern) {
+      return solver::nu_0 * dot(field_.flux_density(location, at, pattern), step);
+    };
+    return {work(0), solution_.pattern_count() == 2 ? work(1) : 0.0};
   }
 
   const solver::Solution& solution_;
-  const solver::Problem& problem_;
   const solver::RecoveredField& field_;
-  double largest_ = 0.0;
-  Complex net_ = 0.0;
 };
 
 }  // namespace
 
-std::vector<Check> check_ampere(const solver::Solution& solution,
-                                const solver::RecoveredField& field,
-                                const std::vector<std::vector<int>>& bodies) {
-  const AmpereLoops loops(solution, field);
-  return {loops.long_wire(), loops.loops(bodies)};
+AmpereCheck::AmpereCheck(const solver::Problem& problem,
+                         const std::vector<std::vector<int>>& bodies) {
+  const auto& parts = problem.section.parts;
+  const double size = 2.0 * half_size(problem.section);
+  const mesh::Point centre = bounds(problem.section).centre();
+  const auto& x = problem.grid->x_lines;
+  for (double sizes : {2.0, 5.0, 20.0}) {
+    if (sizes * size >= 0.5 * (x.back() - x.front())) continue;
+    circles_.push_back(
+        {centre, sizes * size, -1, fmt::format("the circle at {:g} section sizes", sizes)});
+  }
+  for (std::size_t k = 0; k < parts.size(); ++k) {
+    const mesh::Part& part = parts[k];
+    if (part.kind != mesh::Part::Kind::bar) continue;
+    const double radius = circle_round(problem, static_cast<int>(k));
+    if (radius == 0.0) {
+      without_circle_ += (without_circle_.empty() ? "" : ", ") + part.name;
+      continue;
+    }
+    circles_.push_back({middle_of(part), radius, static_cast<int>(k),
+                        fmt::format("the circle of {:.4g} mm round {}", 1e3 * radius, part.name)});
+  }
+  std::vector<std::size_t> body_of(parts.size());
+  for (std::size_t b = 0; b < bodies.size(); ++b) {
+    for (int part : bodies[b]) body_of[static_cast<std::size_t>(part)] = b;
+  }
+  std::vector<double> gap_round(bodies.size(), half_size(problem.section));
+  for (const mesh::PartGap& pair : gaps(problem.outline)) {
+    const std::size_t first = body_of[static_cast<std::size_t>(pair.first)];
+    const std::size_t second = body_of[static_cast<std::size_t>(pair.second)];
+    if (first == second) continue;
+    for (std::size_t b : {first, second}) gap_round[b] = std::min(gap_round[b], pair.gap.width);
+  }
+  for (std::size_t b = 0; b < bodies.size(); ++b) {
+    for (auto& points : offset_lines(problem.outline, bodies[b], 0.5 * gap_round[b])) {
+      // A body more than twice as thick as that holds a line as well.
+      if (!in_air(problem, points.front())) continue;
+      Line line;
+      line.place = fmt::format("{:.4g} mm round {}", 500.0 * gap_round[b],
+                               parts[static_cast<std::size_t>(bodies[b].front())].name);
+      const mesh::Polygon inside{points};
+      for (std::size_t k = 0; k < parts.size(); ++k) {
+        const double whole = area(parts[k]);
+        for (const mesh::Shape& piece : parts[k].pieces) {
+          // The line crosses no part: one point of a piece's outline stands for the piece.
+          const auto chains = boundary(piece);
+          if (contains(inside, at(chains.front().front(), 0.5))) {
+            line.within.push_back({k, area(piece) / whole});
+          }
+        }
+      }
+      line.points = std::move(points);
+      lines_.push_back(std::move(line));
+    }
+  }
+}
+
+std::vector<Check> AmpereCheck::checks(const solver::Solution& solution,
+                                       const solver::RecoveredField& field) const {
+  const auto& currents = solution.problem->excitation.current;
+  double largest = 0.0;
+  for (const Complex current : currents) largest = std::max(largest, std::abs(current));
+  const Complex net = net_current_of(solution.problem->excitation).sum;
+  const auto error_of = [largest](Complex found, Complex expected) {
+    return largest > 0.0 ? std::abs(found - expected) / largest : std::abs(found);
+  };
+  const Work work(solution, field);
+  Worst wire;
+  for (const Circle& circle : circles_) {
+    const Complex expected = circle.bar < 0 ? net : currents[static_cast<std::size_t>(circle.bar)];
+    wire.take(error_of(work.on_circle(circle.centre, circle.radius), expected), circle.place);
+  }
+  Worst loop;
+  for (const Line& line : lines_) {
+    Complex enclosed = 0.0;
+    for (const Within& within : line.within) enclosed += currents[within.part] * within.share;
+    loop.take(error_of(work.along(line.points), enclosed), line.place);
+  }
+  std::string detail = "worst: " + wire.place;
+  if (!without_circle_.empty()) detail += "; no circle in air fits round " + without_circle_;
+  return {make_check("long-wire", wire.error, 0.005, detail),
+          make_check("ampere-loops", loop.error, 0.005,
+                     fmt::format("{} loops; worst: {}", lines_.size(), loop.place))};
 }
 
 }  // namespace barwall::verify

@@ -33,13 +33,12 @@ std::vector<solver::Notice> conducting_shells(const solver::Problem& problem) {
     if (part.kind == mesh::Part::Kind::bar || problem.materials[k].magnetic() || !resistivity) {
       continue;
     }
+    const double thickest = conductor_thickness(part);
     double share = 0.0;
-    double thickest = 0.0;
     for (const mesh::Shape& piece : part.pieces) {
       const mesh::Box box = bounds(piece);
       const double thickness = conductor_thickness(piece);
       const double radius = 0.5 * (std::max(box.width(), box.height()) - thickness);
-      thickest = std::max(thickest, thickness);
       share = std::max(share, share_held_back(radius, thickness, *resistivity, frequency));
     }
     if (share <= little || thickest > skin_depth(*resistivity, 1.0, frequency)) continue;

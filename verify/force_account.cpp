@@ -11,11 +11,8 @@ std::vector<BodyForce> force_account(const solver::PartIntegrals& integrals,
   for (std::size_t b = 0; b < bands.bodies().size(); ++b) {
     const int body = static_cast<int>(b);
     const int first = bands.bodies()[b].front();
-    const auto part = static_cast<std::size_t>(first);
     BodyForce entry;
-    entry.lorentz = bands.bodies()[b].size() == 1 &&
-                    solution.problem->section.parts[part].kind == mesh::Part::Kind::bar &&
-                    !solution.problem->materials[part].magnetic();
+    entry.lorentz = bands.bodies()[b].size() == 1 && lorentz_alone(*solution.problem, first);
     entry.stress = bands.force(solution, body, solver::whole_band);
     entry.inner = bands.force(solution, body, solver::inner_band);
     entry.outer = bands.force(solution, body, solver::outer_band);
@@ -29,12 +26,9 @@ std::vector<BodyForce> over_half_cycle(std::span<const std::vector<BodyForce>> i
   std::vector<BodyForce> result = instants.front();
   for (std::size_t b = 0; b < result.size(); ++b) {
     const auto over = [&](PulsatingVector BodyForce::*which) {
-      std::vector<mesh::Point> values;
-      for (const std::vector<BodyForce>& account : instants) {
-        const PulsatingVector& force = account[b].*which;
-        values.push_back({force.x.mean, force.y.mean});
-      }
-      result[b].*which = solver::pulsation_through(std::span<const mesh::Point>(values));
+      std::vector<PulsatingVector> forces;
+      for (const std::vector<BodyForce>& account : instants) forces.push_back(account[b].*which);
+      result[b].*which = solver::over_half_cycle(std::span<const PulsatingVector>(forces));
     };
     for (const auto which :
          {&BodyForce::force, &BodyForce::stress, &BodyForce::inner, &BodyForce::outer}) {

@@ -5,7 +5,6 @@
 #include <iterator>
 #include <numbers>
 
-#include "verify/ampere_loop.hpp"
 #include "verify/energy_check.hpp"
 #include "verify/force_balance.hpp"
 
@@ -25,18 +24,21 @@ std::vector<Check> run_checks(const solver::PartIntegrals& integrals,
   BiotSavartCheck biot_savart;
   biot_savart.add(solution, field);
   std::vector<Check> checks = biot_savart.checks();
-  append(checks, check_ampere(solution, field, bands.bodies()));
+  append(checks, AmpereCheck(*solution.problem, bands.bodies()).checks(solution, field));
   append(checks, check_forces(*solution.problem, bands.bodies(), force_account(integrals, bands)));
   checks.push_back(check_energy(integrals));
   return checks;
 }
 
 void keep_worse(std::vector<Check>& checks, std::vector<Check> others, const std::string& where) {
-  for (std::size_t k = 0; k < checks.size(); ++k) {
-    if (others[k].measured <= checks[k].measured) continue;  // what is not a number is worse
-    if (std::isnan(checks[k].measured)) continue;
+  for (std::size_t k = 0; k < others.size(); ++k) {
+    if (k < checks.size() && !worse(others[k].measured, checks[k].measured)) continue;
     others[k].detail = where + ": " + others[k].detail;
-    checks[k] = std::move(others[k]);
+    if (k < checks.size()) {
+      checks[k] = std::move(others[k]);
+    } else {
+      checks.push_back(std::move(others[k]));
+    }
   }
 }
 
@@ -44,17 +46,11 @@ void CycleChecks::add(double wt, const solver::PartIntegrals& integrals,
                       const solver::RecoveredField& field, const solver::StressBands& bands) {
   biot_savart_.add(integrals.solution(), field);
   forces_.push_back(force_account(integrals, bands));
-  std::vector<Check> now = check_ampere(integrals.solution(), field, bands.bodies());
+  if (!ampere_) ampere_.emplace(*integrals.solution().problem, bands.bodies());
+  std::vector<Check> now = ampere_->checks(integrals.solution(), field);
   now.push_back(check_energy(integrals));
-  for (std::size_t k = 0; k < now.size(); ++k) {
-    now[k].detail = fmt::format("worst instant at wt = {:.4g} deg: {}",
-                                wt * 180.0 / std::numbers::pi, now[k].detail);
-    if (forces_.size() == 1) {
-      worst_.push_back(std::move(now[k]));
-    } else if (worse(now[k].measured, worst_[k].measured)) {
-      worst_[k] = std::move(now[k]);
-    }
-  }
+  keep_worse(worst_, std::move(now),
+             fmt::format("worst instant at wt = {:.4g} deg", wt * 180.0 / std::numbers::pi));
 }
 
 std::vector<Check> CycleChecks::checks(const solver::Problem& problem,

@@ -1,8 +1,10 @@
 #pragma once
 
+#include <optional>
 #include <vector>
 
 #include "solver/flux_density.hpp"
+#include "verify/ampere_loop.hpp"
 #include "verify/biot_savart_check.hpp"
 #include "verify/check.hpp"
 #include "verify/force_account.hpp"
@@ -14,8 +16,8 @@ std::vector<Check> run_checks(const solver::PartIntegrals& integrals,
                               const solver::RecoveredField& field,
                               const solver::StressBands& bands);
 
-/// Puts each of other checks of the same section in the place of its own where it measured more,
-/// and says in its detail where that was.
+/// Puts each of other checks of the same section in the place of its own where it is worse, or
+/// where there is none yet, and says in its detail where that was.
 void keep_worse(std::vector<Check>& checks, std::vector<Check> others, const std::string& where);
 
 /// The self-checks of alternating currents that were solved instant by instant: those of forces and
@@ -33,6 +35,7 @@ public:
 
 private:
   BiotSavartCheck biot_savart_;
+  std::optional<AmpereCheck> ampere_;
   std::vector<Check> worst_;  ///< so far, of Ampere's law and the energy
   std::vector<std::vector<BodyForce>> forces_;
 };

@@ -85,6 +85,14 @@ double conductor_thickness(const mesh::Shape& shape) {
   return std::max(narrowest, 2.0 * area(shape) / perimeter);
 }
 
+double conductor_thickness(const mesh::Part& part) {
+  double thickest = 0.0;
+  for (const mesh::Shape& piece : part.pieces) {
+    thickest = std::max(thickest, conductor_thickness(piece));
+  }
+  return thickest;
+}
+
 double skin_depth(double resistivity, double relative_permeability, double frequency_hz) {
   const double w = 2.0 * std::numbers::pi * frequency_hz;
   return std::sqrt(2.0 * resistivity / (w * solver::mu_0 * relative_permeability));
@@ -101,9 +109,7 @@ std::vector<solver::Notice> skin_depth_notices(const solver::Problem& problem) {
     const auto resistivity = resistivity_of(material);
     if (!resistivity) continue;
     const double depth = skin_depth(*resistivity, largest_permeability(material), frequency);
-    double thickest = 0.0;
-    for (const mesh::Shape& piece : part.pieces)
-      thickest = std::max(thickest, conductor_thickness(piece));
+    const double thickest = conductor_thickness(part);
     if (thickest <= depth) continue;
     const bool bar = part.kind == mesh::Part::Kind::bar;
     kinds[bar                   ? 0

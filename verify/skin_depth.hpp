@@ -13,6 +13,8 @@ double skin_depth(double resistivity, double relative_permeability, double frequ
 /// How thick a conductor is [m]: the smaller side, the wall of a tube or frame, a diameter; of a
 /// polygon the larger of its narrowest place and twice its area over its perimeter.
 double conductor_thickness(const mesh::Shape& shape);
+/// Of its thickest piece.
+double conductor_thickness(const mesh::Part& part);
 
 /// With a frequency, a notice each of bars, of non-magnetic and of steel walls that are thicker
 /// than their skin depth: which, how thick, and which way static figures err. All make the validity

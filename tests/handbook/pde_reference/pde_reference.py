@@ -510,10 +510,50 @@ DEGREES = (2, 3, 4)
 
 
 def report(label, result, start):
+    """Prints the size and the checks of a run that began at `start`."""
     figures, checks, size = result
     print(f"\n== {label} {size} {time.time() - start:.0f} s", flush=True)
     for k, v in checks.items():
         print(f"    {k:60s} {v: .3e}")
+
+
+def document_of(case, method, ladder, wide, **further):
+    """What is written of a section's ladder of meshes and degrees, and of the same with the far
+    radius doubled; printed with the share of each uncertainty."""
+    best = ladder[DEGREES[-1], SCALES[-1]]
+    out = {}
+    print(f"\n{'':44s} {'value':>17s}   relative: mesh, degree, Richardson, radius; uncertainty")
+    for k, (value, unit) in best[0].items():
+        # Differences along the ladder that ends at the value reported.
+        mesh_step = abs(value - ladder[DEGREES[-1], SCALES[-2]][0][k][0])
+        if "/faces/" in k:  # gathers at the corners: what is missing shrinks only as the scale does
+            mesh_step *= SCALES[-1] / (SCALES[-2] - SCALES[-1])
+        degree_step = abs(value - ladder[DEGREES[-2], SCALES[-1]][0][k][0])
+        # The limit of the lower degree's meshes, where they have one, is a second opinion.
+        limit = limit_of(*(ladder[DEGREES[-2], s][0][k][0] for s in SCALES))
+        limit_step = 0.0 if limit is None else abs(value - limit)
+        radius_step = abs(wide[0][k][0] - ladder[DEGREES[-1], SCALES[1]][0][k][0])
+        # Relative 1e-7: rounding in cells nine decades apart in size, and the round bars' outline.
+        plus_minus = max(mesh_step, degree_step, limit_step, radius_step, 1e-7 * abs(value))
+        plus_minus = float(f"{plus_minus:.2g}")
+        out[k] = {"value": float(f"{value:.10g}"), "unit": unit, "uncertainty": plus_minus}
+        scaled = [v / abs(value) for v in (mesh_step, degree_step, limit_step, radius_step,
+                                           plus_minus)]
+        print(f"{k:44s} {value: .10e}  " + " ".join(f"{v:8.1e}" for v in scaled))
+    return {
+        "case": case,
+        "method": f"Lagrange elements of degree 4 on graded triangles{method}; uncertainty: the "
+                  "largest of the last mesh step, the last step of degree, the distance to "
+                  "Richardson's limit of degree 3, the change on doubling the far radius, and 1e-7 of "
+                  "the value; for faces the last mesh step counts 7/3 times, as it shrinks with the "
+                  "scale",
+        "ladder": [{"degree": d, "scale": s, **r[2], "far_radius_m": RADIUS}
+                   for (d, s), r in ladder.items()],
+        "checks": {k: float(f"{v:.2g}") for k, v in best[1].items()},
+        **further,
+        "figures": {k: v for k, v in out.items() if "/faces/" not in k},
+        "faces": {k: v for k, v in out.items() if "/faces/" in k},
+    }
 
 
 def main():
@@ -542,39 +582,9 @@ def main():
     wide = run(SCALES[1], DEGREES[-1], 2 * RADIUS)
     report("twice the radius", wide, start)
 
-    best = ladder[DEGREES[-1], SCALES[-1]]
-    out = {}
-    print(f"\n{'':32s} {'value':>17s}   relative: mesh, degree, Richardson, radius; uncertainty")
-    for k, (value, unit) in best[0].items():
-        # Differences along the ladder that ends at the value reported.
-        mesh_step = abs(value - ladder[DEGREES[-1], SCALES[-2]][0][k][0])
-        if "/faces/" in k:  # gathers at the corners: what is missing shrinks only as the scale does
-            mesh_step *= SCALES[-1] / (SCALES[-2] - SCALES[-1])
-        degree_step = abs(value - ladder[DEGREES[-2], SCALES[-1]][0][k][0])
-        # The limit of the lower degree's meshes, where they have one, is a second opinion.
-        limit = limit_of(*(ladder[DEGREES[-2], s][0][k][0] for s in SCALES))
-        limit_step = 0.0 if limit is None else abs(value - limit)
-        radius_step = abs(wide[0][k][0] - ladder[DEGREES[-1], SCALES[1]][0][k][0])
-        # Relative 1e-7: rounding in cells nine decades apart in size, and the round bars' outline.
-        plus_minus = max(mesh_step, degree_step, limit_step, radius_step, 1e-7 * abs(value))
-        plus_minus = float(f"{plus_minus:.2g}")
-        out[k] = {"value": float(f"{value:.10g}"), "unit": unit, "uncertainty": plus_minus}
-        scaled = [v / abs(value) for v in (mesh_step, degree_step, limit_step, radius_step,
-                                           plus_minus)]
-        print(f"{k:32s} {value: .10e}  " + " ".join(f"{v:8.1e}" for v in scaled))
-    document = {
-        "case": "section.toml",
-        "method": "Lagrange elements of degree 4 on graded triangles; uncertainty: the largest "
-                  "of the last mesh step, the last step of degree, the distance to Richardson's "
-                  "limit of degree 3, the change on doubling the far radius, and 1e-7 of the value; "
-                  "for faces the last mesh step counts 7/3 times, as it shrinks with the scale",
-        "ladder": [{"degree": d, "scale": s, **r[2], "far_radius_m": RADIUS}
-                   for (d, s), r in ladder.items()],
-        "checks": {k: float(f"{v:.2g}") for k, v in best[1].items()},
-        "checks_without_steel": {k: float(f"{v:.2g}") for k, v in bare_checks.items()},
-        "figures": {k: v for k, v in out.items() if "/faces/" not in k},
-        "faces": {k: v for k, v in out.items() if "/faces/" in k},
-    }
+    document = document_of(
+        "section.toml", "", ladder, wide,
+        checks_without_steel={k: float(f"{v:.2g}") for k, v in bare_checks.items()})
     pathlib.Path(options.out).write_text(json.dumps(document, indent=2) + "\n")
 
 

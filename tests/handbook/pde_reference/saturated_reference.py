@@ -27,8 +27,9 @@ from dolfinx.io import gmshio
 from mpi4py import MPI
 from petsc4py import PETSc
 
-from pde_reference import (MM, MU_0, SIDES, box_distance, flip_flat_triangles, limit_of,
-                           nearest_side, positive, smooth_step, surface_forces, tag_faces)
+from pde_reference import (DEGREES, MM, MU_0, RADIUS, SCALES, SIDES, box_distance, document_of,
+                           flip_flat_triangles, nearest_side, positive, report, smooth_step,
+                           surface_forces, tag_faces)
 
 HERE = pathlib.Path(__file__).parent
 CASE = tomllib.loads((HERE / "saturated_section.toml").read_text())
@@ -397,11 +398,6 @@ def figures_of(field):
     return figures, checks
 
 
-RADIUS = 600.0  # metres; the field's own share of A = 0 there is (0.2 / 600)^2
-SCALES = (1.0, 0.7, 0.49)
-DEGREES = (2, 3, 4)
-
-
 def run(scale, degrees, radius, start):
     """Figures, checks and size for several degrees on one mesh."""
     made = make_mesh(scale, radius)
@@ -415,10 +411,7 @@ def run(scale, degrees, radius, start):
                 "unknowns": int(field.space.dofmap.index_map.size_global),
                 "newton_steps": field.steps}
         results[degree] = (figures, checks, size)
-        print(f"\n== degree {degree} scale {scale} radius {radius} {size} "
-              f"{time.time() - start:.0f} s", flush=True)
-        for k, v in checks.items():
-            print(f"    {k:60s} {v: .3e}")
+        report(f"degree {degree} scale {scale} radius {radius}", results[degree], start)
     return results
 
 
@@ -434,36 +427,7 @@ def main():
         return
     ladder = {(d, s): r for s in SCALES for d, r in run(s, DEGREES, RADIUS, start).items()}
     wide = run(SCALES[1], DEGREES, 2 * RADIUS, start)[DEGREES[-1]]
-    best = ladder[DEGREES[-1], SCALES[-1]]
-    out = {}
-    print(f"\n{'':44s} {'value':>17s}   relative: mesh, degree, Richardson, radius; uncertainty")
-    for k, (value, unit) in best[0].items():
-        mesh_step = abs(value - ladder[DEGREES[-1], SCALES[-2]][0][k][0])
-        if "/faces/" in k:  # gathers at the corners: what is missing shrinks only as the scale does
-            mesh_step *= SCALES[-1] / (SCALES[-2] - SCALES[-1])
-        degree_step = abs(value - ladder[DEGREES[-2], SCALES[-1]][0][k][0])
-        limit = limit_of(*(ladder[DEGREES[-2], s][0][k][0] for s in SCALES))
-        limit_step = 0.0 if limit is None else abs(value - limit)
-        radius_step = abs(wide[0][k][0] - ladder[DEGREES[-1], SCALES[1]][0][k][0])
-        plus_minus = max(mesh_step, degree_step, limit_step, radius_step, 1e-7 * abs(value))
-        plus_minus = float(f"{plus_minus:.2g}")
-        out[k] = {"value": float(f"{value:.10g}"), "unit": unit, "uncertainty": plus_minus}
-        scaled = [v / abs(value) for v in (mesh_step, degree_step, limit_step, radius_step,
-                                           plus_minus)]
-        print(f"{k:44s} {value: .10e}  " + " ".join(f"{v:8.1e}" for v in scaled))
-    document = {
-        "case": "saturated_section.toml",
-        "method": "Lagrange elements of degree 4 on graded triangles, Newton's method; "
-                  "uncertainty: the largest of the last mesh step, the last step of degree, the "
-                  "distance to Richardson's limit of degree 3, the change on doubling the far "
-                  "radius, and 1e-7 of the value; for faces the last mesh step counts 7/3 times, as "
-                  "it shrinks with the scale",
-        "ladder": [{"degree": d, "scale": s, **r[2], "far_radius_m": RADIUS}
-                   for (d, s), r in ladder.items()],
-        "checks": {k: float(f"{v:.2g}") for k, v in best[1].items()},
-        "figures": {k: v for k, v in out.items() if "/faces/" not in k},
-        "faces": {k: v for k, v in out.items() if "/faces/" in k},
-    }
+    document = document_of("saturated_section.toml", ", Newton's method", ladder, wide)
     (HERE / "saturated_reference.json").write_text(json.dumps(document, indent=2) + "\n")
 
 

@@ -2,7 +2,7 @@
 
 #include "mesh/fitted_grid.hpp"
 
-namespace barwall::io {
+namespace barwall::mesh {
 
 /// A block of a grid's cells, by column and row; `last` is the first cell beyond.
 struct GridWindow {
@@ -18,6 +18,6 @@ struct GridWindow {
 
 /// The smallest block, and a cell or two more on every side, whose cells cover the part of `box`
 /// [m] that the grid covers: nodes that the fitting moved never leave a gap.
-GridWindow window_covering(const mesh::FittedGrid& grid, const mesh::Box& box);
+GridWindow window_covering(const FittedGrid& grid, const Box& box);
 
-}  // namespace barwall::io
+}  // namespace barwall::mesh

@@ -1,8 +1,8 @@
-#include "io/grid_window.hpp"
+#include "mesh/grid_window.hpp"
 
 #include <algorithm>
 
-namespace barwall::io {
+namespace barwall::mesh {
 namespace {
 
 /// Cells [first, last) along one direction.
@@ -18,11 +18,11 @@ std::pair<int, int> intervals(const std::vector<double>& lines, double low, doub
 
 }  // namespace
 
-GridWindow window_covering(const mesh::FittedGrid& grid, const mesh::Box& box) {
+GridWindow window_covering(const FittedGrid& grid, const Box& box) {
   if (box.empty()) return {};
   const auto [left, right] = intervals(grid.x_lines, box.low.x, box.high.x);
   const auto [bottom, top] = intervals(grid.y_lines, box.low.y, box.high.y);
   return {left, right, bottom, top};
 }
 
-}  // namespace barwall::io
+}  // namespace barwall::mesh
